@@ -1,0 +1,50 @@
+import { existsSync } from "node:fs";
+import { isIP } from "node:net";
+import { dirname, join, resolve } from "node:path";
+import { fileURLToPath } from "node:url";
+
+/** What the environment decides, read once at the start. */
+export interface Settings {
+  /** 0: any free port */
+  readonly port: number;
+  readonly host: string;
+  /** absolute */
+  readonly dataFolder: string;
+}
+
+export type ReadSettings =
+  | { readonly ok: true; readonly settings: Settings }
+  | { readonly ok: false; readonly faults: readonly string[] };
+
+/**
+ * The folder that holds package.json, views and public: the same one whether this file
+ * runs from the source or from the build.
+ */
+export const projectRoot: string = findRoot(dirname(fileURLToPath(import.meta.url)));
+
+function findRoot(folder: string): string {
+  if (existsSync(join(folder, "package.json"))) return folder;
+  const parent = dirname(folder);
+  if (parent === folder) throw new Error("No package.json stands above the program's own files.");
+  return findRoot(parent);
+}
+
+/** Reads PORT, HOST and DATA_DIR; every fault says what came and what would do. */
+export function readSettings(environment: Readonly<Record<string, string | undefined>>): ReadSettings {
+  const faults: string[] = [];
+
+  const portText = environment.PORT?.trim() || "3000";
+  const port = Number(portText);
+  if (!/^\d{1,5}$/.test(portText) || port > 65535) {
+    faults.push(`PORT is "${portText}"; a whole number from 0 to 65535 would do, 3000 unless set.`);
+  }
+
+  const host = environment.HOST?.trim() || "127.0.0.1";
+  if (isIP(host) === 0 && !/^[a-z0-9]([a-z0-9.-]{0,251}[a-z0-9])?$/i.test(host)) {
+    faults.push(`HOST is "${host}"; an address or a host name would do, 127.0.0.1 unless set.`);
+  }
+
+  const dataFolder = resolve(projectRoot, environment.DATA_DIR?.trim() || "data");
+
+  return faults.length > 0 ? { ok: false, faults } : { ok: true, settings: { port, host, dataFolder } };
+}
