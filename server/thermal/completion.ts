@@ -1,0 +1,46 @@
+import { gaussLegendre } from "../numeric/quadrature.js";
+import { findRoot } from "../numeric/roots.js";
+import type { Dosing } from "./dosing.js";
+
+/**
+ * Time to a conversion X = extent/nlim at constant temperature, from the start of the feed (batch: of the
+ * reaction). During the feed it is read from the balance, after it a quadrature of d extent/rate.
+ *
+ * @param dosing isothermal step
+ * @param conversion 0 < X <= 1
+ * @returns s; infinite where it is never reached
+ */
+export function timeToConversion(dosing: Dosing, conversion: number): number {
+  const { balance, endExtent, trajectory } = dosing;
+  if (trajectory !== null && endExtent >= conversion) {
+    return findRoot((time) => trajectory.component(time, 0) - conversion, 0, balance.feedEnd, {
+      tolerance: 1e-9 * balance.feedEnd,
+    });
+  }
+  return balance.feedEnd + timeBetween(dosing, endExtent, conversion);
+}
+
+/** Panels narrow geometrically towards full conversion, where the rate of the limiting reactant vanishes. */
+function timeBetween(dosing: Dosing, from: number, to: number): number {
+  const { balance } = dosing;
+  const { nodes, weights } = gaussLegendre(12);
+  const rate = (left: number): number => balance.rate(balance.feedEnd, 1 - left);
+  const end = 1 - to;
+  const smallest = Math.max(end, 1e-14);
+  let time = 0;
+  for (let left = 1 - from; left > smallest; ) {
+    const next = Math.max(smallest, 0.4 * left);
+    const half = 0.5 * (left - next);
+    for (let i = 0; i < nodes.length; i += 1) {
+      const value = rate(next + half * (1 + nodes[i]));
+      if (!(value > 0)) return Number.POSITIVE_INFINITY;
+      time += (weights[i] * half) / value;
+    }
+    left = next;
+  }
+  if (end > 0) return time;
+  // Full conversion: what is left at 1e-14 takes a finite time only below first order.
+  const lastRate = rate(smallest);
+  const exponent = Math.log(rate(4 * smallest) / lastRate) / Math.log(4);
+  return exponent < 1 - 1e-6 ? time + smallest / lastRate / (1 - exponent) : Number.POSITIVE_INFINITY;
+}

@@ -1,0 +1,118 @@
+import { lnRateConstant } from "../kinetics/rateConstant.js";
+import { lawValue } from "../kinetics/rateLaw.js";
+import { decompositionRise, fedMass } from "./balance.js";
+import type { Dosing } from "./dosing.js";
+import { progressAfterHold } from "./history.js";
+import type { Runaway } from "./runaway.js";
+import type { Step } from "./step.js";
+
+/**
+ * Effective heat transfer of a well-mixed jacket with flowing coolant, UAe = UA w/(UA + w), w = flow cpc;
+ * UA itself where the jacket stays at the coolant's temperature.
+ *
+ * @param step SI numbers
+ * @returns W/K
+ * @see from the steady balance UA (T - Tj) = w (Tj - Tc) of a mixed jacket
+ */
+export function effectiveUa(step: Step): number {
+  const { ua, flowing } = step.vessel;
+  if (flowing === null) return ua;
+  const capacityRate = flowing.flow * flowing.heatCapacity;
+  return (ua * capacityRate) / (ua + capacityRate);
+}
+
+/**
+ * Full cooling capacity at a temperature, UAe (T - Tc); negative where the coolant is warmer.
+ *
+ * @param step SI numbers
+ * @param temperature of the contents, K
+ * @returns W
+ */
+export function coolingCapacity(step: Step, temperature: number): number {
+  return effectiveUa(step) * (temperature - step.vessel.coolantTemperature);
+}
+
+/**
+ * The decomposition on its own, as TMRad takes it.
+ *
+ * @param step SI numbers
+ * @returns null where no decomposition is known
+ */
+export function runawayOf(step: Step): Runaway | null {
+  const { decomposition } = step;
+  if (decomposition === null) return null;
+  return {
+    law: decomposition.law,
+    rate: decomposition.rate,
+    rise: decompositionRise(step, decomposition),
+  };
+}
+
+/**
+ * Heat of the decomposition at a moment of the isothermal step, m Q kd f(alpha), with the alpha that the hold
+ * up to then has left.
+ *
+ * @param step SI numbers
+ * @param temperature K
+ * @param time s
+ * @returns W
+ */
+export function decompositionHeat(step: Step, temperature: number, time: number): number {
+  const runaway = runawayOf(step);
+  if (runaway === null || step.decomposition === null) return 0;
+  const mass = step.mixture.mass + fedMass(step, time);
+  const alpha = progressAfterHold(runaway, temperature, time);
+  return (
+    mass *
+    step.decomposition.heat *
+    Math.exp(lnRateConstant(runaway.rate, temperature)) *
+    lawValue(runaway.law, alpha)
+  );
+}
+
+/**
+ * Cooling duty: the supremum over [0, feed end] of r V (-dHr) + m Q kd f(alpha) - feed rate cpfeed (T - Tfeed),
+ * its end also without the feed term (batch: the start), plus the agitator's power. No credit for losses.
+ *
+ * @param step SI numbers
+ * @param temperature K
+ * @param dosing the isothermal step at that temperature
+ * @returns W
+ */
+export function coolingDuty(step: Step, temperature: number, dosing: Dosing): number {
+  const { reaction, vessel } = step;
+  const { feed } = reaction;
+  const { trajectory, balance } = dosing;
+  const perMol = -reaction.heat;
+  if (feed === null || trajectory === null) {
+    return dosing.fastest.value * perMol + decompositionHeat(step, temperature, 0) + vessel.agitatorPower;
+  }
+  const feedTerm = ((feed.mass * feed.heatCapacity) / feed.duration) * (temperature - feed.temperature);
+  const released = (time: number): number =>
+    balance.limiting * balance.rate(time, trajectory.component(time, 0)) * perMol +
+    decompositionHeat(step, temperature, time);
+  const end = released(balance.feedEnd);
+  let largest = Math.max(end, released(0), released(dosing.fastest.at));
+  if (step.decomposition !== null && decompositionHeat(step, temperature, balance.feedEnd) > 1e-7 * largest) {
+    largest = Math.max(largest, largestOnSteps(released, trajectory.times()));
+  }
+  return Math.max(largest - feedTerm, end) + vessel.agitatorPower;
+}
+
+/** Largest value over the steps, refined by a parabola about the best of their ends and middles. */
+function largestOnSteps(value: (time: number) => number, times: Float64Array): number {
+  const points: number[] = [];
+  for (let i = 1; i < times.length; i += 1) points.push(times[i - 1], 0.5 * (times[i - 1] + times[i]));
+  points.push(times[times.length - 1]);
+  const values = points.map(value);
+  const best = values.indexOf(Math.max(...values));
+  let low = points[Math.max(best - 1, 0)];
+  let high = points[Math.min(best + 1, points.length - 1)];
+  for (let i = 0; i < 40; i += 1) {
+    const first = low + (high - low) / 3;
+    const second = high - (high - low) / 3;
+    if (value(first) < value(second)) low = first;
+    else high = second;
+  }
+  return Math.max(values[best], value(0.5 * (low + high)));
+}
