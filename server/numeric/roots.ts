@@ -6,25 +6,33 @@ export interface RootOptions {
   readonly maxIterations?: number;
 }
 
+/** The two ends of the final bracket of a root: `before` on the side of lo, `after` on the side of hi. */
+export interface Crossing {
+  readonly before: number;
+  /** Here f already has the sign it has at hi, or is zero. */
+  readonly after: number;
+  /** The one of the two with the smaller |f|. */
+  readonly nearest: number;
+}
+
 /**
- * Root of f between lo and hi, where f has opposite signs (or is zero at one of them).
+ * Change of sign of f on the way from lo to hi, where f has opposite signs (or is zero at one of them).
  *
  * The root stays bracketed throughout. Inverse quadratic interpolation where the three last points
  * allow it, else bisection (Chandrupatla's criterion); besides, whenever three steps have not halved
  * the bracket the next one does, so the worst case is four times the count of bisection.
  *
  * @param f may jump or be infinite: then the place where its sign changes is found
- * @returns the end of the final bracket with the smaller |f|
  * @throws RangeError without a change of sign, or where f is not a number
  * @see Chandrupatla 1997, Adv. Eng. Software 28:145; Brent 1973, Algorithms for Minimization without
  * Derivatives, ch. 4
  */
-export function findRoot(
+export function findCrossing(
   f: (x: number) => number,
   lo: number,
   hi: number,
   options: RootOptions = {},
-): number {
+): Crossing {
   const tolerance = options.tolerance ?? 0;
   const maxIterations = options.maxIterations ?? 10_000;
   // a is the newest point, b the other end of the bracket, c the point last dropped.
@@ -32,18 +40,19 @@ export function findRoot(
   let b = lo;
   let fa = number(f, a);
   let fb = number(f, b);
-  if (fa === 0) return a;
-  if (fb === 0) return b;
+  if (fa === 0) return { before: a, after: a, nearest: a };
+  if (fb === 0) return { before: b, after: b, nearest: b };
   if (fa > 0 === fb > 0) {
     throw new RangeError(`No change of sign between ${lo} (${fb}) and ${hi} (${fa})`);
   }
+  const rising = fa > 0;
   let fraction = 0.5;
   let widthBefore = Math.abs(b - a);
   let sinceHalved = 0;
   for (let i = 0; i < maxIterations; i++) {
     const x = a + fraction * (b - a);
     const fx = number(f, x);
-    if (fx === 0) return x;
+    if (fx === 0) return { before: x, after: x, nearest: x };
     let c = a;
     let fc = fa;
     if (fx > 0 !== fa > 0) {
@@ -55,10 +64,10 @@ export function findRoot(
     a = x;
     fa = fx;
 
-    const best = Math.abs(fa) < Math.abs(fb) ? a : b;
     const width = Math.abs(b - a);
-    const smallest = 2 * Number.EPSILON * Math.abs(best) + Number.MIN_VALUE;
-    if (width <= Math.max(tolerance, smallest)) return best;
+    const smallest =
+      2 * Number.EPSILON * (Math.abs(fa) < Math.abs(fb) ? Math.abs(a) : Math.abs(b)) + Number.MIN_VALUE;
+    if (width <= Math.max(tolerance, smallest)) break;
 
     if (width <= 0.5 * widthBefore) {
       widthBefore = width;
@@ -70,7 +79,23 @@ export function findRoot(
     const clear = Math.min(0.5, Math.max(0.5 * tolerance, smallest) / width);
     fraction = Math.min(1 - clear, Math.max(clear, fraction));
   }
-  return Math.abs(fa) < Math.abs(fb) ? a : b;
+  const nearest = Math.abs(fa) < Math.abs(fb) ? a : b;
+  return fa > 0 === rising ? { before: b, after: a, nearest } : { before: a, after: b, nearest };
+}
+
+/**
+ * Root of f between lo and hi, where f has opposite signs (or is zero at one of them).
+ *
+ * @returns the end of the final bracket with the smaller |f|; the method is that of `findCrossing`
+ * @throws RangeError without a change of sign, or where f is not a number
+ */
+export function findRoot(
+  f: (x: number) => number,
+  lo: number,
+  hi: number,
+  options: RootOptions = {},
+): number {
+  return findCrossing(f, lo, hi, options).nearest;
 }
 
 /** Where between a (0) and b (1) the inverse parabola through three points vanishes, or the middle. */
