@@ -1,0 +1,130 @@
+import { paperTones } from "../charts/palette.js";
+import type { Weight } from "./fonts.js";
+import { type Run, runsOf } from "./runs.js";
+
+export interface TextStyle {
+  /** pt */
+  readonly size: number;
+  readonly weight: Weight;
+  readonly colour?: string;
+}
+
+/** Line height over font size. */
+const leading = 1.35;
+
+export function lineHeight(style: TextStyle): number {
+  return leading * style.size;
+}
+
+/** Width of one line, pt. */
+export function widthOf(pdf: PDFKit.PDFDocument, line: string, style: TextStyle): number {
+  return runsOf(line, style.weight).reduce((sum, run) => sum + runWidth(pdf, run, style), 0);
+}
+
+function runWidth(pdf: PDFKit.PDFDocument, run: Run, style: TextStyle): number {
+  return pdf.font(run.face).fontSize(style.size).widthOfString(run.text);
+}
+
+/**
+ * Draws one line with its baseline where a line box of `lineHeight` that starts at `y` has it.
+ *
+ * @param x left edge, pt
+ * @param y upper edge of the line box, pt from the top of the page
+ */
+export function drawLine(
+  pdf: PDFKit.PDFDocument,
+  line: string,
+  x: number,
+  y: number,
+  style: TextStyle,
+): void {
+  drawAtBaseline(pdf, line, x, y + 1.02 * style.size, style);
+}
+
+/** Draws one line from `x` on with its baseline at `y`. */
+export function drawAtBaseline(
+  pdf: PDFKit.PDFDocument,
+  line: string,
+  x: number,
+  y: number,
+  style: TextStyle,
+): void {
+  let at = x;
+  pdf.fillColor(style.colour ?? paperTones.ink);
+  for (const run of runsOf(line, style.weight)) {
+    const width = runWidth(pdf, run, style);
+    pdf.text(run.text, at, y, { lineBreak: false, baseline: "alphabetic" });
+    at += width;
+  }
+}
+
+/** A number is not parted from its unit at the end of a line. */
+const unitAhead = /^(?:°C|K|s|min|h|days|years|%|W|kW|J|kJ|kg|mol|kmol|pt|L|m)(?=\W|$)/u;
+
+/**
+ * Breaks text into lines that fit. A word that is wider than the line is broken where it must.
+ *
+ * @param width pt
+ */
+export function wrap(pdf: PDFKit.PDFDocument, text: string, width: number, style: TextStyle): string[] {
+  return text.split(/\r\n|[\n\r\u2028\u2029]/u).flatMap((part) => wrapPart(pdf, part, width, style));
+}
+
+function wrapPart(pdf: PDFKit.PDFDocument, text: string, width: number, style: TextStyle): string[] {
+  const lines: string[] = [];
+  let line = "";
+  for (const word of wordsOf(text)) {
+    const longer = line === "" ? word : `${line} ${word}`;
+    if (widthOf(pdf, longer, style) <= width) {
+      line = longer;
+      continue;
+    }
+    if (line !== "") lines.push(line);
+    line = word;
+    if (widthOf(pdf, line, style) > width) {
+      const pieces = breakWord(pdf, word, width, style);
+      line = pieces.pop() ?? "";
+      lines.push(...pieces);
+    }
+  }
+  lines.push(line);
+  return lines;
+}
+
+function wordsOf(text: string): string[] {
+  const words: string[] = [];
+  for (const word of text.split(/[ \t]+/u)) {
+    const last = words.at(-1);
+    if (last !== undefined && /\d$/u.test(last) && unitAhead.test(word))
+      words[words.length - 1] = `${last} ${word}`;
+    else words.push(word);
+  }
+  return words;
+}
+
+function breakWord(pdf: PDFKit.PDFDocument, word: string, width: number, style: TextStyle): string[] {
+  const pieces: string[] = [];
+  let piece = "";
+  let used = 0;
+  for (const character of word) {
+    const more = widthOf(pdf, character, style);
+    if (piece !== "" && used + more > width) {
+      pieces.push(piece);
+      piece = "";
+      used = 0;
+    }
+    piece += character;
+    used += more;
+  }
+  pieces.push(piece);
+  return pieces;
+}
+
+/** One line that fits, with an ellipsis where something was left out. */
+export function shorten(pdf: PDFKit.PDFDocument, text: string, width: number, style: TextStyle): string {
+  const [first = "", ...rest] = wrap(pdf, text.slice(0, 400), width, style);
+  if (rest.length === 0 && text.length <= 400) return first;
+  const characters = [...first];
+  while (characters.length > 0 && widthOf(pdf, `${characters.join("")}…`, style) > width) characters.pop();
+  return `${characters.join("").trimEnd()}…`;
+}
