@@ -1,0 +1,95 @@
+import type { DecompositionRate } from "../kinetics/parameters.js";
+import type { Findings, RateFindings } from "../screening/findings.js";
+import type { CaseModel } from "../screening/model.js";
+import { numberText, temperatureText } from "../words/numbers.js";
+import type { Method } from "./working.js";
+
+/** Rate constants of the reaction and of the decomposition at the process temperature. */
+export function rateMethods(model: CaseModel, findings: Findings): Method[] {
+  const methods: Method[] = [];
+  if (model.reaction.rateConstant !== null && findings.rate !== null) {
+    methods.push(rateMethod("Rate constant of the reaction", model.reaction.rateConstant, findings.rate));
+  }
+  if (model.decomposition !== null && findings.decompositionRate !== null) {
+    const { rateConstant } = model.decomposition;
+    methods.push(rateMethod("Rate constant of the decomposition", rateConstant, findings.decompositionRate));
+  }
+  return methods;
+}
+
+const eyring = {
+  equation: "k = κ (k_B T/h) c₀^(1−n) exp(ΔS‡/R) exp(−ΔH‡/(R T))",
+  reference: "Eyring 1935, J. Chem. Phys. 3:107; Laidler & King 1983, J. Phys. Chem. 87:2657",
+};
+const arrhenius = {
+  equation: "k = A exp(−Ea/(R T))",
+  reference: "Arrhenius 1889, Z. Phys. Chem. 4:226; IUPAC Gold Book, “Arrhenius equation”",
+};
+const reference = {
+  equation: "k = k_ref exp(−Ea/R (1/T − 1/T_ref))",
+  reference: "Arrhenius 1889, Z. Phys. Chem. 4:226, re-centred",
+};
+
+function rateMethod(title: string, rate: DecompositionRate, found: RateFindings): Method {
+  const { equation, reference: source } = sourceOf(rate);
+  const { atProcess } = found;
+  const k =
+    atProcess.k === null ? "beyond the range of numbers" : `${numberText(atProcess.k)} ${atProcess.unit}`;
+  const at = `T = ${numberText(atProcess.temperature_K, 5)} K`;
+  return { title, equation, numbers: `${parametersText(rate, found)}; ${at}: k = ${k}`, reference: source };
+}
+
+function sourceOf(rate: DecompositionRate): { equation: string; reference: string } {
+  switch (rate.form) {
+    case "eyring":
+      return eyring;
+    case "arrhenius":
+      return arrhenius;
+    case "reference":
+      return reference;
+    case "table":
+      return {
+        equation: `Least squares of ${rate.fitAs === "eyring" ? "ln(k/T)" : "ln k"} on 1/T, centred; then ${(rate.fitAs === "eyring" ? eyring : arrhenius).equation}`,
+        reference: (rate.fitAs === "eyring" ? eyring : arrhenius).reference,
+      };
+    case "heatRate":
+      return {
+        equation: `${reference.equation}, k_ref = q′/(Q f_ref)`,
+        reference: `${reference.reference}; k_ref from the heat release rate: common practice`,
+      };
+    case "td24":
+      return {
+        equation: `${reference.equation}, k_ref such that TMRad from the given temperature is 24 h`,
+        reference: `${reference.reference}; TMRad is inversely proportional to k_ref`,
+      };
+  }
+}
+
+function parametersText(rate: DecompositionRate, found: RateFindings): string {
+  const kJ = (joules: number) => `${numberText(joules / 1000, 4)} kJ/mol`;
+  switch (rate.form) {
+    case "eyring":
+      return eyringText(found);
+    case "arrhenius":
+      return arrheniusText(found);
+    case "table": {
+      const used = rate.rows.filter((row) => row.leftOut === null).length;
+      const pair = rate.fitAs === "eyring" ? eyringText(found) : arrheniusText(found);
+      return `${used} of ${rate.rows.length} rows fitted: ${pair}`;
+    }
+    case "reference":
+      return `k_ref = ${numberText(rate.rateConstant.value, 4)} ${found.atProcess.unit} at ${temperatureText(rate.at.value)}, Ea = ${kJ(rate.activationEnergy.value)}`;
+    case "heatRate":
+      return `q′ = ${numberText(rate.heatReleaseRate.value, 4)} W/kg at ${temperatureText(rate.at.value)}, Ea = ${kJ(rate.activationEnergy.value)}`;
+    case "td24":
+      return `T_D24 = ${temperatureText(rate.temperature.value)}, Ea = ${kJ(rate.activationEnergy.value)}`;
+  }
+}
+
+function eyringText({ eyring: pair }: RateFindings): string {
+  return `κ = ${numberText(pair.transmissionCoefficient)}, c₀ = ${numberText(pair.standardConcentration_mol_m3)} mol/m³, ΔS‡ = ${numberText(pair.activationEntropy_J_molK, 4)} J/(mol K), ΔH‡ = ${numberText(pair.activationEnthalpy_J_mol / 1000, 4)} kJ/mol`;
+}
+
+function arrheniusText({ arrhenius: pair, atProcess }: RateFindings): string {
+  return `ln A = ${numberText(pair.lnPreExponential, 5)} (A in ${atProcess.unit}), Ea = ${numberText(pair.activationEnergy_J_mol / 1000, 4)} kJ/mol`;
+}

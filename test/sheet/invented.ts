@@ -1,0 +1,379 @@
+import type { Caution, FailureFindings, Findings, RateFindings } from "../../server/screening/findings.js";
+import type { CaseModel, InputNote } from "../../server/screening/model.js";
+
+// Every name and figure here is invented: it only has to have the shape of a real case.
+
+const exact = (value: number) => ({ value, standardError: null });
+
+/** The title block of an invented case document. */
+export const inventedDocument = {
+  format: "thermal-window/case-1",
+  title: "Invented acylation of amine X-1 in a 2.5 m³ vessel",
+  batch: {
+    record: "INVENTED-0001",
+    step: "Step 3, acylation",
+    vessel: "V-000",
+    preparedBy: "A. N. Author",
+  },
+};
+
+const notes: readonly InputNote[] = [
+  note("/mixture/mass", "mass of the contents before any feed", "1450 kg", null, "measured", "Batch sheet"),
+  note(
+    "/mixture/heatCapacity",
+    "heat capacity of the contents",
+    "1.95 kJ/(kg K)",
+    "0.05 kJ/(kg K)",
+    "measured",
+    "Notebook 14, p. 31",
+  ),
+  note("/mixture/density", "density of the contents", "0.94 kg/L", null, "assumed", null),
+  note(
+    "/reaction/heat",
+    "heat of reaction per mol of A",
+    "−118 kJ·mol⁻¹",
+    "4 kJ/mol",
+    "measured",
+    "Heat flow run 7",
+  ),
+  note(
+    "/reaction/rateConstant/activationEnthalpy",
+    "activation enthalpy",
+    "62 kJ/mol",
+    "1.6 kJ/mol",
+    "measured",
+    null,
+  ),
+  note(
+    "/decomposition/heat",
+    "heat of decomposition per mass of mixture",
+    "420 J/g",
+    "25 J/g",
+    "measured",
+    "DSC 0815",
+  ),
+  note(
+    "/vessel/heatTransferCoefficient",
+    "heat transfer coefficient",
+    "320 W/(m² K)",
+    null,
+    "estimated",
+    "Cooling curve with solvent",
+  ),
+  note(
+    "/limits/maximumTechnicalTemperature",
+    "maximum technical temperature (MTT)",
+    "78 °C",
+    null,
+    null,
+    "boiling point at 1 atm",
+  ),
+  note("/failures/0/changes/0/after", "failure 1, change 1: after", "0 min", null, null, null),
+];
+
+function note(
+  pointer: string,
+  label: string,
+  text: string,
+  standardErrorText: string | null,
+  basis: InputNote["basis"],
+  source: string | null,
+): InputNote {
+  return { pointer, label, text, standardErrorText, basis, source };
+}
+
+export const inventedModel: CaseModel = {
+  title: inventedDocument.title,
+  mixture: {
+    mass: exact(1450),
+    density: exact(940),
+    heatCapacity: { value: 1950, standardError: 50 },
+    thermalInertia: exact(1),
+  },
+  reaction: {
+    name: "Acylation",
+    operation: "semibatch",
+    temperature: exact(308.15),
+    a: { name: "amine X-1", amount: exact(2900), order: exact(1) },
+    b: { name: "acylating agent", amount: exact(3050), order: exact(1), perA: exact(1) },
+    feed: {
+      reactant: "B",
+      mass: exact(420),
+      density: exact(1050),
+      heatCapacity: exact(1800),
+      temperature: exact(293.15),
+      duration: exact(10800),
+    },
+    heat: { value: -118000, standardError: 4000 },
+    rateConstant: {
+      form: "eyring",
+      order: 2,
+      activationEnthalpy: { value: 62000, standardError: 1600 },
+      activationEntropy: { value: -95, standardError: 5.5 },
+      correlation: 0.998,
+      standardConcentration: 1000,
+      transmissionCoefficient: 1,
+      fittedRange: [278.15, 303.15],
+      points: 6,
+      viscosity: null,
+    },
+    measuredAccumulation: null,
+  },
+  decomposition: {
+    heat: { value: 420000, standardError: 25000 },
+    rateLaw: { model: "order", order: exact(1), productOrder: exact(1), initiation: exact(0) },
+    rateConstant: {
+      form: "arrhenius",
+      order: 1,
+      lnPreExponential: exact(26.71),
+      activationEnergy: exact(128000),
+      correlation: null,
+      fittedRange: null,
+      points: null,
+      viscosity: null,
+    },
+  },
+  vessel: {
+    heatTransferCoefficient: exact(320),
+    heatTransferArea: exact(5.6),
+    agitatorPower: exact(2000),
+    heatGain: null,
+    coolant: {
+      temperature: exact(278.15),
+      flowing: { flow: exact(4.5), heatCapacity: exact(3600), holdup: exact(180) },
+    },
+  },
+  limits: {
+    maximumTechnicalTemperature: exact(351.15),
+    maximumTechnicalTemperatureBasis: "boiling point at 1 atm",
+    lowestTemperature: 273.15,
+    highestTemperature: 353.15,
+    availableTime: 28800,
+    targetConversion: 0.98,
+    coolingUse: 0.8,
+    minimumTimeToMaximumRate: 86400,
+    decompositionAllowed: 0.05,
+    controlBand: 2,
+    controlBandGiven: true,
+  },
+  failures: [],
+  inputs: notes,
+};
+
+const rate: RateFindings = {
+  atProcess: {
+    temperature_K: 308.15,
+    k: 2.167e-6,
+    unit: "m³/(mol s)",
+    low95: 1.81e-6,
+    high95: 2.59e-6,
+    extrapolation_K: 5,
+    apparentActivationEnergy_J_mol: 64562,
+  },
+  table: [],
+  eyring: {
+    activationEnthalpy_J_mol: 62000,
+    activationEntropy_J_molK: -95,
+    activationEnthalpyError_J_mol: 1600,
+    activationEntropyError_J_molK: 5.5,
+    correlation: 0.998,
+    standardConcentration_mol_m3: 1000,
+    transmissionCoefficient: 1,
+    equivalentAt_K: null,
+  },
+  arrhenius: {
+    lnPreExponential: 12.17,
+    activationEnergy_J_mol: 64562,
+    lnPreExponentialError: null,
+    activationEnergyError_J_mol: null,
+    correlation: null,
+    equivalentAt_K: 308.15,
+  },
+  fittedRange_K: [278.15, 303.15],
+  fit: null,
+};
+
+const failure: FailureFindings = {
+  name: "Coolant pump stops, feed runs on",
+  startedAt_s: 0,
+  peak_K: 420,
+  peakAt_s: 9000,
+  timeToMtt_s: 4752.2,
+  timeToTd24_s: 7666.9,
+  maximumRate_K_s: 0.02,
+  timeToMaximumRate_s: 5000,
+  conversion: 0.99,
+  decomposed: 0.1,
+  beyondModel: true,
+  mixingAssumed: null,
+  verdict: "act",
+  timeToAct_s: 4748.07,
+  margin_s: 3548.07,
+  alarm_K: 318,
+  trace: [],
+};
+
+const cautions: readonly Caution[] = [
+  {
+    code: "EXTRAPOLATED",
+    level: "note",
+    text: "The rate constant is used 5.0 K above its fitted range of 5.0 to 30.0 °C.",
+    about: "/reaction/rateConstant",
+  },
+  {
+    code: "FEED_RUNS_ON",
+    level: "warn",
+    text: "“Coolant pump stops, feed runs on” lets the feed run on: MTSR does not cover it.",
+    about: "/failures/0",
+  },
+  { code: "PRESSURE", level: "note", text: "Gas, vapour pressure and relief are not assessed.", about: "" },
+];
+
+export const inventedStop: Caution = {
+  code: "ACT_TOO_LATE",
+  level: "stop",
+  text: "“Coolant pump stops, feed runs on”: the time to act is shorter than the response.",
+  about: "/failures/0",
+};
+
+export const inventedFindings: Findings = {
+  format: "thermal-window/findings-1",
+  notice:
+    "Screening estimate, not a basis of safety. It must be reviewed by a qualified process-safety professional before any use in a plant. Local codes, site rules and licensed practice take precedence. Perfect mixing, a closed recipe and the stated kinetics are assumed; gas, pressure and relief are not assessed.",
+  program: { name: "thermal-window", version: "0.0.0" },
+  digest: "0123456789abcdef".repeat(4),
+  rate,
+  decompositionRate: null,
+  heat: {
+    adiabaticRise_K: 95.49,
+    severity: "medium",
+    decompositionRise_K: 219.17,
+    decompositionSeverity: "high",
+  },
+  accumulation: { maximumFraction: 0.13646, at_s: 10268.9, curve: [], measured: null, usedFor: "kinetics" },
+  temperatures: {
+    process_K: 308.15,
+    mtsr_K: 321.31782,
+    mtt_K: 351.15,
+    td24_K: 373.99656,
+    allAtOnce_K: 401.2,
+  },
+  timeToMaximumRate: {
+    atProcess_s: 377062206,
+    atMtsr_s: 53185353,
+    zeroOrderAtProcess_s: 350119979,
+    zeroOrderCautious: true,
+    likelihood: "low",
+    curve: [],
+  },
+  criticality: { class: 1, probability: null },
+  cooling: {
+    duty_W: 33052.9,
+    capacity_W: 48405.5,
+    use: 0.6828,
+    stabilityRatio: 1.627,
+    noReturn_K: null,
+    tangency_K: null,
+    criticalCoolant_K: null,
+    curve: [],
+  },
+  window: {
+    lower_K: 303.51487,
+    upper_K: 348.03124,
+    lowerSetBy: "cooling",
+    upperSetBy: "mtsr-mtt",
+    incomplete: false,
+    containsProcess: true,
+    controlBand_K: 2,
+    lowest_K: 273.15,
+    highest_K: 353.15,
+    allowed: [[303.51487, 348.03124]],
+    conflict: null,
+    cautious: { lower_K: 305.2, upper_K: 344.8 },
+    criteria: [
+      {
+        key: "completion",
+        binding: true,
+        assessed: true,
+        allowed: [[295.728, 353.15]],
+        cautious: [[297, 353.15]],
+        metAtProcess: true,
+        probability: 1,
+      },
+      {
+        key: "cooling",
+        binding: true,
+        assessed: true,
+        allowed: [[303.51487, 353.15]],
+        cautious: [[305.2, 353.15]],
+        metAtProcess: true,
+        probability: 0.99,
+      },
+      {
+        key: "stability",
+        binding: false,
+        assessed: true,
+        allowed: [],
+        cautious: [],
+        metAtProcess: false,
+        probability: 0,
+      },
+      {
+        key: "mtsr-mtt",
+        binding: true,
+        assessed: true,
+        allowed: [[273.15, 348.03124]],
+        cautious: [[273.15, 344.8]],
+        metAtProcess: true,
+        probability: 1,
+      },
+      {
+        key: "mtsr-tmr",
+        binding: true,
+        assessed: true,
+        allowed: [[273.15, 353.15]],
+        cautious: null,
+        metAtProcess: true,
+        probability: null,
+      },
+      {
+        key: "hold",
+        binding: true,
+        assessed: false,
+        allowed: [],
+        cautious: null,
+        metAtProcess: null,
+        probability: null,
+      },
+    ],
+    feedLever: null,
+  },
+  failures: [
+    {
+      ...failure,
+      name: "Agitator stops, restarts after 40 min",
+      verdict: "holds",
+      timeToAct_s: null,
+      margin_s: null,
+      peak_K: 325.76,
+      beyondModel: false,
+      timeToMtt_s: null,
+      timeToTd24_s: null,
+    },
+    failure,
+  ],
+  uncertainty: {
+    draws: 2000,
+    seed: 1,
+    td24_K: { p05: 370.1, p50: 374, p95: 378.2 },
+    mtsr_K: { p05: 318, p50: 321.3, p95: 325.01 },
+    upper_K: { p05: 344.8, p50: 348, p95: 350.9 },
+    timeToAct_s: { p05: 4100, p50: 4748, p95: 5300 },
+    drivers: null,
+    nextMeasurement: null,
+  },
+  cautions,
+};
+
+/** The same case with a stop. */
+export const stoppedFindings: Findings = { ...inventedFindings, cautions: [inventedStop, ...cautions] };
