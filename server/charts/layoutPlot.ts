@@ -170,7 +170,9 @@ function words(panel: PlotPanel, frame: Frame, key: KeyEntry[]): Primitive[] {
     const pieces = mark.type === "line" ? clipPolyline(placesOf(mark.points, frame), frame.box) : [];
     const longest = pieces.sort((a, b) => b.length - a.length)[0];
     const found =
-      longest === undefined ? null : placeAlong(longest, mark.name, { tone: mark.tone }, obstacles, "clear");
+      longest === undefined || !direct
+        ? null
+        : placeAlong(longest, mark.name, { tone: mark.tone }, obstacles, "clear");
     if (found !== null) placed.push(found);
     else if (mark.type !== "line" || pieces.length > 0) key.push({ ...mark, name: mark.name });
   }

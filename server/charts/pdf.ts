@@ -37,7 +37,7 @@ function widthFor(box: { readonly width: number }): Width {
 /** Height that `drawPdf` will use in a box of that width, points. */
 export function pdfHeight(figure: Figure, width: number): number {
   const { width: across, height } = layout(figure, widthFor({ width }));
-  return (height * width) / across;
+  return height * (width / across);
 }
 
 /**
