@@ -72,23 +72,23 @@ export function wrap(pdf: PDFKit.PDFDocument, text: string, width: number, style
 
 function wrapPart(pdf: PDFKit.PDFDocument, text: string, width: number, style: TextStyle): string[] {
   const lines: string[] = [];
-  let line = "";
+  const space = widthOf(pdf, " ", style);
+  let line: string | null = null;
+  let used = 0;
   for (const word of wordsOf(text)) {
-    const longer = line === "" ? word : `${line} ${word}`;
-    if (widthOf(pdf, longer, style) <= width) {
-      line = longer;
+    const more = widthOf(pdf, word, style);
+    if (line !== null && used + space + more <= width) {
+      line = `${line} ${word}`;
+      used += space + more;
       continue;
     }
-    if (line !== "") lines.push(line);
-    line = word;
-    if (widthOf(pdf, line, style) > width) {
-      const pieces = breakWord(pdf, word, width, style);
-      line = pieces.pop() ?? "";
-      lines.push(...pieces);
-    }
+    if (line !== null) lines.push(line);
+    const pieces: string[] = more <= width ? [word] : breakWord(pdf, word, width, style);
+    line = pieces.pop() ?? "";
+    used = widthOf(pdf, line, style);
+    lines.push(...pieces);
   }
-  lines.push(line);
-  return lines;
+  return [...lines, line ?? ""];
 }
 
 function wordsOf(text: string): string[] {

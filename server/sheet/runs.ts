@@ -14,12 +14,16 @@ const scripts = /[⁰¹²³⁴-⁹⁺⁻⁼⁽⁾ⁿ]+|[₀-₉₊₋₌₍₎�
 /** What has no shape of its own; as a code it cannot hide or reorder text on a record. */
 const shapeless = /[\p{Cc}\p{Cf}\p{Co}\p{Cn}\p{Cs}]/u;
 
+/** Most lines; the first font holds these characters. */
+const plain = /^[ -~]*$/;
+
 /**
  * Splits one line of text into runs by font. A character that no font holds is written as its code,
  * such as [U+4E2D]: nothing that was typed disappears or turns into an empty box.
  */
 export function runsOf(line: string, weight: Weight): readonly Run[] {
   const faces = facesOf(weight);
+  if (plain.test(line)) return line === "" ? [] : [{ face: faces[0]?.name ?? "", text: line }];
   const runs: { face: string; text: string }[] = [];
   for (const cluster of clustersOf(line.normalize("NFC").replace(/\s/gu, plainSpace))) {
     const face = faceFor(cluster, faces);

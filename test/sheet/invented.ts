@@ -170,7 +170,10 @@ const rate: RateFindings = {
     extrapolation_K: 5,
     apparentActivationEnergy_J_mol: 64562,
   },
-  table: [],
+  table: [278.15, 288.15, 298.15, 308.15, 318.15].map((temperature_K) => {
+    const k = 2.167e-6 * Math.exp(7765 * (1 / 308.15 - 1 / temperature_K));
+    return { temperature_K, k, low95: 0.84 * k, high95: 1.19 * k, extrapolated: temperature_K > 303.15 };
+  }),
   eyring: {
     activationEnthalpy_J_mol: 62000,
     activationEntropy_J_molK: -95,
@@ -264,7 +267,10 @@ export const inventedFindings: Findings = {
     zeroOrderAtProcess_s: 350119979,
     zeroOrderCautious: true,
     likelihood: "low",
-    curve: [],
+    curve: [300, 320, 340, 360, 380, 400].map((temperature_K) => {
+      const time_s = 86400 * Math.exp(15395 * (1 / temperature_K - 1 / 373.99656));
+      return { temperature_K, time_s, zeroOrder_s: 0.93 * time_s };
+    }),
   },
   criticality: { class: 1, probability: null },
   cooling: {
