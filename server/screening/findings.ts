@@ -157,15 +157,16 @@ export interface CoolingFindings {
   }[];
 }
 
-export type CriterionKey = "completion" | "cooling" | "stability" | "mtsr-mtt" | "mtsr-tmr" | "hold";
+/** completion, cooling, stability, mtsr-mtt, mtsr-tmr, hold, and what is added to server/window/criteria */
+export type CriterionKey = string;
 export type Spans = readonly (readonly [number, number])[];
 
 export interface WindowFindings {
   readonly lower_K: number | null;
   readonly upper_K: number | null;
   /** a criterion, or the study's own "lowest" / "highest" */
-  readonly lowerSetBy: CriterionKey | "lowest" | null;
-  readonly upperSetBy: CriterionKey | "highest" | null;
+  readonly lowerSetBy: CriterionKey | null;
+  readonly upperSetBy: CriterionKey | null;
   readonly incomplete: boolean;
   readonly containsProcess: boolean;
   readonly controlBand_K: number;
@@ -179,6 +180,8 @@ export interface WindowFindings {
   readonly cautious: { readonly lower_K: number | null; readonly upper_K: number | null } | null;
   readonly criteria: readonly {
     readonly key: CriterionKey;
+    /** its lane's name in plain words */
+    readonly label: string;
     readonly binding: boolean;
     readonly assessed: boolean;
     readonly allowed: Spans;

@@ -3,6 +3,8 @@ import type { Study } from "./study.js";
 /** One condition on the process temperature. A criterion is one file of the folder criteria. */
 export interface Criterion {
   readonly key: string;
+  /** the name of its lane, a few plain words */
+  readonly label: string;
   /** takes part in the intersection; an advisory one has its lane and its caution only */
   readonly binding: boolean;
   /** whether the step holds the data it needs */

@@ -11,6 +11,7 @@ function time(study: Study, temperature: number): number {
 /** The target conversion is reached at constant temperature within the available time. */
 export const completion: Criterion = {
   key: "completion",
+  label: "done in time",
   binding: true,
   assessable: (study) => study.step.reaction.rate !== null,
   margin: (study, temperature) => Math.log(study.step.limits.availableTime / time(study, temperature)),

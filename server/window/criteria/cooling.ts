@@ -11,6 +11,7 @@ function duty(study: Study, temperature: number): number {
 /** The largest heat to be removed is at most the allowed part of the full cooling capacity. */
 export const cooling: Criterion = {
   key: "cooling",
+  label: "cooling suffices",
   binding: true,
   assessable: (study) => study.step.reaction.rate !== null,
   margin(study, temperature) {

@@ -11,6 +11,7 @@ function time(study: Study, temperature: number): number {
 /** TMRad from the process temperature itself is at least the minimum, the hold's history included. */
 export const hold: Criterion = {
   key: "hold",
+  label: "TMRad from Tp",
   binding: true,
   assessable: (study) => study.runaway !== null,
   margin: (study, temperature) =>

@@ -4,6 +4,7 @@ import type { Criterion } from "../criterion.js";
 /** MTSR stays below the maximum temperature for technical reasons. */
 export const mtsrMtt: Criterion = {
   key: "mtsr-mtt",
+  label: "MTSR below MTT",
   binding: true,
   assessable: (study) => study.step.reaction.rate !== null,
   margin: (study, temperature) =>

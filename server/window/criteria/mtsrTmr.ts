@@ -12,6 +12,7 @@ function time(study: Study, temperature: number): number {
 /** TMRad from MTSR is at least the minimum, with what the hold at the process temperature has left behind. */
 export const mtsrTmr: Criterion = {
   key: "mtsr-tmr",
+  label: "TMRad from MTSR",
   binding: true,
   assessable: (study) => study.step.reaction.rate !== null && study.runaway !== null,
   margin: (study, temperature) =>

@@ -17,6 +17,7 @@ function ratio(study: Study, temperature: number): number {
  */
 export const stability: Criterion = {
   key: "stability",
+  label: "steadies itself",
   binding: false,
   assessable: (study) => study.step.reaction.rate !== null,
   margin: (study, temperature) => 1 - ratio(study, temperature),

@@ -1,0 +1,161 @@
+import { runawayOf } from "../thermal/cooling.js";
+import { criticalityClass } from "../thermal/criticality.js";
+import { carefulTimeToMaximumRate } from "../thermal/history.js";
+import { timeToMaximumRate } from "../thermal/runaway.js";
+import type { Step } from "../thermal/step.js";
+import { td24 } from "../thermal/td24.js";
+import { type Study, studyOf } from "../window/study.js";
+import { program } from "../words/program.js";
+import { byLevel, caution } from "./cautions/catalogue.js";
+import { inputCautions } from "./cautions/inputs.js";
+import { kineticsCautions } from "./cautions/kinetics.js";
+import { verdictCautions } from "./cautions/verdicts.js";
+import type { Caution, Findings } from "./findings.js";
+import { type KnownRates, knownRates } from "./known.js";
+import type { CaseModel } from "./model.js";
+import { notice } from "./notice.js";
+import { rateFindings } from "./rateFindings.js";
+import { estimates, realise } from "./realise.js";
+import {
+  accumulationFindings,
+  coolingFindings,
+  heatFindings,
+  temperatureFindings,
+  tmradFindings,
+} from "./thermalFindings.js";
+import { usedRates } from "./usedRates.js";
+import { windowFindings } from "./windowFindings.js";
+
+export interface ScreenOptions {
+  /** sha256 of the case in canonical JSON */
+  readonly digest: string;
+  /** quick: everything but failures and draws */
+  readonly depth: "quick" | "full";
+}
+
+/**
+ * Screens a parsed case.
+ *
+ * @param model parsed case, SI
+ * @param options digest of the case and depth of the work
+ * @returns findings: every number finite or null
+ */
+export function screen(model: CaseModel, options: ScreenOptions): Findings {
+  const known = knownRates(model);
+  const step = realise(model, known, estimates);
+  const study = studyOf(step);
+  const process = step.reaction.temperature;
+  const { runaway } = study;
+  const dosing = study.dosingAt(process);
+  const mtsr = study.mtsrAt(process);
+  const t24 = runaway === null ? null : td24(runaway);
+  const temperatures = temperatureFindings(step, mtsr, t24);
+  const accumulation = dosing === null ? null : accumulationFindings(step, dosing);
+  const span = curveSpan(step, mtsr, t24);
+  const timeToMaximumRate = tmradFindings(runaway, process, mtsr, span);
+  const cooling = dosing === null ? null : coolingFindings(step, dosing);
+  const window = step.reaction.rate === null ? null : windowFindings(study, options.depth === "full");
+  const criticality: Findings["criticality"] = {
+    class: mtsr === null || t24 === null ? null : criticalityClass(process, mtsr, temperatures.mtt_K, t24),
+    probability: null,
+  };
+  const judged = { temperatures, criticality, cooling, window, timeToMaximumRate };
+  const cautions: Caution[] = [
+    ...verdictCautions(judged, {
+      coolant_K: step.vessel.coolantTemperature,
+      decompositionKnown: runaway !== null,
+      rateKnown: step.reaction.rate !== null,
+      noAcceleration: !accelerates(study, mtsr),
+      historyRatio: historyRatio(study),
+    }),
+    ...usedRates(model, known, step, temperatures).flatMap((used) => kineticsCautions(used, process)),
+    ...inputCautions(model),
+    ...notBuilt(options.depth),
+  ];
+  return {
+    format: "thermal-window/findings-1",
+    notice,
+    program,
+    digest: options.digest,
+    ...ratesOf(model, known, step, span),
+    heat: heatFindings(step, runaway),
+    accumulation,
+    temperatures,
+    timeToMaximumRate,
+    criticality,
+    cooling,
+    window,
+    failures: null,
+    uncertainty: null,
+    cautions: byLevel(cautions),
+  };
+}
+
+/** Temperatures over which curves are drawn: the study, and what the case can reach. */
+function curveSpan(step: Step, mtsr: number | null, t24: number | null): readonly [number, number] {
+  const { lowestTemperature, highestTemperature } = step.limits;
+  const process = step.reaction.temperature;
+  return [
+    Math.min(lowestTemperature, process, t24 ?? process),
+    Math.max(highestTemperature, process, mtsr ?? process, t24 ?? process),
+  ];
+}
+
+function ratesOf(
+  model: CaseModel,
+  known: KnownRates,
+  step: Step,
+  span: readonly [number, number],
+): Pick<Findings, "rate" | "decompositionRate"> {
+  const { rateConstant, temperature } = model.reaction;
+  const { lowestTemperature, highestTemperature } = step.limits;
+  const order = step.reaction.orderA + (step.reaction.b?.order ?? 0);
+  return {
+    rate:
+      rateConstant === null || known.reaction === null || step.reaction.rate === null
+        ? null
+        : rateFindings(rateConstant, known.reaction, step.reaction.rate, order, temperature.value, [
+            lowestTemperature,
+            highestTemperature,
+          ]),
+    decompositionRate:
+      model.decomposition === null || known.decomposition === null || step.decomposition === null
+        ? null
+        : rateFindings(
+            model.decomposition.rateConstant,
+            known.decomposition,
+            step.decomposition.rate,
+            1,
+            temperature.value,
+            span,
+          ),
+  };
+}
+
+function accelerates(study: Study, mtsr: number | null): boolean {
+  const { runaway, step } = study;
+  if (runaway === null) return true;
+  return [step.reaction.temperature, mtsr ?? step.reaction.temperature].every(
+    (temperature) => timeToMaximumRate(runaway, temperature).accelerates,
+  );
+}
+
+function historyRatio(study: Study): number | null {
+  const { runaway, step } = study;
+  if (runaway === null) return null;
+  const process = step.reaction.temperature;
+  const fresh = timeToMaximumRate(runaway, process).time;
+  const careful = carefulTimeToMaximumRate(runaway, process, study.heldAt(process));
+  return Number.isFinite(fresh) && fresh > 0 ? careful / fresh : null;
+}
+
+function notBuilt(depth: ScreenOptions["depth"]): Caution[] {
+  if (depth === "quick") return [];
+  return [
+    caution(
+      "NOT_BUILT",
+      "",
+      "Cooling failures and draws are not part of this version: time to act, probabilities and cautious sides are not given.",
+    ),
+  ];
+}
