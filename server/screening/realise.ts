@@ -1,4 +1,3 @@
-import type { PairCovariance } from "../kinetics/interval.js";
 import type { DecompositionRate, RateConstant } from "../kinetics/parameters.js";
 import {
   fromArrhenius,
@@ -7,29 +6,13 @@ import {
   type ModifiedArrhenius,
 } from "../kinetics/rateConstant.js";
 import { largestLawValue, type RateLaw } from "../kinetics/rateLaw.js";
-import type { Estimate } from "../numeric/estimate.js";
 import { decompositionRise } from "../thermal/balance.js";
 import { timeToMaximumRate } from "../thermal/runaway.js";
 import type { Decomposition, Step } from "../thermal/step.js";
 import { day } from "../thermal/td24.js";
+import type { Sample } from "../uncertainty/sample.js";
 import type { KnownRate, KnownRates } from "./known.js";
 import type { CaseModel, DecompositionModel } from "./model.js";
-
-/**
- * Where the numbers of a step come from: the estimates themselves, or one draw about them. Called in the same
- * order for the same case, so that a draw can be a row of a table.
- */
-export interface Sample {
-  /** @param pointer JSON pointer of the input */
-  normal(pointer: string, estimate: Estimate): number;
-  logNormal(pointer: string, estimate: Estimate): number;
-  /** deviations of ln A and E (J/mol) from a fitted pair */
-  pair(
-    pointer: string,
-    covariance: PairCovariance | null,
-    degreesOfFreedom: number | null,
-  ): readonly [number, number];
-}
 
 const none = [0, 0] as const;
 

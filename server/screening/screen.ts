@@ -1,4 +1,3 @@
-import { runawayOf } from "../thermal/cooling.js";
 import { criticalityClass } from "../thermal/criticality.js";
 import { carefulTimeToMaximumRate } from "../thermal/history.js";
 import { timeToMaximumRate } from "../thermal/runaway.js";
