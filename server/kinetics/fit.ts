@@ -44,7 +44,7 @@ export interface TableFit {
 }
 
 /** What both forms have. */
-export interface FormFit {
+interface FormFit {
   readonly rate: ModifiedArrhenius;
   /** line of ln(k/T) or ln k on 1/T */
   readonly line: Line;
@@ -57,7 +57,7 @@ export interface FormFit {
 }
 
 /** A row of the table beside what the form in use makes of it. */
-export interface FittedRow {
+interface FittedRow {
   /** K */
   readonly temperature: number;
   readonly lnRateConstant: number;
