@@ -1,0 +1,60 @@
+import type { InputNote } from "../screening/model.js";
+import { pointerOf } from "./faults.js";
+import { type Basis, bases, isGroup } from "./leafReading.js";
+import { memberOf, type Place } from "./outline.js";
+import { visitLeaves } from "./typed.js";
+
+/**
+ * How every quantity of an accepted document is known, in the order of the schema: as typed, with its
+ * error, basis and source.
+ */
+export function inputNotes(document: unknown): InputNote[] {
+  const notes: InputNote[] = [];
+  visitLeaves(document, (leaf, value, path, groups) => {
+    const isQuantity = leaf.kind === "quantity" || leaf.kind === "rate";
+    if (!isQuantity && leaf.kind !== "number") return;
+    notes.push({
+      pointer: pointerOf(path),
+      label: labelOf(leaf.label, path, groups),
+      ...notesOf(value),
+    });
+  });
+  return notes;
+}
+
+/** `Mass` of the feed as "mass of the feed"; entries of lists with their number. */
+function labelOf(label: string, path: readonly string[], groups: readonly Place[]): string {
+  const of = groups.findLast((place) => place.kind === "group" && place.about.of !== undefined);
+  const suffix = of?.kind === "group" ? ` ${of.about.of}` : "";
+  const entries = groups.flatMap((place, depth) =>
+    place.kind === "list" ? [`${lowered(place.about.entry)} ${Number(path[depth]) + 1}`] : [],
+  );
+  const name = `${lowered(label)}${suffix}`;
+  return entries.length === 0 ? name : `${name}, ${entries.join(", ")}`;
+}
+
+/** A label inside a sentence: its first letter small, unless it is a symbol such as T_D24. */
+function lowered(label: string): string {
+  return /^[A-Z][a-z]/.test(label) ? label.charAt(0).toLowerCase() + label.slice(1) : label;
+}
+
+function notesOf(typed: unknown): Omit<InputNote, "pointer" | "label"> {
+  if (!isGroup(typed)) return { text: String(typed), standardErrorText: null, basis: null, source: null };
+  const inner = isGroup(typed.value) ? typed.value : null;
+  const part = (key: string) => memberOf(typed, key) ?? memberOf(inner, key);
+  const basis = part("basis");
+  return {
+    text: textOf(inner === null ? typed.value : inner.value) ?? "",
+    standardErrorText: textOf(part("standardError")),
+    basis: isBasis(basis) ? basis : null,
+    source: textOf(part("source")),
+  };
+}
+
+function textOf(value: unknown): string | null {
+  return typeof value === "string" || typeof value === "number" ? String(value) : null;
+}
+
+function isBasis(value: unknown): value is Basis {
+  return typeof value === "string" && Object.hasOwn(bases, value);
+}

@@ -1,0 +1,158 @@
+import { z } from "zod";
+import { group, list } from "./groups.js";
+import { choice, estimatedNumber, plain, quantity, rate, rateUnit, text } from "./leaves.js";
+
+const fittedRange = z
+  .tuple([quantity("temperature", "Fitted from"), quantity("temperature", "Fitted up to")])
+  .optional();
+
+const fitted = {
+  correlation: plain(
+    "Correlation of the two parameters",
+    { above: -1, below: 1 },
+    "As the fit printed it, between −1 and 1",
+  ).optional(),
+  fittedRange,
+  points: plain(
+    "Number of rate constants fitted",
+    { atLeast: 3, whole: true },
+    "Sets the width of the interval",
+  ).optional(),
+  viscosity: quantity("viscosity", "Viscosity of the medium", {
+    hint: "For the diffusion limit; that of water where empty",
+  }).optional(),
+};
+
+const activationEnergy = quantity("molarEnergy", "Activation energy", { sign: "any" });
+
+const eyring = group(
+  { title: "Eyring: activation enthalpy and entropy" },
+  {
+    form: z.literal("eyring"),
+    activationEnthalpy: quantity("molarEnergy", "Activation enthalpy", { sign: "any" }),
+    activationEntropy: quantity("molarEntropy", "Activation entropy", { sign: "any" }),
+    standardConcentration: quantity("concentration", "Standard concentration of the entropy").prefault(
+      "1 mol/L",
+    ),
+    transmissionCoefficient: plain("Transmission coefficient", { above: 0 }).prefault(1),
+    ...fitted,
+  },
+);
+
+const lnPreExponential = group(
+  { title: "Or its logarithm", intro: "For a factor that was fitted as ln A" },
+  {
+    value: plain("ln A", {}),
+    standardError: plain("Standard error of ln A", { atLeast: 0 }).optional(),
+    unit: rateUnit("Unit of A"),
+  },
+);
+
+const arrhenius = group(
+  { title: "Arrhenius: pre-exponential factor and activation energy" },
+  {
+    form: z.literal("arrhenius"),
+    preExponential: rate("Pre-exponential factor A").optional(),
+    lnPreExponential: lnPreExponential.optional(),
+    activationEnergy,
+    ...fitted,
+  },
+);
+
+const reference = group(
+  { title: "One rate constant and an activation energy" },
+  {
+    form: z.literal("reference"),
+    rateConstant: rate("Rate constant"),
+    at: quantity("temperature", "At the temperature"),
+    activationEnergy,
+    fittedRange,
+  },
+);
+
+const row = group(
+  { title: "Row" },
+  {
+    temperature: quantity("temperature", "Temperature"),
+    rateConstant: rate("Rate constant"),
+    relativeError: plain("Relative error", { above: 0 }, "Standard error over the rate constant").optional(),
+    leftOut: text("Left out because", "A reason takes the row out of the fit").optional(),
+  },
+);
+
+const table = group(
+  { title: "Table of measured rate constants, fitted here" },
+  {
+    form: z.literal("table"),
+    fitAs: choice("Fitted as", { eyring: "Eyring", arrhenius: "Arrhenius" }),
+    rows: list(
+      {
+        title: "Measured rate constants",
+        entry: "Row",
+        intro: "At least three different temperatures",
+        layout: "rows",
+        atLeast: 1,
+        atMost: 1000,
+      },
+      row,
+    ),
+    viscosity: fitted.viscosity,
+  },
+);
+
+const heatRate = group(
+  { title: "Heat release rate at one temperature" },
+  {
+    form: z.literal("heatRate"),
+    heatReleaseRate: quantity("specificPower", "Heat release rate", {
+      hint: "Initial rate of an order law, largest isothermal rate of an autocatalytic one",
+    }),
+    at: quantity("temperature", "At the temperature"),
+    activationEnergy,
+  },
+);
+
+const td24 = group(
+  { title: "Temperature with 24 h to the maximum rate" },
+  {
+    form: z.literal("td24"),
+    temperature: quantity("temperature", "T_D24"),
+    activationEnergy,
+  },
+);
+
+/** Rate constant of the desired reaction. */
+export const rateConstant = z.discriminatedUnion("form", [eyring, arrhenius, reference, table]);
+
+/** Rate constant of the decomposition: two more ways to state it. */
+export const decompositionRateConstant = z.discriminatedUnion("form", [
+  eyring,
+  arrhenius,
+  reference,
+  table,
+  heatRate,
+  td24,
+]);
+
+const decompositionOrder = { atLeast: 0, atMost: 3 };
+
+/** Rate law of the decomposition. */
+export const rateLaw = z.discriminatedUnion("model", [
+  group(
+    { title: "Order: the rate falls as material is used up" },
+    { model: z.literal("order"), order: estimatedNumber("Order", decompositionOrder).prefault(1) },
+  ),
+  group(
+    { title: "Autocatalytic: the products speed it up" },
+    {
+      model: z.literal("autocatalytic"),
+      order: estimatedNumber("Order", decompositionOrder).prefault(1),
+      productOrder: estimatedNumber("Order in the products", { above: 0, atMost: 3 }).prefault(1),
+      initiation: estimatedNumber(
+        "Initiation",
+        { above: 0 },
+        "The w of (1 − α)ⁿ (w + αᵐ): how much of the rate is there at the start",
+      ),
+    },
+  ),
+]);
