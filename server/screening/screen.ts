@@ -1,4 +1,5 @@
 import { criticalityClass } from "../thermal/criticality.js";
+import { doseAt } from "../thermal/dosing.js";
 import { carefulTimeToMaximumRate } from "../thermal/history.js";
 import { timeToMaximumRate } from "../thermal/runaway.js";
 import type { Step } from "../thermal/step.js";
@@ -42,11 +43,12 @@ export interface ScreenOptions {
 export function screen(model: CaseModel, options: ScreenOptions): Findings {
   const known = knownRates(model);
   const step = realise(model, known, estimates);
-  const study = studyOf(step);
+  const study = studyOf(step, "draws");
   const process = step.reaction.temperature;
   const { runaway } = study;
-  const dosing = study.dosingAt(process);
-  const mtsr = study.mtsrAt(process);
+  const { rate } = step.reaction;
+  const dosing = rate === null ? null : doseAt(step, rate, process);
+  const mtsr = dosing === null ? null : process + dosing.rise.value;
   const t24 = runaway === null ? null : td24(runaway);
   const temperatures = temperatureFindings(step, mtsr, t24);
   const accumulation = dosing === null ? null : accumulationFindings(step, dosing);

@@ -90,12 +90,12 @@ export function accumulationFindings(step: Step, dosing: Dosing): AccumulationFi
 }
 
 function accumulationCurve(step: Step, dosing: Dosing): AccumulationFindings["curve"] {
-  const { trajectory, balance } = dosing;
-  if (trajectory === null) return [];
+  const { run, balance } = dosing;
+  if (run === null) return [];
   const times = [...grid(0, balance.feedEnd), dosing.accumulation.at, dosing.rise.at].sort((a, b) => a - b);
   return [...new Set(times)].map((time) => {
     const fed = balance.fed(time);
-    const reacted = trajectory.component(time, 0);
+    const reacted = run.extentAt(time);
     const accumulated = Math.max(0, Math.min(fed, balance.charged) - reacted);
     const held = accumulated * balance.limiting * -step.reaction.heat;
     return {

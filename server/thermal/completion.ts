@@ -11,9 +11,9 @@ import type { Dosing } from "./dosing.js";
  * @returns s; infinite where it is never reached
  */
 export function timeToConversion(dosing: Dosing, conversion: number): number {
-  const { balance, endExtent, trajectory } = dosing;
-  if (trajectory !== null && endExtent >= conversion) {
-    return findRoot((time) => trajectory.component(time, 0) - conversion, 0, balance.feedEnd, {
+  const { balance, endExtent, run } = dosing;
+  if (run !== null && endExtent >= conversion) {
+    return findRoot((time) => run.extentAt(time) - conversion, 0, balance.feedEnd, {
       tolerance: 1e-9 * balance.feedEnd,
     });
   }

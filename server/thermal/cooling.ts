@@ -1,8 +1,10 @@
 import { lnRateConstant } from "../kinetics/rateConstant.js";
 import { lawValue } from "../kinetics/rateLaw.js";
+import { maximise } from "../numeric/roots.js";
 import { decompositionRise, fedMass } from "./balance.js";
 import type { Dosing } from "./dosing.js";
 import { progressAfterHold } from "./history.js";
+import type { FeedRun } from "./isothermal.js";
 import type { Runaway } from "./runaway.js";
 import type { Step } from "./step.js";
 
@@ -82,37 +84,34 @@ export function decompositionHeat(step: Step, temperature: number, time: number)
 export function coolingDuty(step: Step, temperature: number, dosing: Dosing): number {
   const { reaction, vessel } = step;
   const { feed } = reaction;
-  const { trajectory, balance } = dosing;
+  const { run, balance } = dosing;
   const perMol = -reaction.heat;
-  if (feed === null || trajectory === null) {
+  if (feed === null || run === null) {
     return dosing.fastest.value * perMol + decompositionHeat(step, temperature, 0) + vessel.agitatorPower;
   }
   const feedTerm = ((feed.mass * feed.heatCapacity) / feed.duration) * (temperature - feed.temperature);
-  const released = (time: number): number =>
-    balance.limiting * balance.rate(time, trajectory.component(time, 0)) * perMol +
-    decompositionHeat(step, temperature, time);
-  const end = released(balance.feedEnd);
-  let largest = Math.max(end, released(0), released(dosing.fastest.at));
-  if (step.decomposition !== null && decompositionHeat(step, temperature, balance.feedEnd) > 1e-7 * largest) {
-    largest = Math.max(largest, largestOnSteps(released, trajectory.times()));
+  const released = (time: number, extent: number): number =>
+    balance.limiting * balance.rate(time, extent) * perMol + decompositionHeat(step, temperature, time);
+  const last = run.times.length - 1;
+  const end = released(run.times[last], run.extents[last]);
+  let largest = Math.max(end, released(0, 0), released(dosing.fastest.at, dosing.fastest.extent));
+  // A decomposition that adds next to nothing cannot move the largest heat.
+  if (decompositionHeat(step, temperature, balance.feedEnd) > 1e-7 * largest) {
+    largest = Math.max(largest, largestAlong(run, released));
   }
   return Math.max(largest - feedTerm, end) + vessel.agitatorPower;
 }
 
-/** Largest value over the steps, refined by a parabola about the best of their ends and middles. */
-function largestOnSteps(value: (time: number) => number, times: Float64Array): number {
-  const points: number[] = [];
-  for (let i = 1; i < times.length; i += 1) points.push(times[i - 1], 0.5 * (times[i - 1] + times[i]));
-  points.push(times[times.length - 1]);
-  const values = points.map(value);
+/** Largest value over the steps of a run, refined about the best of their starts, middles and ends. */
+function largestAlong(run: FeedRun, value: (time: number, extent: number) => number): number {
+  const values = run.times.map((time, i) => value(time, run.extents[i]));
   const best = values.indexOf(Math.max(...values));
-  let low = points[Math.max(best - 1, 0)];
-  let high = points[Math.min(best + 1, points.length - 1)];
-  for (let i = 0; i < 40; i += 1) {
-    const first = low + (high - low) / 3;
-    const second = high - (high - low) / 3;
-    if (value(first) < value(second)) low = first;
-    else high = second;
-  }
-  return Math.max(values[best], value(0.5 * (low + high)));
+  if (best === 0 || best === values.length - 1) return values[best];
+  const refined = maximise(
+    (time) => value(time, run.extentAt(time)),
+    run.times[best - 1],
+    run.times[best + 1],
+    1e-5 * run.times[best],
+  );
+  return Math.max(values[best], refined.value);
 }

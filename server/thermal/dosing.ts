@@ -1,8 +1,13 @@
 import { lnRateConstant, type ModifiedArrhenius } from "../kinetics/rateConstant.js";
 import { findRoot } from "../numeric/roots.js";
-import type { Trajectory } from "../numeric/trajectory.js";
 import { adiabaticRise, fedMass, heatCapacityOf } from "./balance.js";
-import { type IsothermalBalance, isothermalBalance, runFeed, stoichiometricTime } from "./isothermal.js";
+import {
+  type FeedRun,
+  type IsothermalBalance,
+  isothermalBalance,
+  runFeed,
+  stoichiometricTime,
+} from "./isothermal.js";
 import type { Step } from "./step.js";
 
 /** A moment of the step and a value that is largest there. */
@@ -23,8 +28,8 @@ export interface Dosing {
   readonly fastest: Extreme & { readonly extent: number };
   /** extent at the end of the feed, part of the limiting amount; 0 for a batch */
   readonly endExtent: number;
-  /** extent over the feed; null for a batch */
-  readonly trajectory: Trajectory | null;
+  /** null for a batch */
+  readonly run: FeedRun | null;
 }
 
 /**
@@ -34,10 +39,16 @@ export interface Dosing {
  * @param step SI numbers, with a rate constant
  * @param rate of the desired reaction
  * @param temperature K
+ * @param relativeTolerance of the integration
  * @returns null where the balance could not be integrated
  * @see Gygax 1988, Chem. Eng. Sci. 43:1759; Stoessel 2008
  */
-export function doseAt(step: Step, rate: ModifiedArrhenius, temperature: number): Dosing | null {
+export function doseAt(
+  step: Step,
+  rate: ModifiedArrhenius,
+  temperature: number,
+  relativeTolerance = 1e-8,
+): Dosing | null {
   const balance = isothermalBalance(step, lnRateConstant(rate, temperature));
   if (step.reaction.feed === null) {
     return {
@@ -46,70 +57,70 @@ export function doseAt(step: Step, rate: ModifiedArrhenius, temperature: number)
       rise: { value: adiabaticRise(step), at: 0 },
       fastest: { value: balance.limiting * balance.rate(0, 0), at: 0, extent: 0 },
       endExtent: 0,
-      trajectory: null,
+      run: null,
     };
   }
-  const trajectory = runFeed(balance);
-  if (trajectory === null) return null;
-  const extentAt = (time: number): number => trajectory.component(time, 0);
+  const run = runFeed(balance, relativeTolerance);
+  if (run === null) return null;
   const heat = balance.limiting * -step.reaction.heat;
   const capacityAt = (time: number): number => heatCapacityOf(step, fedMass(step, time));
   const capacityRate = (step.reaction.feed.mass * step.reaction.feed.heatCapacity) / balance.feedEnd;
-  const accumulated = (time: number): number =>
-    Math.max(0, Math.min(balance.fed(time), balance.charged) - extentAt(time));
+  const accumulated = (time: number, extent: number): number =>
+    Math.max(0, Math.min(balance.fed(time), balance.charged) - extent);
+  const gain = (time: number, extent: number): number => balance.feedRate - balance.rate(time, extent);
 
   // After the stoichiometric point nothing adds to the accumulation: its largest values lie before.
   const stoichiometric = stoichiometricTime(balance);
-  const early = trajectory.times().filter((time) => time <= stoichiometric);
-  const gain = (time: number): number => balance.feedRate - balance.rate(time, extentAt(time));
-  const accumulation = largest(accumulated, gain, early);
+  const accumulation = largest(run, stoichiometric, accumulated, gain);
   const rise = largest(
-    (time) => (accumulated(time) * heat) / capacityAt(time),
-    (time) => gain(time) * capacityAt(time) - accumulated(time) * capacityRate,
-    early,
+    run,
+    stoichiometric,
+    (time, extent) => (accumulated(time, extent) * heat) / capacityAt(time),
+    (time, extent) => gain(time, extent) * capacityAt(time) - accumulated(time, extent) * capacityRate,
   );
   const fastest = largest(
-    (time) => balance.limiting * balance.rate(time, extentAt(time)),
-    (time) => balance.rateSlope(time, extentAt(time)),
-    trajectory.times(),
+    run,
+    balance.feedEnd,
+    (time, extent) => balance.limiting * balance.rate(time, extent),
+    (time, extent) => balance.rateSlope(time, extent),
   );
   return {
     balance,
     accumulation,
     rise,
-    fastest: { ...fastest, extent: extentAt(fastest.at) },
-    endExtent: extentAt(balance.feedEnd),
-    trajectory,
+    fastest: { ...fastest, extent: run.extentAt(fastest.at) },
+    endExtent: run.extents[run.extents.length - 1],
+    run,
   };
 }
 
+/** A function of the time and of the extent that the run has then. */
+type AlongRun = (time: number, extent: number) => number;
+
 /**
- * Largest value of a smooth function on the span of `times`: at an end, or where its slope turns from rising
- * to falling. Each step is looked at in two halves.
+ * Largest value of a smooth function on [0, end]: at an end, or where its slope turns from rising to falling.
+ * Each step of the run is looked at in two halves.
  */
-function largest(
-  value: (time: number) => number,
-  slope: (time: number) => number,
-  times: Float64Array,
-): Extreme {
-  let best: Extreme = { value: value(times[0]), at: times[0] };
-  const consider = (at: number): void => {
-    const found = value(at);
+function largest(run: FeedRun, end: number, value: AlongRun, slope: AlongRun): Extreme {
+  const { times, extents, extentAt } = run;
+  let best: Extreme = { value: value(times[0], extents[0]), at: times[0] };
+  const consider = (at: number, extent: number): void => {
+    const found = value(at, extent);
     if (found > best.value) best = { value: found, at };
   };
-  let before = times[0];
-  let slopeBefore = slope(before);
-  for (let i = 1; i < times.length; i += 1) {
-    const start = times[i - 1];
-    for (const time of [0.5 * (start + times[i]), times[i]]) {
-      const here = slope(time);
-      if (slopeBefore > 0 && here <= 0) {
-        consider(here === 0 ? time : findRoot(slope, before, time, { tolerance: 1e-9 * times[i] }));
-      }
-      before = time;
-      slopeBefore = here;
-    }
+  let last = 0;
+  let slopeBefore = slope(times[0], extents[0]);
+  for (let i = 1; i < times.length && times[i] <= end; i += 1) {
+    const here = slope(times[i], extents[i]);
+    if (slopeBefore > 0 && here < 0) {
+      const at = findRoot((time) => slope(time, extentAt(time)), times[i - 1], times[i], {
+        tolerance: 1e-9 * times[i],
+      });
+      consider(at, extentAt(at));
+    } else if (slopeBefore > 0 && here === 0) consider(times[i], extents[i]);
+    slopeBefore = here;
+    last = i;
   }
-  consider(times[times.length - 1]);
+  consider(times[last], extents[last]);
   return best;
 }

@@ -1,7 +1,6 @@
 import { lnRateConstant } from "../kinetics/rateConstant.js";
 import { lawValue, type RateLaw } from "../kinetics/rateLaw.js";
 import { gaussLegendre } from "../numeric/quadrature.js";
-import { alphaAtLargestRate } from "./largestRate.js";
 import { type Accuracy, type Runaway, timeToMaximumRate } from "./runaway.js";
 
 /**
@@ -98,6 +97,6 @@ export function carefulTimeToMaximumRate(
 ): number {
   const fresh = timeToMaximumRate(runaway, start, 0, accuracy);
   if (held <= 0) return fresh.time;
-  if (fresh.accelerates && held >= alphaAtLargestRate(runaway, start, held)) return 0;
-  return Math.min(fresh.time, timeToMaximumRate(runaway, start, held, accuracy).time);
+  const later = timeToMaximumRate(runaway, start, held, accuracy);
+  return fresh.accelerates && !later.accelerates ? 0 : Math.min(fresh.time, later.time);
 }

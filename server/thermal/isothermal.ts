@@ -1,6 +1,7 @@
+import type { DenseStep } from "../numeric/denseStep.js";
 import type { StiffSystem } from "../numeric/rosenbrockStep.js";
 import { createIntegrator, type Integrator } from "../numeric/stiff.js";
-import { createTrajectory, type Trajectory } from "../numeric/trajectory.js";
+import { createTrajectory } from "../numeric/trajectory.js";
 import { fedMass, limitingAmount, volumeOf } from "./balance.js";
 import { amountPower, amountPowerSlope, overallOrder, volumePower } from "./reactionRate.js";
 import type { Step } from "./step.js";
@@ -116,18 +117,34 @@ export function isothermalBalance(step: Step, lnK: number): IsothermalBalance {
 
 let integrator: Integrator | undefined;
 
+/** The extent over the feed, with the ends and the middles of the integrator's steps. */
+export interface FeedRun {
+  /** extent at any time of [0, feed end], part of the limiting amount */
+  extentAt(time: number): number;
+  /** starts, middles and ends of the steps in ascending order, s */
+  readonly times: readonly number[];
+  /** extents at `times` */
+  readonly extents: readonly number[];
+}
+
 /**
  * Integrates the balance over the feed, with a step ending where the fed reactant reaches the stoichiometric
  * amount. Where the integrator gives up, null.
  *
  * @param balance of a semibatch case
  * @param relativeTolerance of the extent
- * @returns the extent over [0, feed end] as a trajectory of one unknown
  */
-export function runFeed(balance: IsothermalBalance, relativeTolerance = 1e-8): Trajectory | null {
+export function runFeed(balance: IsothermalBalance, relativeTolerance: number): FeedRun | null {
   integrator ??= createIntegrator(1);
   const trajectory = createTrajectory(1);
-  const options = { relativeTolerance, absoluteTolerance: 1e-3 * relativeTolerance, trajectory };
+  const times = [0];
+  const extents = [0];
+  const onStep = (step: DenseStep): undefined => {
+    const middle = 0.5 * (step.start + step.end);
+    times.push(middle, step.end);
+    extents.push(step.component(middle, 0), step.component(step.end, 0));
+  };
+  const options = { relativeTolerance, absoluteTolerance: 1e-2 * relativeTolerance, trajectory, onStep };
   const stoichiometric = stoichiometricTime(balance);
   let from = 0;
   let y = Float64Array.of(0);
@@ -138,7 +155,7 @@ export function runFeed(balance: IsothermalBalance, relativeTolerance = 1e-8): T
     from = to;
     y = Float64Array.from(result.y);
   }
-  return trajectory;
+  return { extentAt: (time) => trajectory.component(time, 0), times, extents };
 }
 
 /**

@@ -17,6 +17,9 @@ export interface Study {
   heldAt(temperature: number): number;
 }
 
+/** Of an isothermal run: a window's ends then move by less than 0.0001 K. */
+const windowTolerance = 1e-6;
+
 /** Temperatures are held apart by more than this; it only bounds the memory of a study. */
 const remembered = 400;
 
@@ -35,7 +38,7 @@ export function studyOf(step: Step, accuracy: Accuracy = "full"): Study {
     const before = known.get(temperature);
     if (before !== undefined) return before;
     if (known.size >= remembered) known.clear();
-    const dosing = doseAt(step, rate, temperature);
+    const dosing = doseAt(step, rate, temperature, windowTolerance);
     known.set(temperature, dosing);
     return dosing;
   };
