@@ -42,8 +42,10 @@ export interface LanesPanel {
   /** false where the next panel continues the same axis */
   readonly axisShown: boolean;
   readonly lanes: readonly Lane[];
-  /** vertical rules, areas and hatching across all lanes */
+  /** vertical rules, areas and hatching across all lanes; those with a name stand in the key */
   readonly marks: readonly (Rule | Area)[];
+  /** further samples for the key, such as the fills of spans */
+  readonly key: readonly (Area & { readonly name: string })[];
 }
 
 export interface Axis {
@@ -83,6 +85,8 @@ export interface Line {
   readonly weight: Weight;
   /** null interrupts the line */
   readonly points: readonly (readonly [number, number] | null)[];
+  /** a short word that stands on the line whatever the room */
+  readonly tag?: string;
   /** written beside the line where there is room, otherwise in the key */
   readonly name?: string;
   /** the name belongs in the key: beside the line it could be taken for that of something else */
@@ -108,6 +112,8 @@ export interface Rule {
   readonly weight: Weight;
   /** a rule across x is labelled over the panel, one across y at its right end */
   readonly label?: string;
+  /** for the key under the panel */
+  readonly name?: string;
 }
 
 /** A part of an axis, marked over the whole panel. */
@@ -143,6 +149,8 @@ export interface Lane {
   readonly marks: readonly LaneMark[];
   /** words in the lane where no mark can stand */
   readonly text: string | null;
+  /** a word at the lane's right end: what it says about the plan */
+  readonly verdict: string | null;
 }
 
 /** A stretch of a lane. */

@@ -4,11 +4,14 @@ import { fitResiduals } from "./fitResiduals.js";
 import { ladder } from "./ladder.js";
 import { rateFigure } from "./rate.js";
 import { tmrad } from "./tmrad.js";
+import { windowFigure } from "./window.js";
 
 /** All figures of a case in the order of the page; those without data are left out. */
 export function figuresOf(findings: Findings): Figure[] {
   const { rate, decompositionRate } = findings;
-  const figures: (Figure | null)[] = [ladder(findings)];
+  const figures: (Figure | null)[] = [
+    findings.window === null ? ladder(findings) : windowFigure(findings, findings.window),
+  ];
   if (rate !== null)
     figures.push(
       rateFigure(rate, "rate", "Rate constant of the reaction", "the reaction", "reaction"),

@@ -14,6 +14,8 @@ export interface PlacedFlag extends Flag {
   readonly side: "right" | "left";
   readonly left: number;
   readonly right: number;
+  /** another's rule runs under the words, so that they need a clear ground */
+  readonly crossed: boolean;
 }
 
 const gap = 4;
@@ -57,7 +59,7 @@ function rowsFor(
         (other.x >= span.left && other.x <= span.right),
     );
     const row = 1 + Math.max(-1, ...touching.map((other) => other.row));
-    placed.push({ ...flag, ...span, row, side: sides[next] ?? "right" });
+    placed.push({ ...flag, ...span, row, side: sides[next] ?? "right", crossed: false });
   }
   return placed;
 }
@@ -89,7 +91,14 @@ export function placeFlags(flags: readonly Flag[], bounds: readonly [number, num
     sorted.map((flag, row) => {
       const span = standing(flag, "right");
       const shift = Math.max(bounds[0] - span.left, Math.min(0, bounds[1] - span.right));
-      return { ...flag, row, side: "right", left: span.left + shift, right: span.right + shift };
+      return {
+        ...flag,
+        row,
+        side: "right",
+        left: span.left + shift,
+        right: span.right + shift,
+        crossed: true,
+      };
     })
   );
 }

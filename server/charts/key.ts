@@ -1,11 +1,12 @@
-import type { Area, Band, Line, Points } from "./figure.js";
+import type { Area, Band, Line, Points, Rule } from "./figure.js";
+import type { Point } from "./geometry.js";
 import { textSizes } from "./palette.js";
 import type { Primitive } from "./primitive.js";
-import { filledBox, rectangle, shapeAt, strokeAlong, textAt } from "./strokes.js";
+import { filledBox, grown, rectangle, shapeAt, strokeAlong, textAt, textBox } from "./strokes.js";
 import { textWidth, wrapText } from "./textWidth.js";
 
 /** A mark whose name stands under the panel beside a sample of it. */
-export type KeyEntry = (Line | Points | Band | Area) & { readonly name: string };
+export type KeyEntry = (Line | Points | Band | Area | Rule) & { readonly name: string };
 
 const sampleWidth = 26;
 const rowHeight = 17;
@@ -13,11 +14,19 @@ const rowHeight = 17;
 function sample(entry: KeyEntry, x: number, y: number): Primitive[] {
   const box = { left: x, right: x + sampleWidth, top: y - 5, bottom: y + 5 };
   switch (entry.type) {
+    case "rule":
     case "line": {
-      const ends = [
-        [x, y],
-        [x + sampleWidth, y],
-      ] as const;
+      const upright = entry.type === "rule" && entry.across === "x";
+      const middle = x + sampleWidth / 2;
+      const ends: readonly Point[] = upright
+        ? [
+            [middle, y - 7],
+            [middle, y + 7],
+          ]
+        : [
+            [x, y],
+            [x + sampleWidth, y],
+          ];
       return [strokeAlong(ends, entry.tone, entry.dash, entry.weight)];
     }
     case "points":
@@ -27,6 +36,17 @@ function sample(entry: KeyEntry, x: number, y: number): Primitive[] {
     case "area":
       return filledBox(box, entry.fill, entry.tone, true);
   }
+}
+
+/** The short word of a line, on its sample as on the line. */
+function tagged(entry: KeyEntry, x: number, y: number): Primitive[] {
+  if (entry.type !== "line" || entry.tag === undefined) return [];
+  const text = textAt(x + sampleWidth / 2, y + 4, entry.tag, {
+    anchor: "middle",
+    bold: true,
+    tone: entry.tone,
+  });
+  return [rectangle(grown(textBox(text), 2, 0), "faint", "paper"), text];
 }
 
 /**
@@ -51,7 +71,7 @@ export function layoutKey(
       x = left;
       middle += rowHeight;
     }
-    primitives.push(...sample(entry, x, middle));
+    primitives.push(...sample(entry, x, middle), ...tagged(entry, x, middle));
     lines.forEach((line, at) => {
       if (at > 0) middle += rowHeight - 3;
       primitives.push(textAt(x + sampleWidth + 6, middle + 4, line));

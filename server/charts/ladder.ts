@@ -102,7 +102,7 @@ export function ladderLanes(findings: Findings): Lane[] {
 }
 
 function rungLane(label: string, marks: readonly LaneMark[], text: string | null): Lane {
-  return { label, detail: null, height: "rung", apart: false, spans: [], marks, text };
+  return { label, detail: null, height: "rung", apart: false, spans: [], marks, text, verdict: null };
 }
 
 /**
@@ -173,6 +173,7 @@ export function ladder(findings: Findings): Figure {
         axisShown: true,
         lanes: ladderLanes(findings),
         marks: [],
+        key: [],
       },
     ],
     captions: ladderCaptions(findings),

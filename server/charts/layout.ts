@@ -1,5 +1,5 @@
 import type { Figure, Panel } from "./figure.js";
-import { lanesLeft, layoutLanes } from "./layoutLanes.js";
+import { lanesLeft, lanesRight, layoutLanes } from "./layoutLanes.js";
 import { layoutPlot } from "./layoutPlot.js";
 import { textSizes } from "./palette.js";
 import { roomLeft, roomRight } from "./plotAxes.js";
@@ -23,15 +23,14 @@ export function layout(figure: Figure, width: Width = "wide"): Layout {
   const whole = widths[width];
   const labelsAbove = width === "narrow";
   const left = Math.max(...figure.panels.map((panel) => leftOf(panel, labelsAbove)));
-  const right =
-    whole - Math.max(...figure.panels.map((panel) => (panel.type === "plot" ? roomRight(panel) : 14)));
+  const right = whole - Math.max(...figure.panels.map((panel) => rightOf(panel, labelsAbove)));
   const primitives: Primitive[] = [];
   let y = 0;
   for (const panel of figure.panels) {
     const joined = panel.type === "lanes" && !panel.axisShown;
     const done =
       panel.type === "plot"
-        ? layoutPlot(panel, left, right, y)
+        ? layoutPlot(panel, left, right, y, whole)
         : layoutLanes(panel, labelsAbove ? left : 2, left, right, y);
     primitives.push(...done.primitives);
     y = done.bottom + (joined ? 0 : panelGap);
@@ -47,4 +46,9 @@ export function layout(figure: Figure, width: Width = "wide"): Layout {
 function leftOf(panel: Panel, labelsAbove: boolean): number {
   if (panel.type === "plot") return roomLeft(panel);
   return labelsAbove ? 14 : lanesLeft(panel);
+}
+
+function rightOf(panel: Panel, labelsAbove: boolean): number {
+  if (panel.type === "plot") return roomRight(panel);
+  return labelsAbove ? 14 : lanesRight(panel);
 }

@@ -1,17 +1,29 @@
 import { onAxis, type Scale, scaleOf } from "./axes.js";
-import type { Lane, LaneMark, LanesPanel } from "./figure.js";
+import type { Lane, LanesPanel } from "./figure.js";
 import { placeFlags } from "./flags.js";
 import type { Box, Point } from "./geometry.js";
-import { drawArea, drawMark, flagWords, type LaidOutPanel } from "./layoutPlot.js";
+import { type KeyEntry, layoutKey } from "./key.js";
+import { besideMark, crowdedRoom, drawLaneMark, onClearGround } from "./laneMarks.js";
+import { flagWords, type LaidOutPanel } from "./layoutPlot.js";
+import { drawArea, drawMark } from "./marks.js";
 import { textSizes } from "./palette.js";
 import { axisAcross, axisRoom, gridAcross } from "./plotAxes.js";
 import type { Primitive } from "./primitive.js";
-import { filledBox, rectangle, shapeAt, strokeAlong, textAt, textBox } from "./strokes.js";
-import { textWidth } from "./textWidth.js";
+import { filledBox, strokeAlong, textAt } from "./strokes.js";
+import { shortened, textWidth } from "./textWidth.js";
 
-const heights = { rung: 25, lane: 24, thick: 34 } as const;
+/** Heights of lanes whose names stand beside them, and of those whose names stand above. */
+const heights = {
+  beside: { rung: 25, lane: 32, thick: 36 },
+  above: { rung: 23, lane: 22, thick: 28 },
+} as const;
 const apartGap = 14;
-const aboveRoom = 16;
+const aboveRoom = 17;
+
+/** Room right of the frame for the lanes' verdicts where they stand beside them. */
+export function lanesRight(panel: LanesPanel): number {
+  return 14 + Math.max(0, ...panel.lanes.map((lane) => labelWidth(lane.verdict ?? "")));
+}
 
 /** Room left of the frame for the names of the lanes where they stand beside them. */
 export function lanesLeft(panel: LanesPanel): number {
@@ -72,7 +84,14 @@ export function layoutLanes(
     ...flagWords(flags, frameTop),
     ...(panel.axisShown ? axisAcross(panel.xAxis, box, x) : []),
   ];
-  return { primitives, bottom: panel.axisShown ? bottom + axisRoom : bottom };
+  const entries = [
+    ...panel.key,
+    ...panel.marks.flatMap((mark): KeyEntry[] =>
+      mark.name === undefined ? [] : [{ ...mark, name: mark.name }],
+    ),
+  ];
+  const key = layoutKey(entries, labelsLeft, right, panel.axisShown ? bottom + axisRoom : bottom);
+  return { primitives: [...primitives, ...key.primitives], bottom: key.bottom };
 }
 
 function placeLanes(
@@ -89,25 +108,11 @@ function placeLanes(
     const labelAbove = above ? y + 12 : null;
     if (above) y += aboveRoom;
     const crowded = lane.marks.some((mark) => besideMark(mark, left, right, x) === null);
-    const height = heights[lane.height] + (crowded ? 15 : 0);
+    const height = heights[above ? "above" : "beside"][lane.height] + (crowded ? crowdedRoom : 0);
     const box = { left, right, top: y, bottom: y + height };
     y += height;
     return { lane, labelAbove, box };
   });
-}
-
-/** Reach of a mark with its interval, cut to the frame. */
-function reach(mark: LaneMark, left: number, right: number, x: Scale): readonly [number, number] {
-  const ends = [mark.value, ...(mark.interval ?? [])].map(x);
-  return [Math.max(left, Math.min(...ends)) - 6, Math.min(right, Math.max(...ends)) + 6];
-}
-
-/** The side of a mark on which its words fit; null where they do on neither. */
-function besideMark(mark: LaneMark, left: number, right: number, x: Scale): "right" | "left" | null {
-  const width = textWidth(mark.text, textSizes.normal, true) + 6;
-  const [from, to] = reach(mark, left, right, x);
-  if (to + width <= right + 10) return "right";
-  return from - width >= left ? "left" : null;
 }
 
 function drawSpans({ lane, box }: LanePlace, x: Scale): Primitive[] {
@@ -150,84 +155,30 @@ function drawLane({ lane, labelAbove, box }: LanePlace, labelsLeft: number, x: S
       ),
     );
   }
-  const strong = lane.height === "thick";
+  const bold = lane.height === "thick";
   if (labelAbove !== null) {
-    const detail = lane.detail === null ? "" : `: ${lane.detail}`;
-    const label = textAt(box.left, labelAbove, `${lane.label}${detail}`, { tone: "ink", bold: strong });
-    primitives.push(rectangle(textBox(label), "faint", "paper"), label);
+    const verdict = lane.verdict ?? "";
+    const whole = lane.detail === null ? lane.label : `${lane.label}: ${lane.detail}`;
+    const room = box.right - box.left - labelWidth(verdict) - 8;
+    const label = textAt(box.left, labelAbove, labelWidth(whole) > room ? lane.label : whole, {
+      tone: "ink",
+      bold,
+    });
+    primitives.push(...onClearGround(label));
+    if (verdict !== "")
+      primitives.push(...onClearGround(textAt(box.right, labelAbove, verdict, { anchor: "end" })));
   } else {
-    const base = lane.detail === null ? middle + 4 : middle - 3;
-    primitives.push(textAt(labelsLeft, base, lane.label, { tone: "ink", bold: strong }));
-    if (lane.detail !== null) primitives.push(textAt(labelsLeft, base + 14, lane.detail));
+    const base = lane.detail === null ? middle + 4 : middle - 2;
+    primitives.push(textAt(labelsLeft, base, lane.label, { tone: "ink", bold }));
+    if (lane.detail !== null) primitives.push(textAt(labelsLeft, base + 13, lane.detail));
+    if (lane.verdict !== null)
+      primitives.push(textAt(box.right + 8, middle + 4, lane.verdict, { tone: "ink" }));
   }
   for (const mark of lane.marks) primitives.push(...drawLaneMark(mark, box, x));
   if (lane.text !== null) {
-    const text = textAt(box.left + 8, middle + 4, lane.text, { tone: "ink" });
-    const ground = textBox(text);
-    primitives.push(
-      rectangle({ ...ground, left: ground.left - 4, right: ground.right + 4 }, "faint", "paper"),
-      text,
-    );
+    const room = box.right - box.left - 16;
+    const words = shortened(lane.text, textSizes.small, room);
+    primitives.push(...onClearGround(textAt(box.left + 8, middle + 4, words, { tone: "ink" })));
   }
   return primitives;
-}
-
-function drawLaneMark(mark: LaneMark, box: Box, x: Scale): Primitive[] {
-  const side = besideMark(mark, box.left, box.right, x);
-  const middle = side === null ? box.top + heights.rung / 2 : (box.top + box.bottom) / 2;
-  const primitives: Primitive[] = [];
-  if (mark.interval !== null) primitives.push(...whisker(mark.interval, middle, mark, box, x));
-  const at = Math.min(box.right, Math.max(box.left, x(mark.value)));
-  primitives.push(shapeAt([at, middle], mark.shape, mark.tone, 5));
-  const [from, to] = reach(mark, box.left, box.right, x);
-  const style = { size: "normal", bold: true, tone: mark.tone } as const;
-  const half = textWidth(mark.text, textSizes.normal, true) / 2;
-  const text =
-    side === "right"
-      ? textAt(to + 3, middle + 4.3, mark.text, style)
-      : side === "left"
-        ? textAt(from - 3, middle + 4.3, mark.text, { ...style, anchor: "end" })
-        : textAt(Math.max(box.left + half, Math.min(box.right - half, at)), middle + 20, mark.text, {
-            ...style,
-            anchor: "middle",
-          });
-  if (side !== "right") primitives.push(rectangle(textBox(text), "faint", "paper"));
-  return [...primitives, text];
-}
-
-/** The interval of a value; an end beyond the axis is an arrow. */
-function whisker(
-  interval: readonly [number, number],
-  y: number,
-  mark: LaneMark,
-  box: Box,
-  x: Scale,
-): Primitive[] {
-  const [low, high] = interval.map(x) as [number, number];
-  const left = Math.max(box.left, low);
-  const right = Math.min(box.right, high);
-  const end = (at: number, beyond: boolean, inward: number): readonly Point[] =>
-    beyond
-      ? [
-          [at + 5 * inward, y - 4],
-          [at, y],
-          [at + 5 * inward, y + 4],
-        ]
-      : [
-          [at, y - 4.5],
-          [at, y + 4.5],
-        ];
-  return [
-    strokeAlong(
-      [
-        [left, y],
-        [right, y],
-      ],
-      mark.tone,
-      "solid",
-      "normal",
-    ),
-    strokeAlong(end(left, low < box.left, 1), mark.tone, "solid", "normal"),
-    strokeAlong(end(right, high > box.right, -1), mark.tone, "solid", "normal"),
-  ];
 }

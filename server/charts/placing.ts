@@ -1,6 +1,6 @@
 import { type Box, clipSegment, inside, overlap, type Point } from "./geometry.js";
 import { rounded, type Text } from "./primitive.js";
-import { textAt, textBox } from "./strokes.js";
+import { grown, textAt, textBox } from "./strokes.js";
 
 /** What words inside a frame have to keep clear of. */
 export interface Obstacles {
@@ -40,7 +40,7 @@ function best(candidates: readonly Candidate[], obstacles: Obstacles, limit: num
   for (const { text, cost } of candidates) {
     if (cost >= lowest) continue;
     const bare = textBox(text);
-    const box = { left: bare.left - 3, top: bare.top - 2, right: bare.right + 3, bottom: bare.bottom + 2 };
+    const box = grown(bare, 3, 2);
     if (!inside(box, obstacles.frame) || obstacles.boxes.some((each) => overlap(each, box))) continue;
     const crossed = crossings(box, obstacles.lines);
     const hatched = obstacles.hatched.filter((each) => overlap(each, box)).length;
@@ -50,7 +50,7 @@ function best(candidates: readonly Candidate[], obstacles: Obstacles, limit: num
       chosen = { text, box, crossed: crossed + hatched > 0 };
     }
   }
-  if (chosen !== null) obstacles.boxes.push(chosen.box);
+  if (chosen !== null) obstacles.boxes.push(grown(chosen.box, 8, 0));
   return chosen;
 }
 
@@ -143,4 +143,19 @@ function alongEvenly(points: readonly Point[], count: number): Point[] {
     places.push([x0 + part * (x1 - x0), y0 + part * (y1 - y0)]);
   }
   return places;
+}
+
+/** A short word on a line itself, by preference near its end. */
+export function placeOn(
+  points: readonly Point[],
+  word: string,
+  style: Partial<Text>,
+  obstacles: Obstacles,
+): PlacedText | null {
+  const places = alongEvenly(points, 60);
+  const candidates = places.map(([x, y], at) => ({
+    text: textAt(x, y + 4, word, { ...style, anchor: "middle" as const }),
+    cost: 0.1 * Math.abs(at - 0.8 * places.length),
+  }));
+  return best(candidates, obstacles, Number.POSITIVE_INFINITY);
 }

@@ -98,3 +98,8 @@ export function textBox({ x, y, text, anchor, size, bold }: Text): Box {
   const left = anchor === "start" ? x : anchor === "end" ? x - width : x - width / 2;
   return { left, top: y - 0.8 * height, right: left + width, bottom: y + 0.24 * height };
 }
+
+/** A box with a margin. */
+export function grown(box: Box, across: number, up: number): Box {
+  return { left: box.left - across, right: box.right + across, top: box.top - up, bottom: box.bottom + up };
+}
