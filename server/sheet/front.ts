@@ -7,6 +7,7 @@ import { type Cursor, childElement, ink, ornament, paragraph, readable, styles }
 import {
   actSentence,
   classSentence,
+  levelMeanings,
   levelNames,
   severityText,
   stopSentence,
@@ -216,17 +217,48 @@ function tmradText(tmrad: TmradFindings | null, key: "atProcess_s" | "atMtsr_s")
   return seconds === null ? "not assessed" : durationText(seconds);
 }
 
-/** Warnings in words as far as the page goes, notes by code; all of them stand in words further on. */
+/** Warnings in words as far as the page goes, the rest by code; all stand in words further on. */
 function frontCautions(cursor: Cursor, cautions: readonly Caution[]): void {
-  const stops = cautions.filter((caution) => caution.level === "stop");
-  if (stops.length === 0) {
+  if (cautions.every((caution) => caution.level !== "stop")) {
     paragraph(cursor, "No stop was raised. That does not make the step safe.", styles.strong, { after: 2 });
   }
-  for (const level of ["warn", "note"] as const) {
-    const those = cautions.filter((caution) => caution.level === level);
-    if (those.length === 0) continue;
-    const codes = those.map((caution) => caution.code).join(", ");
-    const text = `${levelNames[level]}s (${those.length}): ${codes}.`;
-    paragraph(cursor, text, styles.small, { after: 2 });
+  const [warnings, notes] = (["warn", "note"] as const).map((level) =>
+    cautions.filter((caution) => caution.level === level),
+  );
+  if (warnings !== undefined && warnings.length > 0) writeWarnings(cursor, warnings);
+  if (notes !== undefined && notes.length > 0) {
+    paragraph(cursor, `${countText("note", notes)}: ${codesText(notes)}.`, styles.small, { after: 0 });
   }
+}
+
+/** Height that the codes of what is not written out may take, pt. */
+const roomForCodes = 34;
+
+function writeWarnings(cursor: Cursor, warnings: readonly Caution[]): void {
+  paragraph(cursor, `${countText("warn", warnings)}: ${levelMeanings.warn}`, styles.strong, { after: 1 });
+  let written = 0;
+  for (const warning of warnings) {
+    const text = `${warning.code}: ${warning.text}`;
+    const height =
+      wrap(cursor.pdf, text, cursor.width - 8, styles.small).length * lineHeight(styles.small) + 2;
+    if (cursor.y + height > cursor.bottom - roomForCodes) break;
+    paragraph(cursor, text, styles.small, { indent: 8, after: 2 });
+    written++;
+  }
+  const rest = warnings.slice(written);
+  if (rest.length > 0) {
+    const more = written === 0 ? "" : `and ${rest.length} more: `;
+    paragraph(cursor, `${more}${codesText(rest)} (in words further on).`, styles.small, {
+      indent: 8,
+      after: 2,
+    });
+  }
+}
+
+function countText(level: "warn" | "note", cautions: readonly Caution[]): string {
+  return `${levelNames[level]}${cautions.length === 1 ? "" : "s"} (${cautions.length})`;
+}
+
+function codesText(cautions: readonly Caution[]): string {
+  return [...new Set(cautions.map((caution) => caution.code))].join(", ");
 }

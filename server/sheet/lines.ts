@@ -7,6 +7,8 @@ export interface TextStyle {
   readonly size: number;
   readonly weight: Weight;
   readonly colour?: string;
+  /** true: `_{…}` lowers and `^{…}` raises what stands in the braces */
+  readonly formula?: boolean;
 }
 
 /** Line height over font size. */
@@ -16,13 +18,32 @@ export function lineHeight(style: TextStyle): number {
   return leading * style.size;
 }
 
-/** Width of one line, pt. */
-export function widthOf(pdf: PDFKit.PDFDocument, line: string, style: TextStyle): number {
-  return runsOf(line, style.weight).reduce((sum, run) => sum + runWidth(pdf, run, style), 0);
+/** A run with its size and how far its baseline is lowered, pt. */
+interface Piece extends Run {
+  readonly size: number;
+  readonly lowered: number;
 }
 
-function runWidth(pdf: PDFKit.PDFDocument, run: Run, style: TextStyle): number {
-  return pdf.font(run.face).fontSize(style.size).widthOfString(run.text);
+const script = { size: 0.74, lowered: 0.18, raised: 0.34 };
+const marked = /([_^])\{([^{}]*)\}/u;
+
+function piecesOf(line: string, { size, weight, formula = false }: TextStyle): readonly Piece[] {
+  if (!formula) return runsOf(line, weight).map((run) => ({ ...run, size, lowered: 0 }));
+  return line.split(/([_^]\{[^{}]*\})/u).flatMap((part) => {
+    const [, mark, inner] = marked.exec(part) ?? [];
+    if (inner === undefined) return runsOf(part, weight).map((run) => ({ ...run, size, lowered: 0 }));
+    const lowered = size * (mark === "_" ? script.lowered : -script.raised);
+    return runsOf(inner, weight).map((run) => ({ ...run, size: script.size * size, lowered }));
+  });
+}
+
+/** Width of one line, pt. */
+export function widthOf(pdf: PDFKit.PDFDocument, line: string, style: TextStyle): number {
+  return piecesOf(line, style).reduce((sum, piece) => sum + pieceWidth(pdf, piece), 0);
+}
+
+function pieceWidth(pdf: PDFKit.PDFDocument, piece: Piece): number {
+  return pdf.font(piece.face).fontSize(piece.size).widthOfString(piece.text);
 }
 
 /**
@@ -38,28 +59,21 @@ export function drawLine(
   y: number,
   style: TextStyle,
 ): void {
-  drawAtBaseline(pdf, line, x, y + 1.02 * style.size, style);
-}
-
-/** Draws one line from `x` on with its baseline at `y`. */
-export function drawAtBaseline(
-  pdf: PDFKit.PDFDocument,
-  line: string,
-  x: number,
-  y: number,
-  style: TextStyle,
-): void {
   let at = x;
   pdf.fillColor(style.colour ?? paperTones.ink);
-  for (const run of runsOf(line, style.weight)) {
-    const width = runWidth(pdf, run, style);
-    pdf.text(run.text, at, y, { lineBreak: false, baseline: "alphabetic" });
+  for (const piece of piecesOf(line, style)) {
+    const width = pieceWidth(pdf, piece);
+    const baseline = y + 1.02 * style.size + piece.lowered;
+    pdf.text(piece.text, at, baseline, { lineBreak: false, baseline: "alphabetic" });
     at += width;
   }
 }
 
 /** A number is not parted from its unit at the end of a line. */
 const unitAhead = /^(?:°C|K|s|min|h|days|years|%|W|kW|J|kJ|kg|mol|kmol|pt|L|m)(?=\W|$)/u;
+
+/** Nor is a unit such as kJ/(kg K) parted within its parentheses. */
+const openUnit = /\/\([^()]{1,12}$/u;
 
 /**
  * Breaks text into lines that fit. A word that is wider than the line is broken where it must.
@@ -95,8 +109,8 @@ function wordsOf(text: string): string[] {
   const words: string[] = [];
   for (const word of text.split(/[ \t]+/u)) {
     const last = words.at(-1);
-    if (last !== undefined && /\d$/u.test(last) && unitAhead.test(word))
-      words[words.length - 1] = `${last} ${word}`;
+    const joined = last !== undefined && (openUnit.test(last) || (/\d$/u.test(last) && unitAhead.test(word)));
+    if (joined) words[words.length - 1] = `${last} ${word}`;
     else words.push(word);
   }
   return words;

@@ -15,6 +15,7 @@ export const styles = {
   subheading: { size: 9.5, weight: "strong" },
   body: { size: 9, weight: "regular" },
   strong: { size: 9, weight: "strong" },
+  formula: { size: 9, weight: "regular", formula: true },
   small: { size: 7.5, weight: "regular" },
   label: { size: 7.5, weight: "regular", colour: ink.quiet },
 } as const satisfies Record<string, TextStyle>;
@@ -137,7 +138,7 @@ export function paragraph(
  *
  * @param keep height that must fit below it, pt
  */
-export function heading(cursor: Cursor, text: string, keep = 60): void {
+export function heading(cursor: Cursor, text: string, keep = 100): void {
   cursor.y += cursor.y > cursor.top ? 10 : 0;
   ensure(cursor, lineHeight(styles.heading) + 6 + keep);
   cursor.pdf.outline.addItem(text);
@@ -147,7 +148,7 @@ export function heading(cursor: Cursor, text: string, keep = 60): void {
 }
 
 /** A heading of a part of a section. */
-export function subheading(cursor: Cursor, text: string, keep = 40): void {
+export function subheading(cursor: Cursor, text: string, keep = 70): void {
   cursor.y += cursor.y > cursor.top ? 4 : 0;
   ensure(cursor, lineHeight(styles.subheading) + keep);
   paragraph(cursor, text, styles.subheading, { tag: "H3", after: 2 });

@@ -12,7 +12,6 @@ import { type Cursor, heading, paragraph, styles, subheading } from "./page.js";
 import {
   actSentence,
   classSentence,
-  criterionNames,
   failuresByUrgency,
   severityText,
   verdictText,
@@ -129,7 +128,7 @@ function windowTable(cursor: Cursor, findings: Findings): void {
       { heading: "Probability", share: 12, align: "right" },
     ],
     window.criteria.map((criterion) => [
-      `${criterionNames[criterion.key]}${criterion.binding ? "" : ", not binding"}`,
+      `${criterion.label}${criterion.binding ? "" : ", not binding"}`,
       criterion.assessed ? spansText(criterion.allowed) : unknown,
       criterion.cautious === null ? unknown : spansText(criterion.cautious),
       criterion.metAtProcess === null ? unknown : criterion.metAtProcess ? "yes" : "NO",

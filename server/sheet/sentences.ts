@@ -1,24 +1,12 @@
 import type {
   CautionLevel,
-  CriterionKey,
   FailureFindings,
   Findings,
   Severity,
   WindowFindings,
 } from "../screening/findings.js";
+import { criterionLabel } from "../screening/labels.js";
 import { differenceText, durationText, percentText, temperatureText } from "../words/numbers.js";
-
-/** Criteria as people name them, and the bounds of the study itself. */
-export const criterionNames: Readonly<Record<CriterionKey | "lowest" | "highest", string>> = {
-  completion: "completion in the available time",
-  cooling: "cooling capacity",
-  stability: "thermal stability at constant coolant (advisory)",
-  "mtsr-mtt": "MTSR below MTT",
-  "mtsr-tmr": "TMRad from MTSR",
-  hold: "TMRad from the process temperature",
-  lowest: "lowest temperature of the study",
-  highest: "highest temperature of the study",
-};
 
 export const levelNames: Readonly<Record<CautionLevel, string>> = {
   stop: "STOP",
@@ -59,7 +47,7 @@ function end(window: WindowFindings, which: "lower" | "upper"): string {
   const value = which === "lower" ? window.lower_K : window.upper_K;
   const setBy = which === "lower" ? window.lowerSetBy : window.upperSetBy;
   const text = value === null ? "?" : temperatureText(value, which === "lower" ? "up" : "down");
-  return setBy === null ? text : `${text} (${criterionNames[setBy]})`;
+  return setBy === null ? text : `${text} (${criterionLabel(setBy)})`;
 }
 
 function cautiousSide(window: WindowFindings): string {
@@ -71,11 +59,11 @@ function cautiousSide(window: WindowFindings): string {
 }
 
 const classMeanings = {
-  "1": "a loss of cooling reaches neither MTT nor T_D24",
-  "2": "a loss of cooling stays below T_D24, but MTT lies above T_D24 and is no barrier before it",
-  "3": "a loss of cooling can reach MTT; T_D24 stays out of reach of the desired reaction",
-  "4": "a loss of cooling can reach MTT and, past it, T_D24; MTT is the only barrier",
-  "5": "a loss of cooling can reach T_D24, and MTT gives no barrier before it",
+  "1": "after a loss of cooling the reaction on its own (MTSR) reaches neither MTT nor T_D24",
+  "2": "MTSR stays below T_D24, but MTT lies at or above T_D24 and is no barrier before it",
+  "3": "after a loss of cooling the reaction on its own (MTSR) can reach MTT, but not T_D24",
+  "4": "after a loss of cooling the reaction on its own (MTSR) can reach T_D24; MTT, which comes before it, is the only barrier",
+  "5": "after a loss of cooling the reaction on its own (MTSR) can reach T_D24, and MTT is no barrier before it",
   none: "the process temperature is itself at or above MTT or T_D24",
 } as const;
 

@@ -79,6 +79,9 @@ export function table(
   cursor.y += 8;
 }
 
+/** What is missing stands back behind what was given. */
+const absent = /^(?:not (?:given|said|assessed|reached)|–)$/u;
+
 /** How many rows go on this page: 0 where it is better to begin on the next one. */
 function rowsThatFit(cursor: Cursor, headHeight: number, rows: readonly Row[], from: number): number {
   let room = cursor.bottom - cursor.y - headHeight;
@@ -168,8 +171,9 @@ function drawCell(
   align: "left" | "right",
   style: TextStyle,
 ): void {
+  const shown = absent.test(lines.join(" ")) ? { ...style, colour: ink.quiet } : style;
   lines.forEach((line, index) => {
     const indent = align === "right" ? width - widthOf(cursor.pdf, line, style) : 0;
-    drawLine(cursor.pdf, line, x + indent, cursor.y + padding + index * lineHeight(style), style);
+    drawLine(cursor.pdf, line, x + indent, cursor.y + padding + index * lineHeight(style), shown);
   });
 }

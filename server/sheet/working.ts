@@ -7,6 +7,8 @@ import { heatMethods } from "./workingHeat.js";
 import { rateMethods } from "./workingRate.js";
 import { runawayMethods } from "./workingRunaway.js";
 
+const indent = 12;
+
 /** One method as a reviewer checks it: the equation, this case's numbers in it, and where it is published. */
 export interface Method {
   readonly title: string;
@@ -30,21 +32,21 @@ export function writeWorking(cursor: Cursor, model: CaseModel, findings: Finding
   heading(cursor, "Working");
   paragraph(
     cursor,
-    "SI inside; R = 8.314462618 J/(mol K), k_B = 1.380649×10⁻²³ J/K, h = 6.62607015×10⁻³⁴ J s (exact, SI 2019). Numbers put in are shown rounded; the program calculates with all digits.",
-    styles.small,
+    "SI inside; R = 8.314462618 J/(mol K), k_{B} = 1.380649×10⁻²³ J/K, h = 6.62607015×10⁻³⁴ J s (exact, SI 2019). Numbers put in are shown rounded; the program calculates with all digits.",
+    { ...styles.small, formula: true },
   );
   for (const method of methodsOf(model, findings)) writeMethod(cursor, method);
 }
 
 function writeMethod(cursor: Cursor, method: Method): void {
   const lines = [method.equation, method.numbers].flatMap((text) =>
-    wrap(cursor.pdf, text, cursor.width - 10, styles.body),
+    wrap(cursor.pdf, text, cursor.width - indent, styles.formula),
   );
   ensure(cursor, (lines.length + 3) * lineHeight(styles.body));
   within(cursor, "Sect", () => {
     paragraph(cursor, method.title, styles.strong, { tag: "H3", after: 0 });
-    paragraph(cursor, method.equation, styles.body, { indent: 10, after: 0 });
-    paragraph(cursor, method.numbers, styles.body, { indent: 10, after: 0 });
-    paragraph(cursor, method.reference, styles.label, { indent: 10, after: 5 });
+    paragraph(cursor, method.equation, styles.formula, { indent, after: 0 });
+    paragraph(cursor, method.numbers, styles.formula, { indent, after: 0 });
+    paragraph(cursor, method.reference, { ...styles.label, formula: true }, { indent, after: 6 });
   });
 }

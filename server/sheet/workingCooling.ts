@@ -8,6 +8,7 @@ import {
   powerText,
   temperatureText,
 } from "../words/numbers.js";
+import { shortNumber } from "./shortNumber.js";
 import type { Method } from "./working.js";
 
 /** Cooling, window, failures and draws. */
@@ -24,15 +25,15 @@ type Cooling = NonNullable<Findings["cooling"]>;
 
 function capacity({ vessel, reaction }: CaseModel, found: Cooling): Method {
   const { flowing, temperature } = vessel.coolant;
-  const ua = `UA = ${numberText(vessel.heatTransferCoefficient.value, 4)} W/(m² K) × ${numberText(vessel.heatTransferArea.value, 4)} m²`;
+  const ua = `UA = ${shortNumber(vessel.heatTransferCoefficient.value)} W/(m² K) × ${shortNumber(vessel.heatTransferArea.value)} m²`;
   const w =
     flowing === null
       ? ""
-      : `, w = ${numberText(flowing.flow.value, 4)} kg/s × ${numberText(flowing.heatCapacity.value / 1000, 4)} kJ/(kg K)`;
+      : `, w = ${shortNumber(flowing.flow.value)} kg/s × ${shortNumber(flowing.heatCapacity.value / 1000)} kJ/(kg K)`;
   return {
     title: "Cooling at scale",
-    equation: `${flowing === null ? "UAe = UA (constant jacket temperature)" : "UAe = UA w/(UA + w), w = flow × cp of the coolant"}; capacity = UAe (T − Tc); duty = largest of r V (−ΔHr) + m Q k_d f(α) − feed cooling, plus the agitator`,
-    numbers: `${ua}${w}, T = ${temperatureText(reaction.temperature.value)}, Tc = ${temperatureText(temperature.value)}: capacity ${powerText(found.capacity_W, "down")}, duty ${powerText(found.duty_W, "up")}${found.use === null ? "" : `, use ${percentText(found.use, "up")}`}`,
+    equation: `${flowing === null ? "UA_{e} = UA (constant jacket temperature)" : "UA_{e} = UA w/(UA + w), w = coolant flow × c_{p}"}; capacity = UA_{e} (T − T_{c}); duty = largest of r V (−ΔH_{r}) + m Q k_{d} f(α) − feed cooling, plus the agitator`,
+    numbers: `${ua}${w}, T = ${temperatureText(reaction.temperature.value)}, T_{c} = ${temperatureText(temperature.value)}: capacity ${powerText(found.capacity_W, "down")}, duty ${powerText(found.duty_W, "up")}${found.use === null ? "" : `, use ${percentText(found.use, "up")}`}`,
     reference:
       "Heat balance of a stirred jacket; losses to the surroundings are not credited (common practice)",
   };
@@ -41,7 +42,7 @@ function capacity({ vessel, reaction }: CaseModel, found: Cooling): Method {
 function stability(found: Cooling): Method {
   return {
     title: "Stability",
-    equation: "stability ratio = (dq_net/dT)/UAe, stable below 1",
+    equation: "stability ratio = (dq_{net}/dT)/UA_{e}, stable below 1",
     numbers: `${numberText(found.stabilityRatio)}${found.noReturn_K === null ? "" : `; no return from ${temperatureText(found.noReturn_K, "down")}`}${found.criticalCoolant_K === null ? "" : `; critical coolant temperature ${temperatureText(found.criticalCoolant_K, "down")}`}`,
     reference: "Semenov 1928, Z. Phys. 48:571; van Heerden 1953, Ind. Eng. Chem. 45:1242",
   };
@@ -61,7 +62,7 @@ function failures({ limits }: CaseModel): Method {
   return {
     title: "Cooling failures and time to act",
     equation:
-      "C′ dT/dt = r V (−ΔHr) + m Q k_d f(α) + feed cp (T_feed − T) + P_agitator − UA (T − Tj) + heat gain; holdup cp dTj/dt = UA (T − Tj) − w (Tj − Tc)",
+      "C′ dT/dt = r V (−ΔH_{r}) + m Q k_{d} f(α) + feed c_{p} (T_{feed} − T) + P_{agitator} − UA (T − T_{j}) + heat gain; holdup c_{p} dT_{j}/dt = UA (T − T_{j}) − w (T_{j} − T_{c})",
     numbers: `lost: T reaches MTT, or α reaches ${percentText(limits.decompositionAllowed)}, or T still rises at the end; time to act: the largest delay before which every restoring of full cooling keeps the batch`,
     reference:
       "Heat balance; Hairer & Wanner, Solving ODEs II (implicit integration); watched for 24 h after the last change",

@@ -1,6 +1,7 @@
 import type { Findings } from "../screening/findings.js";
 import type { CaseModel } from "../screening/model.js";
-import { differenceText, durationText, numberText, percentText, temperatureText } from "../words/numbers.js";
+import { differenceText, durationText, percentText, temperatureText } from "../words/numbers.js";
+import { shortNumber } from "./shortNumber.js";
 import type { Method } from "./working.js";
 
 const gygax = "Gygax 1988, Chem. Eng. Sci. 43:1759; Stoessel 2008, Thermal Safety of Chemical Processes";
@@ -16,15 +17,15 @@ export function heatMethods(model: CaseModel, findings: Findings): Method[] {
     methods.push({
       title: "Accumulation and MTSR",
       equation:
-        "MTSR = T + max over the feed of n_acc(t) (−ΔHr)/C(t), n_acc = min(nA, nB/ν); batch: T + ΔTad",
-      numbers: `largest accumulation ${percentText(maximumFraction, "up")} of n_lim, ${durationText(at_s, "nearest")} after the start${measured === null ? "" : " (measured)"}; T = ${temperatureText(process)}: MTSR = ${temperatureText(mtsr, "up")}`,
+        "MTSR = T + max over the feed of n_{acc}(t) (−ΔH_{r})/C(t), n_{acc} = min(n_{A}, n_{B}/ν); batch: T + ΔT_{ad}",
+      numbers: `largest accumulation ${percentText(maximumFraction, "up")} of n_{lim}, ${durationText(at_s, "nearest")} after the start${measured === null ? "" : " (measured)"}; T = ${temperatureText(process)}: MTSR = ${temperatureText(mtsr, "up")}`,
       reference: `${gygax}. Assumes that the feed stops with the cooling.`,
     });
   }
   if (allAtOnce !== null) {
     methods.push({
       title: "All at once",
-      equation: "T_all = [m₀ cp₀ T + m_feed cp_feed T_feed + n_lim (−ΔHr)]/C(end)",
+      equation: "T_{all} = [m_{0} c_{p,0} T + m_{feed} c_{p,feed} T_{feed} + n_{lim} (−ΔH_{r})]/C(end)",
       numbers: `${temperatureText(allAtOnce, "up")}`,
       reference: "Heat balance; a bound where a failure lets the feed run on",
     });
@@ -33,8 +34,8 @@ export function heatMethods(model: CaseModel, findings: Findings): Method[] {
   if (decomposition !== null && findings.heat.decompositionRise_K !== null) {
     methods.push({
       title: "Adiabatic rise of the decomposition",
-      equation: "ΔTad,d = Q/c, c = C(end)/m(end)",
-      numbers: `Q = ${numberText(decomposition.heat.value / 1000, 4)} kJ/kg, C(end) = ${capacityText(model)}, m(end) = ${massText(model)}: ΔTad,d = ${differenceText(findings.heat.decompositionRise_K, "up")}`,
+      equation: "ΔT_{ad,d} = Q/c, c = C(end)/m(end)",
+      numbers: `Q = ${shortNumber(decomposition.heat.value / 1000)} kJ/kg, C(end) = ${capacityText(model)}, m(end) = ${massText(model)}: ΔT_{ad,d} = ${differenceText(findings.heat.decompositionRise_K, "up")}`,
       reference: gygax,
     });
   }
@@ -45,25 +46,26 @@ function rise(model: CaseModel, findings: Findings): Method {
   const { a, b, heat } = model.reaction;
   const limiting =
     b === null
-      ? `${numberText(a.amount.value, 4)} mol`
-      : `min(${numberText(a.amount.value, 4)}, ${numberText(b.amount.value, 4)}/${numberText(b.perA.value)}) mol`;
+      ? `${shortNumber(a.amount.value)} mol`
+      : `min(${shortNumber(a.amount.value)}, ${shortNumber(b.amount.value)}/${shortNumber(b.perA.value)}) mol`;
   return {
     title: "Adiabatic rise of the reaction",
-    equation: "ΔTad = n_lim (−ΔHr)/C(end), n_lim = min(nA, nB/ν), C(end) = m₀ cp₀ + m_feed cp_feed",
-    numbers: `n_lim = ${limiting}, −ΔHr = ${numberText(-heat.value / 1000, 4)} kJ/mol, C(end) = ${capacityText(model)}: ΔTad = ${differenceText(findings.heat.adiabaticRise_K, "up")}`,
+    equation:
+      "ΔT_{ad} = n_{lim} (−ΔH_{r})/C(end), n_{lim} = min(n_{A}, n_{B}/ν), C(end) = m_{0} c_{p,0} + m_{feed} c_{p,feed}",
+    numbers: `n_{lim} = ${limiting}, −ΔH_{r} = ${shortNumber(-heat.value / 1000)} kJ/mol, C(end) = ${capacityText(model)}: ΔT_{ad} = ${differenceText(findings.heat.adiabaticRise_K, "up")}`,
     reference: gygax,
   };
 }
 
 function capacityText({ mixture, reaction }: CaseModel): string {
   const part = (mass: number, heatCapacity: number) =>
-    `${numberText(mass, 4)} kg × ${numberText(heatCapacity / 1000, 4)} kJ/(kg K)`;
+    `${shortNumber(mass)} kg × ${shortNumber(heatCapacity / 1000)} kJ/(kg K)`;
   const own = part(mixture.mass.value, mixture.heatCapacity.value);
   const feed = reaction.feed;
   return feed === null ? own : `${own} + ${part(feed.mass.value, feed.heatCapacity.value)}`;
 }
 
 function massText({ mixture, reaction }: CaseModel): string {
-  const own = `${numberText(mixture.mass.value, 4)} kg`;
-  return reaction.feed === null ? own : `${own} + ${numberText(reaction.feed.mass.value, 4)} kg`;
+  const own = `${shortNumber(mixture.mass.value)} kg`;
+  return reaction.feed === null ? own : `${own} + ${shortNumber(reaction.feed.mass.value)} kg`;
 }

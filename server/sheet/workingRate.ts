@@ -2,6 +2,7 @@ import type { DecompositionRate } from "../kinetics/parameters.js";
 import type { Findings, RateFindings } from "../screening/findings.js";
 import type { CaseModel } from "../screening/model.js";
 import { numberText, temperatureText } from "../words/numbers.js";
+import { shortNumber } from "./shortNumber.js";
 import type { Method } from "./working.js";
 
 /** Rate constants of the reaction and of the decomposition at the process temperature. */
@@ -18,15 +19,15 @@ export function rateMethods(model: CaseModel, findings: Findings): Method[] {
 }
 
 const eyring = {
-  equation: "k = κ (k_B T/h) c₀^(1−n) exp(ΔS‡/R) exp(−ΔH‡/(R T))",
+  equation: "k = κ (k_{B} T/h) c_{0}^{1−n} exp(ΔS‡/R) exp(−ΔH‡/(R T))",
   reference: "Eyring 1935, J. Chem. Phys. 3:107; Laidler & King 1983, J. Phys. Chem. 87:2657",
 };
 const arrhenius = {
-  equation: "k = A exp(−Ea/(R T))",
+  equation: "k = A exp(−E_{a}/(R T))",
   reference: "Arrhenius 1889, Z. Phys. Chem. 4:226; IUPAC Gold Book, “Arrhenius equation”",
 };
 const reference = {
-  equation: "k = k_ref exp(−Ea/R (1/T − 1/T_ref))",
+  equation: "k = k_{ref} exp(−E_{a}/R (1/T − 1/T_{ref}))",
   reference: "Arrhenius 1889, Z. Phys. Chem. 4:226, re-centred",
 };
 
@@ -54,19 +55,19 @@ function sourceOf(rate: DecompositionRate): { equation: string; reference: strin
       };
     case "heatRate":
       return {
-        equation: `${reference.equation}, k_ref = q′/(Q f_ref)`,
-        reference: `${reference.reference}; k_ref from the heat release rate: common practice`,
+        equation: `${reference.equation}, k_{ref} = q′/(Q f_{ref})`,
+        reference: `${reference.reference}; k_{ref} from the heat release rate: common practice`,
       };
     case "td24":
       return {
-        equation: `${reference.equation}, k_ref such that TMRad from the given temperature is 24 h`,
-        reference: `${reference.reference}; TMRad is inversely proportional to k_ref`,
+        equation: `${reference.equation}, k_{ref} such that TMRad from the given temperature is 24 h`,
+        reference: `${reference.reference}; TMRad is inversely proportional to k_{ref}`,
       };
   }
 }
 
 function parametersText(rate: DecompositionRate, found: RateFindings): string {
-  const kJ = (joules: number) => `${numberText(joules / 1000, 4)} kJ/mol`;
+  const kJ = (joules: number) => `${shortNumber(joules / 1000)} kJ/mol`;
   switch (rate.form) {
     case "eyring":
       return eyringText(found);
@@ -78,18 +79,18 @@ function parametersText(rate: DecompositionRate, found: RateFindings): string {
       return `${used} of ${rate.rows.length} rows fitted: ${pair}`;
     }
     case "reference":
-      return `k_ref = ${numberText(rate.rateConstant.value, 4)} ${found.atProcess.unit} at ${temperatureText(rate.at.value)}, Ea = ${kJ(rate.activationEnergy.value)}`;
+      return `k_{ref} = ${shortNumber(rate.rateConstant.value)} ${found.atProcess.unit} at ${temperatureText(rate.at.value)}, E_{a} = ${kJ(rate.activationEnergy.value)}`;
     case "heatRate":
-      return `q′ = ${numberText(rate.heatReleaseRate.value, 4)} W/kg at ${temperatureText(rate.at.value)}, Ea = ${kJ(rate.activationEnergy.value)}`;
+      return `q′ = ${shortNumber(rate.heatReleaseRate.value)} W/kg at ${temperatureText(rate.at.value)}, E_{a} = ${kJ(rate.activationEnergy.value)}`;
     case "td24":
-      return `T_D24 = ${temperatureText(rate.temperature.value)}, Ea = ${kJ(rate.activationEnergy.value)}`;
+      return `T_{D24} = ${temperatureText(rate.temperature.value)}, E_{a} = ${kJ(rate.activationEnergy.value)}`;
   }
 }
 
 function eyringText({ eyring: pair }: RateFindings): string {
-  return `κ = ${numberText(pair.transmissionCoefficient)}, c₀ = ${numberText(pair.standardConcentration_mol_m3)} mol/m³, ΔS‡ = ${numberText(pair.activationEntropy_J_molK, 4)} J/(mol K), ΔH‡ = ${numberText(pair.activationEnthalpy_J_mol / 1000, 4)} kJ/mol`;
+  return `κ = ${shortNumber(pair.transmissionCoefficient)}, c_{0} = ${shortNumber(pair.standardConcentration_mol_m3)} mol/m³, ΔS‡ = ${shortNumber(pair.activationEntropy_J_molK)} J/(mol K), ΔH‡ = ${shortNumber(pair.activationEnthalpy_J_mol / 1000)} kJ/mol`;
 }
 
 function arrheniusText({ arrhenius: pair, atProcess }: RateFindings): string {
-  return `ln A = ${numberText(pair.lnPreExponential, 5)} (A in ${atProcess.unit}), Ea = ${numberText(pair.activationEnergy_J_mol / 1000, 4)} kJ/mol`;
+  return `ln A = ${numberText(pair.lnPreExponential, 5)} (A in ${atProcess.unit}), E_{a} = ${shortNumber(pair.activationEnergy_J_mol / 1000)} kJ/mol`;
 }

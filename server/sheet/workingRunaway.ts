@@ -1,6 +1,7 @@
 import type { Findings } from "../screening/findings.js";
 import type { CaseModel, DecompositionModel } from "../screening/model.js";
-import { durationText, numberText, temperatureText } from "../words/numbers.js";
+import { durationText, temperatureText } from "../words/numbers.js";
+import { shortNumber } from "./shortNumber.js";
 import type { Method } from "./working.js";
 
 /** TMRad, T_D24 and the criticality class. */
@@ -14,25 +15,25 @@ export function runawayMethods(model: CaseModel, findings: Findings): Method[] {
     methods.push(
       {
         title: "Adiabatic time to maximum rate",
-        equation: `TMRad = ∫ dα/(k_d(T) f(α)) from α₀ to α*, T = T₀ + ΔTad,d (α − α₀), ${lawText(decomposition)}; α* where k_d f is largest`,
+        equation: `TMRad = ∫ dα/(k_{d}(T) f(α)) from α_{0} to α*, T = T_{0} + ΔT_{ad,d} (α − α_{0}), ${lawText(decomposition)}; α* where k_{d} f is largest`,
         numbers: `from the process temperature ${temperatureText(process)}: ${time(tmrad.atProcess_s)}; from MTSR${mtsr === null ? "" : ` ${temperatureText(mtsr, "up")}`}: ${time(tmrad.atMtsr_s)}`,
         reference:
           "Quadrature of the heat balance; Townsend & Tou 1980, Thermochim. Acta 37:1; Keller et al. 1997, J. Loss Prev. Process Ind. 10:31",
       },
       {
         title: "The same in closed form, zero order",
-        equation: "TMRad₀ = c R T₀²/(q′ Ea), q′ = k_d(T₀) f(α₀) Q",
+        equation: "TMR_{ad,0} = c R T_{0}²/(q′ E_{a}), q′ = k_{d}(T_{0}) f(α_{0}) Q",
         numbers: `from the process temperature: ${time(tmrad.zeroOrderAtProcess_s)}${cautionText(tmrad.zeroOrderCautious)}`,
         reference:
-          "Semenov 1928, Z. Phys. 48:571; Townsend & Tou 1980. On the careful side only for order laws with Ea ΔTad,d/(R T₀²) ≥ n + 3",
+          "Semenov 1928, Z. Phys. 48:571; Townsend & Tou 1980. On the careful side only for order laws with E_{a} ΔT_{ad,d}/(R T_{0}²) ≥ n + 3",
       },
     );
   }
   if (td24 !== null) {
     methods.push({
       title: "T_D24",
-      equation: "TMRad(T_D24) = 24 h, from fresh material (α₀ = 0)",
-      numbers: `T_D24 = ${temperatureText(td24, "down")}`,
+      equation: "TMRad(T_{D24}) = 24 h, from fresh material (α_{0} = 0)",
+      numbers: `T_{D24} = ${temperatureText(td24, "down")}`,
       reference: "Stoessel 2008, Thermal Safety of Chemical Processes",
     });
   }
@@ -41,8 +42,8 @@ export function runawayMethods(model: CaseModel, findings: Findings): Method[] {
     methods.push({
       title: "Criticality class",
       equation:
-        "none: T ≥ min(MTT, T_D24); 1: MTSR < MTT < T_D24; 2: MTSR < T_D24 ≤ MTT; 3: MTT ≤ MTSR < T_D24; 4: MTT < T_D24 ≤ MTSR; 5: T_D24 ≤ MTT and T_D24 ≤ MTSR",
-      numbers: `T = ${temperatureText(process)}, MTSR = ${temperatureText(mtsr, "up")}, MTT = ${temperatureText(mtt, "down")}, T_D24 = ${temperatureText(td24, "down")}: ${found === "none" ? "no class" : `class ${found}`}`,
+        "none: T ≥ min(MTT, T_{D24}); 1: MTSR < MTT < T_{D24}; 2: MTSR < T_{D24} ≤ MTT; 3: MTT ≤ MTSR < T_{D24}; 4: MTT < T_{D24} ≤ MTSR; 5: T_{D24} ≤ MTT and T_{D24} ≤ MTSR",
+      numbers: `T = ${temperatureText(process)}, MTSR = ${temperatureText(mtsr, "up")}, MTT = ${temperatureText(mtt, "down")}, T_{D24} = ${temperatureText(td24, "down")}: ${found === "none" ? "no class" : `class ${found}`}`,
       reference: "Stoessel 1993, Chem. Eng. Prog. 89(10):68; Stoessel 2008; ties go to the worse side",
     });
   }
@@ -50,10 +51,10 @@ export function runawayMethods(model: CaseModel, findings: Findings): Method[] {
 }
 
 function lawText({ rateLaw }: DecompositionModel): string {
-  const order = numberText(rateLaw.order.value);
+  const order = shortNumber(rateLaw.order.value);
   return rateLaw.model === "order"
-    ? `f = (1 − α)^n, n = ${order}`
-    : `f = (1 − α)^n (w + α^m), n = ${order}, m = ${numberText(rateLaw.productOrder.value)}, w = ${numberText(rateLaw.initiation.value)}`;
+    ? `f = (1 − α)^{n}, n = ${order}`
+    : `f = (1 − α)^{n} (w + α^{m}), n = ${order}, m = ${shortNumber(rateLaw.productOrder.value)}, w = ${shortNumber(rateLaw.initiation.value)}`;
 }
 
 function cautionText(cautious: boolean | null): string {

@@ -299,6 +299,7 @@ export const inventedFindings: Findings = {
     criteria: [
       {
         key: "completion",
+        label: "done in time",
         binding: true,
         assessed: true,
         allowed: [[295.728, 353.15]],
@@ -308,6 +309,7 @@ export const inventedFindings: Findings = {
       },
       {
         key: "cooling",
+        label: "cooling suffices",
         binding: true,
         assessed: true,
         allowed: [[303.51487, 353.15]],
@@ -317,6 +319,7 @@ export const inventedFindings: Findings = {
       },
       {
         key: "stability",
+        label: "steadies itself",
         binding: false,
         assessed: true,
         allowed: [],
@@ -326,6 +329,7 @@ export const inventedFindings: Findings = {
       },
       {
         key: "mtsr-mtt",
+        label: "MTSR below MTT",
         binding: true,
         assessed: true,
         allowed: [[273.15, 348.03124]],
@@ -335,6 +339,7 @@ export const inventedFindings: Findings = {
       },
       {
         key: "mtsr-tmr",
+        label: "TMRad from MTSR",
         binding: true,
         assessed: true,
         allowed: [[273.15, 353.15]],
@@ -344,6 +349,7 @@ export const inventedFindings: Findings = {
       },
       {
         key: "hold",
+        label: "TMRad from Tp",
         binding: true,
         assessed: false,
         allowed: [],

@@ -40,7 +40,7 @@ describe("the sheet's first page", () => {
       "MTT 78.0 °C",
       "T_D24 100.8 °C",
       "Criticality class 1",
-      "from 30.4 °C (cooling capacity) to 74.8 °C (MTSR below MTT)",
+      "from 30.4 °C (cooling suffices) to 74.8 °C (MTSR below MTT)",
       "Least time to act: 79.1 min",
       "FEED_RUNS_ON",
     ]) {
