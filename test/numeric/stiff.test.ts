@@ -1,3 +1,4 @@
+import odex from "odex";
 import { describe, expect, it } from "vitest";
 import type { StiffSystem } from "../../server/numeric/rosenbrockStep.js";
 import { createIntegrator } from "../../server/numeric/stiff.js";
@@ -83,6 +84,52 @@ describe("the integrator", () => {
     expect(y[0]).toBeCloseTo(353.15 + (90e3 * 4000 + 2000 * 450e3) / 4e6, 6);
     expect(y[2] - y[1]).toBeCloseTo(200, 8);
     expect(y[3]).toBeCloseTo(1, 8);
+  });
+
+  it("goes through self-heating of more than 1e5 K/s", () => {
+    const system = runaway(200e3);
+    const slope = new Float64Array(4);
+    const state = new Float64Array(4);
+    let largest = 0;
+    const result = createIntegrator(4).run(system, 0, runawayStart, 864_000, {
+      relativeTolerance: 1e-6,
+      absoluteTolerance: Float64Array.of(1e-6, 1e-6, 1e-6, 1e-9),
+      onStep: (step) => {
+        step.evaluate(step.end, state);
+        system.derivative(step.end, state, slope);
+        largest = Math.max(largest, slope[0]);
+        return false;
+      },
+    });
+    expect(result.status).toBe("done");
+    expect(largest).toBeGreaterThan(1e5);
+    expect(result.steps + result.rejected).toBeLessThan(400);
+    expect(result.y[0]).toBeCloseTo(353.15 + (90e3 * 4000 + 2000 * 450e3) / 4e6, 6);
+  });
+
+  it.each([500, 20_000])("agrees with odex, an extrapolation code, %d s into a runaway", (end) => {
+    const system = runaway();
+    const options = { relativeTolerance: 1e-9, absoluteTolerance: Float64Array.of(1e-9, 1e-9, 1e-9, 1e-12) };
+    const ours = createIntegrator(4).run(system, 0, runawayStart, end, options);
+    const other = new odex.Solver(4);
+    other.absoluteTolerance = 1e-12;
+    other.relativeTolerance = 1e-12;
+    const slope = new Float64Array(4);
+    const theirs = other.solve(
+      (t, y) => {
+        system.derivative(t, Float64Array.from(y), slope);
+        return Array.from(slope);
+      },
+      0,
+      Array.from(runawayStart),
+      end,
+    );
+    // A is used up in between: amounts agree to 1e-7 mol there, the rest to 1e-7 of itself.
+    theirs.y.forEach((value, i) => {
+      expect(Math.abs(ours.y[i] - value)).toBeLessThan(1e-7 * (i < 3 ? Math.max(1, value) : value));
+    });
+    expect(ours.y[0]).toBeGreaterThan(380);
+    expect(ours.y[3]).toBeGreaterThan(1e-8);
   });
 
   it("gives the same answer whether a run is whole or continued, and whether its workspace is new", () => {

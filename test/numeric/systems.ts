@@ -82,15 +82,17 @@ const R = 8.31446261815324;
 /**
  * Invented: a batch of 2000 kg that loses its cooling, second-order reaction and autocatalytic
  * decomposition, adiabatic. States: temperature, A, B, decomposed fraction.
+ *
+ * @param decompositionEnergy activation energy, J/mol: the larger, the more violent the end
  */
-export function runaway(): StiffSystem {
+export function runaway(decompositionEnergy = 130e3): StiffSystem {
   const volume = 2;
   const heatCapacity = 4e6;
   const reactionHeat = 90e3;
   const decompositionHeat = 2000 * 450e3;
   const initiation = 1e-3;
   const rate = (T: number) => 2e-7 * Math.exp((-70e3 / R) * (1 / T - 1 / 353.15));
-  const decay = (T: number) => 2e-6 * Math.exp((-130e3 / R) * (1 / T - 1 / 393.15));
+  const decay = (T: number) => 2e-6 * Math.exp((-decompositionEnergy / R) * (1 / T - 1 / 393.15));
   return {
     size: 4,
     derivative(_t, [T, a, b, alpha], out) {
@@ -107,7 +109,7 @@ export function runaway(): StiffSystem {
       const r = byB * b;
       const byT = (r * 70e3) / (R * T * T);
       const d = decay(T) * (1 - alpha) * (initiation + alpha);
-      const decayByT = (d * 130e3) / (R * T * T);
+      const decayByT = (d * decompositionEnergy) / (R * T * T);
       const byAlpha = decay(T) * (1 - initiation - 2 * alpha);
       out[0] = (byT * reactionHeat + decayByT * decompositionHeat) / heatCapacity;
       out[1] = (byA * reactionHeat) / heatCapacity;
