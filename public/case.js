@@ -1,0 +1,117 @@
+// Improves the page of a case: findings follow the typing, and the form changes its shape
+// without a new page. Everything here also works through the form's own buttons.
+
+const form = document.getElementById("inputs");
+const state = document.getElementById("state");
+const pause_ms = 350;
+
+let timer = 0;
+let running = new AbortController();
+
+/** The form as it would be sent, for one of its actions. */
+function body(action) {
+  const fields = new URLSearchParams(new FormData(form));
+  if (action !== undefined) fields.set("do", action);
+  return fields;
+}
+
+/** Sends the form; an older request that is still under way is given up. */
+async function send(address, fields) {
+  running.abort();
+  running = new AbortController();
+  const response = await fetch(address, { method: "POST", body: fields, signal: running.signal });
+  return new DOMParser().parseFromString(await response.text(), "text/html");
+}
+
+/** Replaces the part of that id by the one of another document. */
+function take(source, id) {
+  const fresh = source.getElementById(id);
+  const old = document.getElementById(id);
+  if (fresh === null || old === null) return;
+  old.replaceChildren(...fresh.childNodes);
+}
+
+/** Old findings stay in sight, but marked, until the fields are all understood again. */
+function markStale(stale) {
+  document.getElementById("findings").classList.toggle("stale", stale);
+}
+
+/** Puts each fault beside its field, where the field was touched, and takes away those that are gone. */
+function showFaults() {
+  const faults = new Map(
+    [...document.querySelectorAll("#faults [data-pointer]")].map((item) => [
+      item.dataset.pointer,
+      item.dataset.message,
+    ]),
+  );
+  for (const place of form.querySelectorAll(".fault")) {
+    const message = faults.get(place.dataset.pointer);
+    const control = document.getElementById(place.dataset.control);
+    const shown =
+      message !== undefined && (place.textContent !== "" || control?.dataset.touched !== undefined);
+    place.textContent = shown ? message : "";
+    if (shown) control?.setAttribute("aria-invalid", "true");
+    else control?.removeAttribute("aria-invalid");
+  }
+}
+
+async function refresh() {
+  markStale(true);
+  try {
+    const fresh = await send("/findings", body());
+    take(fresh, "outcome");
+    const found = fresh.querySelector("#findings > *") !== null;
+    if (found) take(fresh, "findings");
+    markStale(!found);
+    showFaults();
+  } catch (error) {
+    if (error.name !== "AbortError") markStale(true);
+  }
+}
+
+function refreshSoon() {
+  clearTimeout(timer);
+  timer = setTimeout(refresh, pause_ms);
+  state.textContent = state.dataset.changed;
+}
+
+/** Lets the server draw the form anew, after a choice or a button that adds or removes fields. */
+async function reshape(action) {
+  clearTimeout(timer);
+  const open = [...form.querySelectorAll("details[open]")].map((each) => each.id);
+  const focused = document.activeElement?.id;
+  const known = new Set([...form.querySelectorAll("[id]")].map((each) => each.id));
+  const fresh = await send(form.action, body(action));
+  take(fresh, "inputs");
+  for (const id of open) document.getElementById(id)?.setAttribute("open", "");
+  const added = [...form.querySelectorAll("input, select, textarea")].find(
+    (each) => each.id !== "" && !known.has(each.id),
+  );
+  (action.startsWith("add:") ? added : document.getElementById(focused))?.focus();
+  refreshSoon();
+}
+
+form.addEventListener("input", (event) => {
+  event.target.dataset.touched = "";
+  refreshSoon();
+});
+
+form.addEventListener("change", (event) => {
+  if (event.target.dataset.shapes === undefined) return;
+  reshape("update").catch(() => form.requestSubmit(form.querySelector("[value=update]")));
+});
+
+form.addEventListener("click", (event) => {
+  const button = event.target.closest("button[name=do]");
+  if (button === null || !/^(add|remove):/.test(button.value)) return;
+  event.preventDefault();
+  reshape(button.value).catch(() => form.requestSubmit(button));
+});
+
+// Going back restores what was typed after the page was drawn: the findings must follow it.
+addEventListener("pageshow", () => {
+  const typed = [...form.elements].some(
+    (each) => "defaultValue" in each && each.type !== "hidden" && each.value !== each.defaultValue,
+  );
+  if (typed) refreshSoon();
+});

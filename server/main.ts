@@ -1,0 +1,51 @@
+import { join } from "node:path";
+import { pino } from "pino";
+import { caseStore } from "./files/cases.js";
+import { readDemos } from "./files/demos.js";
+import { folderStorage } from "./files/storage.js";
+import { projectRoot, readSettings } from "./settings.js";
+import { createApp } from "./web/app.js";
+import { threadedScreener } from "./web/screener.js";
+
+const grace_ms = 4000;
+
+const read = readSettings(process.env);
+if (!read.ok) {
+  for (const fault of read.faults) process.stderr.write(`${fault}\n`);
+  process.exit(2);
+}
+const { settings } = read;
+const log = pino({ level: "info" }, pino.destination({ fd: 2, sync: true }));
+const storage = folderStorage(settings.dataFolder);
+await storage.sweep("cases");
+
+const screener = threadedScreener();
+const app = createApp(settings, {
+  cases: caseStore(storage),
+  demos: await readDemos(folderStorage(join(projectRoot, "scenarios"))),
+  screener,
+  log,
+});
+
+const server = app.listen(settings.port, settings.host, (error) => {
+  if (error !== undefined) {
+    process.stderr.write(`The server cannot listen on ${settings.host}:${settings.port}: ${error.message}\n`);
+    process.exit(1);
+  }
+  const address = server.address();
+  const port = typeof address === "object" && address !== null ? address.port : settings.port;
+  const host = settings.host.includes(":") ? `[${settings.host}]` : settings.host;
+  process.stdout.write(`Thermal Window listens on http://${host}:${port}\n`);
+});
+server.headersTimeout = 15_000;
+server.requestTimeout = 30_000;
+
+/** Finishes what is under way, gives up on the rest after a few seconds. */
+function stop(): void {
+  server.close(() => screener.close().then(() => process.exit(0)));
+  server.closeIdleConnections();
+  setTimeout(() => process.exit(0), grace_ms).unref();
+}
+
+process.on("SIGTERM", stop);
+process.on("SIGINT", stop);

@@ -1,0 +1,48 @@
+import { join } from "node:path";
+import ejs from "ejs";
+import express, { type Express } from "express";
+import { notice } from "../screening/notice.js";
+import { projectRoot, type Settings } from "../settings.js";
+import { program } from "../words/program.js";
+import { jsonInterface } from "./api.js";
+import { loadAssets } from "./assets.js";
+import { casePages } from "./casePages.js";
+import { compressedText } from "./compression.js";
+import { homePages } from "./homePages.js";
+import { controlId } from "./places.js";
+import { answerErrors, refuse } from "./problems.js";
+import { requestLog } from "./requestLog.js";
+import { headers, ownHostOnly, ownOriginWrites } from "./security.js";
+import type { Services } from "./services.js";
+
+/** The whole web application, ready to listen. */
+export function createApp(settings: Settings, services: Services): Express {
+  const app = express();
+  const assets = loadAssets();
+
+  app.disable("x-powered-by");
+  app.engine("ejs", ejs.renderFile);
+  app.set("view engine", "ejs");
+  app.set("views", join(projectRoot, "views"));
+  app.enable("view cache");
+  app.locals.asset = assets.address;
+  app.locals.notice = notice;
+  app.locals.program = program;
+  app.locals.controlId = controlId;
+
+  app.use(requestLog(services.log), headers(), ownHostOnly(settings.host), ownOriginWrites());
+  app.use(assets.serve);
+  app.use(compressedText());
+  app.use("/api", jsonInterface(services));
+  app.use(homePages(services), casePages(services));
+  app.use((request, response) => {
+    refuse(request, response, {
+      status: 404,
+      title: "Not Found",
+      detail: "There is no page at this address.",
+      faults: [],
+    });
+  });
+  app.use(answerErrors(services.log));
+  return app;
+}

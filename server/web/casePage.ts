@@ -1,0 +1,104 @@
+import type { Response } from "express";
+import { formOf } from "../case/form.js";
+import { type Fault, readCase } from "../case/read.js";
+import { type SavedCase, titleOf } from "../files/cases.js";
+import type { DemoCase } from "../files/demos.js";
+import { differences } from "./differences.js";
+import { type FindingsView, findingsView } from "./findingsView.js";
+import { type ListedFault, listFaults, type Places, placeAt, placesOf } from "./places.js";
+import type { Services } from "./services.js";
+import { timeText } from "./timeText.js";
+
+/** Where the case on a page comes from, and so where its form goes. */
+export type Origin =
+  | { readonly kind: "new" }
+  | { readonly kind: "opened" }
+  | { readonly kind: "demo"; readonly demo: DemoCase }
+  | { readonly kind: "saved"; readonly saved: SavedCase };
+
+export interface CaseToShow {
+  readonly document: unknown;
+  readonly origin: Origin;
+  /** false while fields are still being added: an empty one is no fault yet */
+  readonly faultsShown?: boolean;
+  /** what was typed differs from what `origin` holds */
+  readonly changed?: boolean;
+  /** the newer copy that stood in the way of a save */
+  readonly conflict?: SavedCase;
+}
+
+/** What a screening of a typed case came to: faults, or findings, or neither yet. */
+export interface Outcome {
+  /** true while someone types: faults are then reported more quietly */
+  readonly live: boolean;
+  readonly faults: readonly ListedFault[];
+  readonly findings: FindingsView | null;
+}
+
+/** Screens a document and answers with the page of its case. */
+export async function renderCase(services: Services, response: Response, shown: CaseToShow): Promise<void> {
+  const { document, origin, faultsShown = true } = shown;
+  const screened = await outcomeOf(services, document, "full");
+  const faults = faultsShown ? screened.faults : [];
+  const sections = formOf(document, faults);
+  const places = placesOf(sections);
+  const saved = origin.kind === "saved" ? origin.saved : null;
+  response.render("case", {
+    page: {
+      title: titleOf(document),
+      wide: true,
+      script: "/case.js",
+      state: stateOf(shown),
+      action: saved === null ? "/cases/new" : `/cases/${saved.id}`,
+      revision: shown.conflict?.revision ?? saved?.revision ?? null,
+      sections,
+      outcome: { live: false, faults: listFaults(faults, places), findings: screened.findings },
+      conflict: shown.conflict === undefined ? null : conflictOf(document, shown.conflict),
+    },
+    targetOf: targets(places),
+  });
+}
+
+/** Screens what someone is typing and answers with the part of the page that holds the result. */
+export async function renderOutcome(
+  services: Services,
+  response: Response,
+  document: unknown,
+): Promise<void> {
+  const { faults, findings } = await outcomeOf(services, document, "quick");
+  const places = placesOf(formOf(document, faults));
+  const outcome: Outcome = { live: true, faults: listFaults(faults, places), findings };
+  response.render("fragment", { outcome, targetOf: targets(places) });
+}
+
+async function outcomeOf(
+  { screener }: Services,
+  document: unknown,
+  depth: "quick" | "full",
+): Promise<{ faults: readonly Fault[]; findings: FindingsView | null }> {
+  const read = readCase(document);
+  if (!read.ok) return { faults: read.faults, findings: null };
+  const { model, digest } = read;
+  return { faults: [], findings: findingsView(await screener.screen({ model, digest, depth })) };
+}
+
+/** For links from a caution to the input it is about. */
+function targets(places: Places): (pointer: string) => string | null {
+  return (pointer) => placeAt(places, pointer)?.id ?? null;
+}
+
+function stateOf({ origin, changed, conflict }: CaseToShow): string {
+  if (conflict !== undefined) return "Not saved";
+  if (changed) return "Changed since it was last saved";
+  if (origin.kind === "demo") return "A demo case, invented; saving makes a copy of your own";
+  if (origin.kind === "saved") return `Saved ${timeText(origin.saved.savedAt)}`;
+  return "Not saved yet";
+}
+
+function conflictOf(document: unknown, current: SavedCase) {
+  return {
+    savedAt: timeText(current.savedAt),
+    address: `/cases/${current.id}`,
+    differences: differences(document, current.document),
+  };
+}

@@ -1,0 +1,76 @@
+import type { Figure } from "../charts/figure.js";
+import { figuresOf } from "../charts/figures.js";
+import { drawSvg } from "../charts/svg.js";
+import type { Caution, CautionLevel, Findings } from "../screening/findings.js";
+import {
+  actSentence,
+  classSentence,
+  levelMeanings,
+  levelNames,
+  stopSentence,
+  windowSentence,
+} from "../sheet/sentences.js";
+import { type KeyFigureGroup, keyFigures } from "./keyFigures.js";
+
+/** Findings as the page shows them: words, and drawings ready to stand in it. */
+export interface FindingsView {
+  readonly notice: string;
+  readonly digest: string;
+  readonly verdict: {
+    readonly level: CautionLevel;
+    readonly sentence: string;
+    readonly stops: readonly Caution[];
+  };
+  readonly sentences: readonly string[];
+  readonly keyFigures: readonly KeyFigureGroup[];
+  readonly figures: readonly (Pick<Figure, "id" | "title" | "sentence" | "table"> & {
+    readonly svg: string;
+  })[];
+  readonly cautions: readonly CautionGroup[];
+}
+
+export interface CautionGroup {
+  readonly level: CautionLevel;
+  readonly name: string;
+  readonly meaning: string;
+  readonly cautions: readonly Caution[];
+}
+
+const levels: readonly CautionLevel[] = ["stop", "warn", "note"];
+
+export function findingsView(findings: Findings): FindingsView {
+  const cautions = levels
+    .map((level) => ({
+      level,
+      name: levelNames[level],
+      meaning: levelMeanings[level],
+      cautions: findings.cautions.filter((caution) => caution.level === level),
+    }))
+    .filter((group) => group.cautions.length > 0);
+  return {
+    notice: findings.notice,
+    digest: findings.digest,
+    verdict: {
+      level: cautions[0]?.level ?? "note",
+      sentence: stopSentence(findings),
+      stops: findings.cautions.filter((caution) => caution.level === "stop"),
+    },
+    sentences: sentencesOf(findings),
+    keyFigures: keyFigures(findings),
+    figures: figuresOf(findings).map((figure) => ({
+      id: figure.id,
+      title: figure.title,
+      sentence: figure.sentence,
+      table: figure.table,
+      svg: drawSvg(figure),
+    })),
+    cautions,
+  };
+}
+
+/** The answers in words; that nothing is left of the window is already said where it is a stop. */
+function sentencesOf(findings: Findings): readonly string[] {
+  const empty = findings.cautions.some((caution) => caution.code === "WINDOW_EMPTY");
+  const window = empty ? [] : [windowSentence(findings)];
+  return [...window, classSentence(findings), actSentence(findings)];
+}

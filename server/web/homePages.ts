@@ -1,0 +1,50 @@
+import { type Response, Router, raw } from "express";
+import { readCaseText } from "../case/read.js";
+import { renderCase } from "./casePage.js";
+import { refuse, tooLarge } from "./problems.js";
+import type { Services } from "./services.js";
+import { timeText } from "./timeText.js";
+import { readUpload } from "./upload.js";
+
+/** The first page: what this is, cases to start from, cases that were saved, a file to open. */
+export function homePages(services: Services): Router {
+  const router = Router();
+
+  async function renderHome(response: Response, opening: { pasted?: string; fault?: string } = {}) {
+    const entries = (await services.cases.list()).map((each) => ({ ...each, saved: timeText(each.savedAt) }));
+    response.render("home", {
+      page: {
+        title: "Cases",
+        demos: services.demos,
+        cases: entries.filter((each) => !each.archived),
+        archived: entries.filter((each) => each.archived),
+        pasted: opening.pasted ?? "",
+        fault: opening.fault ?? null,
+      },
+    });
+  }
+
+  router.get("/", async (_request, response) => renderHome(response));
+
+  // The envelope of a form and its boundary come on top of the case itself.
+  router.post("/open", raw({ type: "multipart/form-data", limit: "600kb" }), async (request, response) => {
+    const upload = await readUpload(request);
+    const text = upload?.text ?? "";
+    const pasted = upload?.pasted ? text : "";
+    if (text.trim() === "") {
+      response.status(400);
+      return renderHome(response, { fault: "Choose a file, or paste the text of a case document." });
+    }
+    const read = readCaseText(text);
+    if (!read.ok && read.kind === "size") return refuse(request, response, tooLarge);
+    if (!read.ok && read.kind === "json") {
+      response.status(400);
+      const fault = read.faults.map((each) => each.message).join(" ");
+      return renderHome(response, { pasted, fault });
+    }
+    const document: unknown = read.ok ? read.document : JSON.parse(text);
+    return renderCase(services, response, { document, origin: { kind: "opened" } });
+  });
+
+  return router;
+}

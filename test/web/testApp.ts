@@ -1,0 +1,28 @@
+import { join } from "node:path";
+import { pino } from "pino";
+import { type CaseStore, caseStore } from "../../server/files/cases.js";
+import { readDemos } from "../../server/files/demos.js";
+import { folderStorage } from "../../server/files/storage.js";
+import { projectRoot } from "../../server/settings.js";
+import { createApp } from "../../server/web/app.js";
+import { directScreener } from "../../server/web/screener.js";
+import { memoryStorage } from "../files/memoryStorage.js";
+
+const settings = { port: 0, host: "127.0.0.1", dataFolder: "" };
+
+export const demos = await readDemos(folderStorage(join(projectRoot, "scenarios")));
+
+/** The document of a demo case, to change and send. */
+export function demoDocument(name = "ring-closure"): Record<string, unknown> {
+  const demo = demos.find((each) => each.name === name);
+  if (demo === undefined) throw new Error(`There is no demo case ${name}.`);
+  return structuredClone(demo.document) as Record<string, unknown>;
+}
+
+/** The application over cases in memory, screening in this thread. */
+export function testApp(cases: CaseStore = caseStore(memoryStorage())) {
+  const logged: string[] = [];
+  const log = pino({ level: "info" }, { write: (line: string) => logged.push(line) });
+  const app = createApp(settings, { cases, demos, screener: directScreener, log });
+  return { app, cases, logged };
+}
