@@ -23,9 +23,13 @@ export function inputNotes(document: unknown): InputNote[] {
 }
 
 /** `Mass` of the feed as "mass of the feed"; entries of lists with their number. */
-function labelOf(label: string, path: readonly string[], groups: readonly Place[]): string {
-  const of = groups.findLast((place) => place.kind === "group" && place.about.of !== undefined);
-  const suffix = of?.kind === "group" ? ` ${of.about.of}` : "";
+export function labelOf(label: string, path: readonly string[], groups: readonly Place[]): string {
+  const of = groups.flatMap((place) =>
+    (place.kind === "group" || place.kind === "variants") && place.about.of !== undefined
+      ? [place.about.of]
+      : [],
+  );
+  const suffix = of.length === 0 ? "" : ` ${of.at(-1)}`;
   const entries = groups.flatMap((place, depth) =>
     place.kind === "list" ? [`${lowered(place.about.entry)} ${Number(path[depth]) + 1}`] : [],
   );

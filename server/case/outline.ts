@@ -14,6 +14,7 @@ export type Place = { readonly required: boolean; readonly fallback: unknown } &
   /** groups of which a word inside tells which one it is */
   | {
       readonly kind: "variants";
+      readonly about: Group;
       readonly teller: string;
       readonly options: ReadonlyMap<string, Place & { readonly kind: "group" }>;
     }
@@ -48,7 +49,8 @@ function placeOf(schema: Schema, required: boolean, fallback: unknown): Place {
       const word = place.kind === "group" ? place.members.get(teller) : undefined;
       if (place.kind === "group" && word?.kind === "word") options.set(word.word, place);
     }
-    return { ...whether, kind: "variants", teller, options };
+    const about = groups.get(schema) ?? { title: "" };
+    return { ...whether, kind: "variants", about, teller, options };
   }
   if (schema instanceof z.ZodArray) {
     const about = lists.get(schema) ?? { title: "", entry: "", layout: "groups", atLeast: 0, atMost: 0 };

@@ -1,5 +1,5 @@
 import { z } from "zod";
-import { group, list } from "./groups.js";
+import { group, list, variants } from "./groups.js";
 import { choice, estimatedNumber, plain, quantity, rate, rateUnit, text } from "./leaves.js";
 
 const fittedRange = z
@@ -40,7 +40,11 @@ const eyring = group(
 );
 
 const lnPreExponential = group(
-  { title: "Or its logarithm", intro: "For a factor that was fitted as ln A" },
+  {
+    title: "Logarithm of the factor",
+    intro: "Instead of A itself, where ln A was fitted",
+    adding: "Give ln A instead",
+  },
   {
     value: plain("ln A", {}),
     standardError: plain("Standard error of ln A", { atLeast: 0 }).optional(),
@@ -113,7 +117,7 @@ const heatRate = group(
 );
 
 const td24 = group(
-  { title: "Temperature with 24 h to the maximum rate" },
+  { title: "Temperature from which the time to the maximum rate is 24 h" },
   {
     form: z.literal("td24"),
     temperature: quantity("temperature", "T_D24"),
@@ -122,10 +126,15 @@ const td24 = group(
 );
 
 /** Rate constant of the desired reaction. */
-export const rateConstant = z.discriminatedUnion("form", [eyring, arrhenius, reference, table]);
+export const rateConstant = variants({ title: "Rate constant", choosing: "Given as" }, "form", [
+  eyring,
+  arrhenius,
+  reference,
+  table,
+]);
 
 /** Rate constant of the decomposition: two more ways to state it. */
-export const decompositionRateConstant = z.discriminatedUnion("form", [
+export const decompositionRateConstant = variants({ title: "Rate constant", choosing: "Given as" }, "form", [
   eyring,
   arrhenius,
   reference,
@@ -137,7 +146,7 @@ export const decompositionRateConstant = z.discriminatedUnion("form", [
 const decompositionOrder = { atLeast: 0, atMost: 3 };
 
 /** Rate law of the decomposition. */
-export const rateLaw = z.discriminatedUnion("model", [
+export const rateLaw = variants({ title: "Rate law", choosing: "Model" }, "model", [
   group(
     { title: "Order: the rate falls as material is used up" },
     { model: z.literal("order"), order: estimatedNumber("Order", decompositionOrder).prefault(1) },

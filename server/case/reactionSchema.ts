@@ -28,7 +28,12 @@ const reactants = group(
 );
 
 const feed = group(
-  { title: "Feed", of: "of the feed", intro: "Dosed at a constant rate over its duration" },
+  {
+    title: "Feed",
+    of: "of the feed",
+    intro: "Dosed at a constant rate over its duration",
+    onlyWith: ["operation", "semibatch"],
+  },
   {
     reactant: choice("Fed reactant", { A: "A", B: "B" }),
     mass: quantity("mass", "Mass"),
@@ -44,6 +49,8 @@ const measuredAccumulation = group(
     title: "Measured accumulation",
     of: "of the measured accumulation",
     intro: "From a calorimetric run of this feed: instead of a rate constant, or beside it",
+    onlyWith: ["operation", "semibatch"],
+    adding: "Add a measured accumulation",
   },
   {
     temperature: quantity("temperature", "Temperature of the run"),
@@ -90,7 +97,12 @@ export const reaction = group(
 
 /** What the mixture does when it gets too hot. */
 export const decomposition = group(
-  { title: "Decomposition", of: "of the decomposition", intro: "Of the mixture as it is in the vessel" },
+  {
+    title: "Decomposition",
+    of: "of the decomposition",
+    intro: "Of the mixture as it is in the vessel. Without it the window is incomplete",
+    adding: "Add a decomposition",
+  },
   {
     heat: quantity("specificEnergy", "Heat of decomposition", { hint: "Per mass of mixture; positive" }),
     rateLaw,

@@ -10,7 +10,7 @@ export const caseFormat = "thermal-window/case-1";
 const factor = { atLeast: 0, atMost: 1 };
 
 const quench = group(
-  { title: "Quench", of: "of the quench" },
+  { title: "Quench", of: "of the quench", adding: "Add a quench" },
   {
     mass: quantity("mass", "Mass"),
     heatCapacity: quantity("heatCapacity", "Specific heat capacity"),
@@ -127,7 +127,9 @@ export const caseSchema = group(
       {
         title: "Failures",
         entry: "Failure",
+        intro: "What stops working, and when",
         layout: "groups",
+        starter: { at: "worst", changes: [{ after: "0 min" }] },
         atLeast: 0,
         atMost: 20,
       },
@@ -137,7 +139,7 @@ export const caseSchema = group(
       {
         title: "Slips",
         entry: "Slip",
-        intro: "The usual ones are run where none is given",
+        intro: "Ordinary slips of the recipe; the usual ones are run where none is given here",
         layout: "groups",
         atLeast: 0,
         atMost: 50,

@@ -1,5 +1,5 @@
 import { z } from "zod";
-import { group } from "./groups.js";
+import { group, variants } from "./groups.js";
 import { choice, estimatedNumber, limit, plain, quantity } from "./leaves.js";
 
 const level = {
@@ -12,30 +12,43 @@ const level = {
   jacketUpper: quantity("length", "Upper edge of the jacket"),
 };
 
-const area = z.discriminatedUnion("bottom", [
-  group({ title: "Flat bottom" }, { bottom: z.literal("flat"), ...level }),
-  group({ title: "Ellipsoidal bottom, 2:1" }, { bottom: z.literal("ellipsoidal"), ...level }),
-  group(
-    { title: "Torispherical bottom" },
-    {
-      bottom: z.literal("torispherical"),
-      ...level,
-      dishRadius: quantity("length", "Dish radius"),
-      knuckleRadius: quantity("length", "Knuckle radius"),
-    },
-  ),
-  group(
-    { title: "Torispherical bottom, DIN 28011 (Klöpper)" },
-    { bottom: z.literal("kloepper"), ...level, wallThickness: quantity("length", "Wall thickness") },
-  ),
-  group(
-    { title: "Torispherical bottom, DIN 28013 (Korbbogen)" },
-    { bottom: z.literal("korbbogen"), ...level, wallThickness: quantity("length", "Wall thickness") },
-  ),
-]);
+const area = variants(
+  {
+    title: "Working of the heat transfer area",
+    of: "of the vessel",
+    adding: "Work the area out",
+    choosing: "Bottom",
+  },
+  "bottom",
+  [
+    group({ title: "Flat bottom" }, { bottom: z.literal("flat"), ...level }),
+    group({ title: "Ellipsoidal bottom, 2:1" }, { bottom: z.literal("ellipsoidal"), ...level }),
+    group(
+      { title: "Torispherical bottom" },
+      {
+        bottom: z.literal("torispherical"),
+        ...level,
+        dishRadius: quantity("length", "Dish radius"),
+        knuckleRadius: quantity("length", "Knuckle radius"),
+      },
+    ),
+    group(
+      { title: "Torispherical bottom, DIN 28011 (Klöpper)" },
+      { bottom: z.literal("kloepper"), ...level, wallThickness: quantity("length", "Wall thickness") },
+    ),
+    group(
+      { title: "Torispherical bottom, DIN 28013 (Korbbogen)" },
+      { bottom: z.literal("korbbogen"), ...level, wallThickness: quantity("length", "Wall thickness") },
+    ),
+  ],
+);
 
 const coefficient = group(
-  { title: "Resistances in series", of: "of the wall" },
+  {
+    title: "Working of the heat transfer coefficient, resistances in series",
+    of: "of the wall",
+    adding: "Work the coefficient out",
+  },
   {
     insideFilm: quantity("heatTransferCoefficient", "Film coefficient inside"),
     outsideFilm: quantity("heatTransferCoefficient", "Film coefficient in the jacket"),
@@ -63,31 +76,40 @@ const coefficient = group(
   },
 );
 
-const boiling = z.discriminatedUnion("method", [
-  group(
-    { title: "Clausius-Clapeyron, from the normal boiling point" },
-    {
-      method: z.literal("clausius-clapeyron"),
-      normalBoilingPoint: quantity("temperature", "Normal boiling point"),
-      heatOfVaporisation: quantity("molarEnergy", "Heat of vaporisation"),
-      pressure: quantity("pressure", "Pressure", { hint: "Absolute" }),
-    },
-  ),
-  group(
-    { title: "Antoine equation, log₁₀ p = a − b/(T + c)" },
-    {
-      method: z.literal("antoine"),
-      a: plain("a", {}),
-      b: plain("b", { above: 0 }),
-      c: plain("c", {}),
-      pressureUnit: choice("Unit of p", { bar: "bar", kPa: "kPa", Pa: "Pa", mmHg: "mmHg", atm: "atm" }),
-      temperatureUnit: choice("Unit of T", { degC: "°C", K: "K" }),
-      lowest: quantity("temperature", "Valid from"),
-      highest: quantity("temperature", "Valid up to"),
-      pressure: quantity("pressure", "Pressure", { hint: "Absolute" }),
-    },
-  ),
-]);
+const boiling = variants(
+  {
+    title: "Working of the maximum technical temperature, as a boiling point",
+    of: "of the boiling point",
+    adding: "Work a boiling point out",
+    choosing: "Method",
+  },
+  "method",
+  [
+    group(
+      { title: "Clausius-Clapeyron, from the normal boiling point" },
+      {
+        method: z.literal("clausius-clapeyron"),
+        normalBoilingPoint: quantity("temperature", "Normal boiling point"),
+        heatOfVaporisation: quantity("molarEnergy", "Heat of vaporisation"),
+        pressure: quantity("pressure", "Pressure", { hint: "Absolute" }),
+      },
+    ),
+    group(
+      { title: "Antoine equation, log₁₀ p = a − b/(T + c)" },
+      {
+        method: z.literal("antoine"),
+        a: plain("a", {}),
+        b: plain("b", { above: 0 }),
+        c: plain("c", {}),
+        pressureUnit: choice("Unit of p", { bar: "bar", kPa: "kPa", Pa: "Pa", mmHg: "mmHg", atm: "atm" }),
+        temperatureUnit: choice("Unit of T", { degC: "°C", K: "K" }),
+        lowest: quantity("temperature", "Valid from"),
+        highest: quantity("temperature", "Valid up to"),
+        pressure: quantity("pressure", "Pressure", { hint: "Absolute" }),
+      },
+    ),
+  ],
+);
 
 /** The vessel and what cools it. */
 export const vessel = group(

@@ -1,0 +1,124 @@
+import { rateConstantDimension } from "./dimensions.js";
+import type { FaultBook } from "./faultBook.js";
+import { pointerOf } from "./faults.js";
+import type { FormChoice, FormControl, FormField } from "./formShape.js";
+import { bases, isGroup } from "./leafReading.js";
+import type { Leaf } from "./leaves.js";
+import { memberOf, type Place } from "./outline.js";
+
+/** What every part of the form is built with. */
+export interface FormContext {
+  readonly faults: FaultBook;
+  /** overall order of the reaction, where it can be read */
+  readonly order: number | null;
+}
+
+/** The field of a leaf. */
+export function fieldOf(
+  place: Place & { readonly kind: "leaf" },
+  value: unknown,
+  path: readonly string[],
+  context: FormContext,
+): FormField {
+  const { leaf } = place;
+  const detailed = isDetailed(leaf);
+  const holder = detailed ? holderOf(value, path) : { path, value: undefined };
+  const inner = holder.value === undefined ? value : memberOf(holder.value, "value");
+  const namePath = holder.value === undefined ? path : [...holder.path, "value"];
+  const text = textOf(inner);
+  const fault = context.faults.take(pointerOf(path), pointerOf(namePath));
+  const hint = [leaf.hint, place.fallback === undefined ? undefined : `${String(place.fallback)} where empty`]
+    .filter((part) => part !== undefined)
+    .join(". ");
+  return {
+    type: "field",
+    name: pointerOf(namePath),
+    pointer: pointerOf(path),
+    label: leaf.label,
+    kind: leaf.kind === "rate" ? "quantity" : leaf.kind === "rateUnit" ? "text" : leaf.kind,
+    value: text,
+    ...(leaf.kind === "choice" ? { choices: choicesOf(leaf.choices, text, place.required) } : {}),
+    ...optional("unitHint", unitHintOf(leaf, path, context)),
+    ...optional("hint", hint === "" ? undefined : hint),
+    required: place.required,
+    ...optional("fault", fault),
+    ...(detailed ? { detail: detailOf(leaf, value, path, holder, context) } : {}),
+  };
+}
+
+function isDetailed(leaf: Leaf): boolean {
+  return leaf.kind === "quantity" || leaf.kind === "rate" || (leaf.kind === "number" && leaf.estimated);
+}
+
+/** The object that holds a value beside its error: the field's own, or one inside it. */
+function holderOf(value: unknown, path: readonly string[]): { path: readonly string[]; value: unknown } {
+  if (!isGroup(value)) return { path, value: undefined };
+  return isGroup(value.value) ? { path: [...path, "value"], value: value.value } : { path, value };
+}
+
+function detailOf(
+  leaf: Leaf,
+  value: unknown,
+  path: readonly string[],
+  holder: { path: readonly string[]; value: unknown },
+  { faults }: FormContext,
+): NonNullable<FormField["detail"]> {
+  const free = leaf.kind === "quantity" && leaf.freeBasis === true;
+  const control = (key: string, label: string, at: readonly string[], from: unknown): FormControl => {
+    const name = pointerOf([...at, key]);
+    const text = textOf(memberOf(from, key));
+    const isChoice = key === "basis" && !free;
+    return {
+      name,
+      label: `${label}: ${leaf.label}`,
+      value: text,
+      kind: isChoice ? "choice" : "text",
+      ...(isChoice ? { choices: choicesOf(bases, text, false) } : {}),
+      ...optional("fault", faults.take(name)),
+    };
+  };
+  const standardError = control("standardError", "Standard error", holder.path, holder.value);
+  const basis = free
+    ? control("basis", "Basis", path, value)
+    : control("basis", "Basis", holder.path, holder.value);
+  const source = control("source", "Source", holder.path, holder.value);
+  const used = [standardError, basis, source].some((each) => each.value !== "" || each.fault !== undefined);
+  return { standardError, basis, source, used };
+}
+
+/** The words of a choice; one that was typed but is not among them stays, so that it can be seen. */
+export function choicesOf(
+  choices: Readonly<Record<string, string>>,
+  typed: string,
+  required: boolean,
+): FormChoice[] {
+  const known = Object.entries(choices).map(([value, label]) => ({ value, label }));
+  const blank = { value: "", label: required ? "Choose" : "Not said" };
+  const strange =
+    typed === "" || Object.hasOwn(choices, typed) ? [] : [{ value: typed, label: `${typed} (unknown)` }];
+  return [blank, ...known, ...strange];
+}
+
+function unitHintOf(leaf: Leaf, path: readonly string[], { order }: FormContext): string | undefined {
+  if (leaf.kind === "quantity") return `such as ${leaf.dimension.example}`;
+  if (leaf.kind !== "rate" && leaf.kind !== "rateUnit") return undefined;
+  const of = path[0] === "decomposition" ? 1 : order;
+  if (of === null) return undefined;
+  const dimension = rateConstantDimension(of);
+  return `such as ${leaf.kind === "rate" ? dimension.example : dimension.unit}`;
+}
+
+/** A value as the text of its control; groups and lists are shown elsewhere. */
+export function textOf(value: unknown): string {
+  return value === undefined || value === null || typeof value === "object" ? "" : String(value);
+}
+
+/** A key with its value, or nothing. */
+export function optional<Key extends string, Value>(
+  key: Key,
+  value: Value | undefined,
+): { readonly [K in Key]?: Value } {
+  const kept: { [K in Key]?: Value } = {};
+  if (value !== undefined) kept[key] = value;
+  return kept;
+}
