@@ -1,6 +1,7 @@
 import { gaussLegendre } from "../numeric/quadrature.js";
 import { findRoot } from "../numeric/roots.js";
 import type { Dosing } from "./dosing.js";
+import { linearPart } from "./reactionRate.js";
 
 /**
  * Time to a conversion X = extent/nlim at constant temperature, from the start of the feed (batch: of the
@@ -26,7 +27,7 @@ function timeBetween(dosing: Dosing, from: number, to: number): number {
   const { nodes, weights } = gaussLegendre(12);
   const rate = (left: number): number => balance.rate(balance.feedEnd, 1 - left);
   const end = 1 - to;
-  const smallest = Math.max(end, 1e-14);
+  const smallest = Math.max(end, 4 * linearPart);
   let time = 0;
   for (let left = 1 - from; left > smallest; ) {
     const next = Math.max(smallest, 0.4 * left);
@@ -38,9 +39,12 @@ function timeBetween(dosing: Dosing, from: number, to: number): number {
     }
     left = next;
   }
-  if (end > 0) return time;
-  // Full conversion: what is left at 1e-14 takes a finite time only below first order.
+  if (end >= smallest) return time;
+  // So near the end the rate is a power of what is left, c left^p.
   const lastRate = rate(smallest);
-  const exponent = Math.log(rate(4 * smallest) / lastRate) / Math.log(4);
-  return exponent < 1 - 1e-6 ? time + smallest / lastRate / (1 - exponent) : Number.POSITIVE_INFINITY;
+  const exponent = Math.log(rate(2 * smallest) / lastRate) / Math.LN2;
+  const scale = smallest / lastRate;
+  if (Math.abs(exponent - 1) < 1e-4) return time + scale * Math.log(smallest / end);
+  const rest = (1 - (end / smallest) ** (1 - exponent)) / (1 - exponent);
+  return time + scale * rest;
 }

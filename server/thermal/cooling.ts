@@ -81,22 +81,30 @@ export function decompositionHeat(step: Step, temperature: number, time: number)
  * @param dosing the isothermal step at that temperature
  * @returns W
  */
-export function coolingDuty(step: Step, temperature: number, dosing: Dosing): number {
+export function coolingDuty(
+  step: Step,
+  temperature: number,
+  dosing: Pick<Dosing, "fastest" | "endRate" | "balance" | "run">,
+): number {
   const { reaction, vessel } = step;
   const { feed } = reaction;
-  const { run, balance } = dosing;
+  const { fastest } = dosing;
   const perMol = -reaction.heat;
-  if (feed === null || run === null) {
-    return dosing.fastest.value * perMol + decompositionHeat(step, temperature, 0) + vessel.agitatorPower;
+  if (feed === null) {
+    return fastest.value * perMol + decompositionHeat(step, temperature, 0) + vessel.agitatorPower;
   }
   const feedTerm = ((feed.mass * feed.heatCapacity) / feed.duration) * (temperature - feed.temperature);
-  const released = (time: number, extent: number): number =>
-    balance.limiting * balance.rate(time, extent) * perMol + decompositionHeat(step, temperature, time);
-  const last = run.times.length - 1;
-  const end = released(run.times[last], run.extents[last]);
-  let largest = Math.max(end, released(0, 0), released(dosing.fastest.at, dosing.fastest.extent));
-  // A decomposition that adds next to nothing cannot move the largest heat.
-  if (decompositionHeat(step, temperature, balance.feedEnd) > 1e-7 * largest) {
+  const decomposingAtEnd = decompositionHeat(step, temperature, feed.duration);
+  const end = dosing.endRate * perMol + decomposingAtEnd;
+  const start = decompositionHeat(step, temperature, 0);
+  const peak = fastest.value * perMol + decompositionHeat(step, temperature, fastest.at);
+  let largest = Math.max(end, start, peak);
+  // A decomposition that adds next to nothing cannot move the largest heat: the run is then not looked at.
+  if (decomposingAtEnd > 1e-7 * largest) {
+    const { balance, run } = dosing;
+    if (run === null) return Number.NaN;
+    const released = (time: number, extent: number): number =>
+      balance.limiting * balance.rate(time, extent) * perMol + decompositionHeat(step, temperature, time);
     largest = Math.max(largest, largestAlong(run, released));
   }
   return Math.max(largest - feedTerm, end) + vessel.agitatorPower;

@@ -28,6 +28,8 @@ export interface Dosing {
   readonly fastest: Extreme & { readonly extent: number };
   /** extent at the end of the feed, part of the limiting amount; 0 for a batch */
   readonly endExtent: number;
+  /** rate of the reaction at the end of the feed, mol/s; for a batch that of the start */
+  readonly endRate: number;
   /** null for a batch */
   readonly run: FeedRun | null;
 }
@@ -51,12 +53,14 @@ export function doseAt(
 ): Dosing | null {
   const balance = isothermalBalance(step, lnRateConstant(rate, temperature));
   if (step.reaction.feed === null) {
+    const initialRate = balance.limiting * balance.rate(0, 0);
     return {
       balance,
       accumulation: { value: 1, at: 0 },
       rise: { value: adiabaticRise(step), at: 0 },
-      fastest: { value: balance.limiting * balance.rate(0, 0), at: 0, extent: 0 },
+      fastest: { value: initialRate, at: 0, extent: 0 },
       endExtent: 0,
+      endRate: initialRate,
       run: null,
     };
   }
@@ -84,12 +88,14 @@ export function doseAt(
     (time, extent) => balance.limiting * balance.rate(time, extent),
     (time, extent) => balance.rateSlope(time, extent),
   );
+  const endExtent = run.extents[run.extents.length - 1];
   return {
     balance,
     accumulation,
     rise,
     fastest: { ...fastest, extent: run.extentAt(fastest.at) },
-    endExtent: run.extents[run.extents.length - 1],
+    endExtent,
+    endRate: balance.limiting * balance.rate(balance.feedEnd, endExtent),
     run,
   };
 }
@@ -112,15 +118,20 @@ function largest(run: FeedRun, end: number, value: AlongRun, slope: AlongRun): E
   let slopeBefore = slope(times[0], extents[0]);
   for (let i = 1; i < times.length && times[i] <= end; i += 1) {
     const here = slope(times[i], extents[i]);
-    if (slopeBefore > 0 && here < 0) {
-      const at = findRoot((time) => slope(time, extentAt(time)), times[i - 1], times[i], {
-        tolerance: 1e-9 * times[i],
-      });
+    if (slopeBefore > 0 && here <= 0) {
+      const at = turningPoint((time) => slope(time, extentAt(time)), times[i - 1], times[i]);
       consider(at, extentAt(at));
-    } else if (slopeBefore > 0 && here === 0) consider(times[i], extents[i]);
+    }
     slopeBefore = here;
     last = i;
   }
   consider(times[last], extents[last]);
   return best;
+}
+
+/** Zero of a slope that falls from positive to negative; rounding may have taken one of the signs away. */
+function turningPoint(slope: (time: number) => number, low: number, high: number): number {
+  if (!(slope(low) > 0)) return low;
+  if (!(slope(high) < 0)) return high;
+  return findRoot(slope, low, high, { tolerance: 1e-9 * high });
 }

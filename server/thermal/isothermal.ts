@@ -3,7 +3,14 @@ import type { StiffSystem } from "../numeric/rosenbrockStep.js";
 import { createIntegrator, type Integrator } from "../numeric/stiff.js";
 import { createTrajectory } from "../numeric/trajectory.js";
 import { fedMass, limitingAmount, volumeOf } from "./balance.js";
-import { amountPower, amountPowerSlope, overallOrder, volumePower } from "./reactionRate.js";
+import {
+  amountPower,
+  amountPowerSlope,
+  linearPart,
+  overallOrder,
+  rateOverK,
+  volumePower,
+} from "./reactionRate.js";
 import type { Step } from "./step.js";
 
 /**
@@ -49,7 +56,7 @@ export function isothermalBalance(step: Step, lnK: number): IsothermalBalance {
   const feedRate = feed === null ? 0 : fedExtent / feedEnd;
   const perA = b?.perA ?? 0;
   const order = overallOrder(reaction);
-  const k = Math.exp(lnK);
+  const k = Math.exp(Math.min(lnK, lnLargestK(step, limiting)));
   const feedsA = feed?.reactant === "A";
   const feedsB = feed?.reactant === "B";
   const volumeRate = feed === null ? 0 : feed.mass / feed.density / feedEnd;
@@ -70,10 +77,10 @@ export function isothermalBalance(step: Step, lnK: number): IsothermalBalance {
     ofB = b === null ? 1 : amountPower(amountB, b.order, totalB);
     slopeA = amountPowerSlope(amountA, orderA, reaction.amountA);
     slopeB = b === null ? 0 : amountPowerSlope(amountB, b.order, totalB);
-    // Both used up: odd times odd must not come out positive.
-    if (amountA < 0 && amountB < 0) ofB = -ofB;
     volume = volumeOf(step, fedMass(step, time));
     factor = (k * volumePower(reaction, volume)) / limiting;
+    // Both overdrawn by rounding: two negative powers must not make a positive rate.
+    if (b !== null && amountA < 0 && amountB < 0) factor = -factor;
   };
   const partialExtent = (): number => -factor * limiting * (slopeA * ofB + perA * ofA * slopeB);
   const partialTime = (time: number): number => {
@@ -115,6 +122,21 @@ export function isothermalBalance(step: Step, lnK: number): IsothermalBalance {
   };
 }
 
+/** Rate of the whole recipe over the feed rate beyond which the feed alone limits. */
+const largestDamkoehler = 1e13;
+
+/**
+ * A k that leaves less than a millionth of the recipe unreacted is not told from a larger one: the balance
+ * would only lose digits. The slower reaction is the cautious one.
+ */
+function lnLargestK(step: Step, limiting: number): number {
+  const { reaction } = step;
+  if (reaction.feed === null) return Number.POSITIVE_INFINITY;
+  const volume = volumeOf(step, reaction.feed.mass);
+  const overK = rateOverK(reaction, reaction.amountA, reaction.b?.amount ?? 0, volume);
+  return Math.log((largestDamkoehler * limiting) / (overK * reaction.feed.duration));
+}
+
 let integrator: Integrator | undefined;
 
 /** The extent over the feed, with the ends and the middles of the integrator's steps. */
@@ -144,7 +166,11 @@ export function runFeed(balance: IsothermalBalance, relativeTolerance: number): 
     times.push(middle, step.end);
     extents.push(step.component(middle, 0), step.component(step.end, 0));
   };
-  const options = { relativeTolerance, absoluteTolerance: 1e-2 * relativeTolerance, trajectory, onStep };
+  const { orderA, b } = balance.step.reaction;
+  const broken = Math.min(orderA, b?.order ?? 1) < 1;
+  // Errors must stay well inside the linear part of a broken power, or the solution is thrown across it.
+  const tolerance = broken ? Math.min(relativeTolerance, 0.01 * linearPart) : relativeTolerance;
+  const options = { relativeTolerance: tolerance, absoluteTolerance: 1e-2 * tolerance, trajectory, onStep };
   const stoichiometric = stoichiometricTime(balance);
   let from = 0;
   let y = Float64Array.of(0);

@@ -2,9 +2,9 @@ import type { Reaction } from "./step.js";
 
 /**
  * Below this part of the recipe's amount a power with an exponent under one goes linearly to zero: its own
- * slope is infinite there, which no integrator can follow. The amount at stake is a billionth of the recipe.
+ * slope is infinite there, which no integrator can follow. The amount at stake is a millionth of the recipe.
  */
-const linearPart = 1e-9;
+export const linearPart = 1e-6;
 
 /**
  * n^order, continued oddly below zero so that an amount that rounding has pushed below zero is pulled back.
