@@ -1,0 +1,257 @@
+import { lnRateConstant, type ModifiedArrhenius } from "../kinetics/rateConstant.js";
+import { gasConstant } from "../numeric/constants.js";
+import type { StiffSystem } from "../numeric/rosenbrockStep.js";
+import { limitingAmount } from "../thermal/balance.js";
+import { amountPower, amountPowerSlope, overallOrder, volumePower } from "../thermal/reactionRate.js";
+import type { Step } from "../thermal/step.js";
+import { type Charge, feedMassRate } from "./charge.js";
+import type { Conditions } from "./conditions.js";
+import { continuedLaw, continuedLawSlope } from "./progressRate.js";
+
+/** Where the unknowns of a state stand. */
+export interface Places {
+  /** temperature of the contents less the reference, K */
+  readonly temperature: 0;
+  /** extent of the desired reaction, part of the limiting amount */
+  readonly extent: 1;
+  /** temperature of the jacket less the reference, K; null: it stays at the coolant's */
+  readonly jacket: 2 | null;
+  /** progress of the decomposition; null without one */
+  readonly progress: 2 | 3 | null;
+}
+
+/** Contents and jacket of a vessel that nothing controls, as a system of differential equations. */
+export interface Contents {
+  readonly step: Step;
+  /** K, from which temperatures are counted, so that small departures are told as well as large ones */
+  readonly reference: number;
+  readonly places: Places;
+  readonly system: StiffSystem;
+  /**
+   * Sets what acts from a time on, until the next call.
+   *
+   * @param time s after the failure
+   * @param charge what is in the vessel then
+   * @param mixing part of the contents that reacts
+   */
+  enter(time: number, charge: Charge, conditions: Conditions, mixing: number): void;
+  /** Heat capacity C', J/K, of the contents and the walls that warm with them. */
+  heatCapacity(time: number): number;
+  /** Heat that would have to be taken out to hold the temperature, W: all but the exchange with the jacket. */
+  heatToRemove(time: number, state: Float64Array): number;
+}
+
+/**
+ * Heat and mass balances after a failure,
+ *
+ * C' dT/dt = mixing r V (-dHr) + m Q kd f(alpha) + feed cpfeed (Tfeed - T) + Pagitator
+ *            - htf UA (T - Tj) + gain max(0, Tambient - T),
+ * holdup cpc dTj/dt = htf UA (T - Tj) - flowfactor w (Tj - Tc),
+ * d extent/dt = mixing r V/nlim,  d alpha/dt = kd f(alpha),
+ *
+ * with C' = C(t) + (phi - 1) m0 cp0 + quenches. Where the jacket stays at the coolant's temperature the exchange is
+ * flowfactor htf UA (T - Tc). Both amounts follow from the extent and from what has been fed. Losses to the
+ * surroundings are not credited, a gain is.
+ *
+ * @param step SI numbers
+ * @param rate of the desired reaction
+ * @param reference K
+ * @see Stoessel 2008, Thermal Safety of Chemical Processes (heat balance); Levenspiel, Chemical Reaction
+ * Engineering (mixed semibatch)
+ */
+export function createContents(step: Step, rate: ModifiedArrhenius, reference: number): Contents {
+  const { mixture, reaction, decomposition, vessel } = step;
+  const { b, feed, orderA, amountA: totalA } = reaction;
+  const { flowing, gain } = vessel;
+  const law = decomposition?.law;
+  const decay = decomposition?.rate;
+  const jacketAt = flowing === null ? null : 2;
+  const progressAt = decomposition === null ? null : flowing === null ? 2 : 3;
+  const size = 2 + (flowing === null ? 0 : 1) + (decomposition === null ? 0 : 1);
+
+  const limiting = limitingAmount(step);
+  const heatPerExtent = -reaction.heat * limiting;
+  const heatPerMass = decomposition?.heat ?? 0;
+  const totalB = b?.amount ?? 0;
+  const orderB = b?.order ?? 1;
+  const perA = b?.perA ?? 0;
+  const feedsA = feed?.reactant === "A";
+  const feedsB = feed?.reactant === "B";
+  const volumeOrder = 1 - overallOrder(reaction);
+  const jacketCapacity = flowing === null ? 1 : flowing.holdup * flowing.heatCapacity;
+  const coolantCapacityRate = flowing === null ? 0 : flowing.flow * flowing.heatCapacity;
+  const gainCoefficient = gain?.coefficient ?? 0;
+  const ambient = gain === null ? 0 : gain.ambient - reference;
+  const feedTemperature = feed === null ? 0 : feed.temperature - reference;
+
+  // What `enter` sets: constants of the leg, and values at its origin with their rates.
+  let origin = 0;
+  let mixing = 1;
+  let exchange = 0;
+  let coolantExchange = 0;
+  let coolant = 0;
+  let power = 0;
+  let capacity0 = 1;
+  let capacityRate = 0;
+  let volume0 = 1;
+  let volumeRate = 0;
+  let mass0 = 0;
+  let massRate = 0;
+  let chargedA = 0;
+  let rateA = 0;
+  let chargedB = 0;
+  let rateB = 0;
+
+  // What `prepare` computes at one place, shared by the slope and its derivatives.
+  let temperature = 0;
+  let capacity = 1;
+  let volume = 1;
+  let factor = 0;
+  let ofA = 0;
+  let ofB = 0;
+  let sign = 1;
+  let amountA = 0;
+  let amountB = 0;
+  let reacting = 0;
+  let decaying = 0;
+  let decayConstant = 0;
+  let decayHeat = 0;
+  let input = 0;
+
+  const prepare = (time: number, y: Float64Array): void => {
+    const elapsed = time - origin;
+    const above = y[0];
+    const extent = y[1];
+    temperature = reference + above;
+    capacity = capacity0 + capacityRate * elapsed;
+    reacting = 0;
+    if (mixing > 0) {
+      volume = volume0 + volumeRate * elapsed;
+      amountA = chargedA + rateA * elapsed - extent * limiting;
+      ofA = amountPower(amountA, orderA, totalA);
+      sign = 1;
+      if (b === null) ofB = 1;
+      else {
+        amountB = chargedB + rateB * elapsed - perA * extent * limiting;
+        ofB = amountPower(amountB, orderB, totalB);
+        // Both used up: odd times odd must not come out positive.
+        if (amountA < 0 && amountB < 0) sign = -1;
+      }
+      factor =
+        ((mixing * sign) / limiting) *
+        volumePower(reaction, volume) *
+        Math.exp(lnRateConstant(rate, temperature));
+      reacting = factor * ofA * ofB;
+    }
+    input = heatPerExtent * reacting + capacityRate * (feedTemperature - above) + power;
+    if (above < ambient) input += gainCoefficient * (ambient - above);
+    if (law !== undefined && decay !== undefined && progressAt !== null) {
+      decayConstant = Math.exp(lnRateConstant(decay, temperature));
+      decaying = decayConstant * continuedLaw(law, y[progressAt]);
+      decayHeat = (mass0 + massRate * elapsed) * heatPerMass;
+      input += decayHeat * decaying;
+    }
+  };
+
+  const removal = (y: Float64Array): number =>
+    exchange * (y[0] - (jacketAt === null ? coolant : y[jacketAt]));
+
+  const derivative = (time: number, y: Float64Array, out: Float64Array): void => {
+    prepare(time, y);
+    const removed = removal(y);
+    out[0] = (input - removed) / capacity;
+    out[1] = reacting;
+    if (jacketAt !== null)
+      out[jacketAt] = (removed - coolantExchange * (y[jacketAt] - coolant)) / jacketCapacity;
+    if (progressAt !== null) out[progressAt] = decaying;
+  };
+
+  /** d ln k/dT, 1/K. */
+  const steepness = (of: ModifiedArrhenius): number =>
+    of.activationEnergy / (gasConstant * temperature * temperature) + of.temperaturePower / temperature;
+
+  const jacobian = (time: number, y: Float64Array, out: Float64Array): void => {
+    prepare(time, y);
+    out.fill(0);
+    const gaining = y[0] < ambient ? gainCoefficient : 0;
+    let heatPerKelvin = -capacityRate - gaining - exchange;
+    if (mixing > 0) {
+      const perKelvin = reacting * steepness(rate);
+      const slopeA = amountPowerSlope(amountA, orderA, totalA);
+      const slopeB = b === null ? 0 : amountPowerSlope(amountB, orderB, totalB);
+      const perExtent = -factor * limiting * (slopeA * ofB + perA * ofA * slopeB);
+      heatPerKelvin += heatPerExtent * perKelvin;
+      out[1] = (heatPerExtent * perExtent) / capacity;
+      out[size] = perKelvin;
+      out[size + 1] = perExtent;
+    }
+    if (jacketAt !== null) {
+      out[jacketAt] = exchange / capacity;
+      out[jacketAt * size] = exchange / jacketCapacity;
+      out[jacketAt * size + jacketAt] = -(exchange + coolantExchange) / jacketCapacity;
+    }
+    if (law !== undefined && decay !== undefined && progressAt !== null) {
+      const perKelvin = decaying * steepness(decay);
+      const perProgress = decayConstant * continuedLawSlope(law, y[progressAt]);
+      heatPerKelvin += decayHeat * perKelvin;
+      out[progressAt] = (decayHeat * perProgress) / capacity;
+      out[progressAt * size] = perKelvin;
+      out[progressAt * size + progressAt] = perProgress;
+    }
+    out[0] = heatPerKelvin / capacity;
+  };
+
+  const timeDerivative = (time: number, y: Float64Array, out: Float64Array): void => {
+    out.fill(0);
+    if (massRate === 0) return;
+    prepare(time, y);
+    const slope = (input - removal(y)) / capacity;
+    let heat = massRate * heatPerMass * decaying;
+    if (mixing > 0) {
+      const fromA = rateA === 0 ? 0 : rateA * amountPowerSlope(amountA, orderA, totalA) * ofB;
+      const fromB = rateB === 0 ? 0 : rateB * ofA * amountPowerSlope(amountB, orderB, totalB);
+      out[1] = (reacting * volumeOrder * volumeRate) / volume + factor * (fromA + fromB);
+      heat += heatPerExtent * out[1];
+    }
+    out[0] = (heat - capacityRate * slope) / capacity;
+  };
+
+  return {
+    step,
+    reference,
+    places: { temperature: 0, extent: 1, jacket: jacketAt, progress: progressAt },
+    system: { size, derivative, jacobian, timeDerivative },
+    enter(time, charge, conditions, mixed) {
+      const feeding = conditions.feeding && feed !== null;
+      const partFed = feed === null ? 0 : charge.fed / feed.mass;
+      const partRate = feeding ? 1 / feed.duration : 0;
+      origin = time;
+      mixing = mixed;
+      coolant = conditions.coolantTemperature - reference;
+      exchange = conditions.heatTransfer * vessel.ua * (flowing === null ? conditions.coolantFlow : 1);
+      coolantExchange = conditions.coolantFlow * coolantCapacityRate;
+      power = conditions.agitating ? vessel.agitatorPower : 0;
+      massRate = feeding ? feedMassRate(step) : 0;
+      mass0 = mixture.mass + charge.fed;
+      capacityRate = feed === null ? 0 : massRate * feed.heatCapacity;
+      capacity0 =
+        mixture.thermalInertia * mixture.mass * mixture.heatCapacity +
+        (feed === null ? 0 : charge.fed * feed.heatCapacity) +
+        charge.quenchCapacity;
+      volumeRate = feed === null ? 0 : massRate / feed.density;
+      volume0 =
+        mixture.mass / mixture.density +
+        (feed === null ? 0 : charge.fed / feed.density) +
+        charge.quenchVolume;
+      chargedA = feedsA ? totalA * partFed : totalA;
+      rateA = feedsA ? totalA * partRate : 0;
+      chargedB = feedsB ? totalB * partFed : totalB;
+      rateB = feedsB ? totalB * partRate : 0;
+    },
+    heatCapacity: (time) => capacity0 + capacityRate * (time - origin),
+    heatToRemove(time, state) {
+      prepare(time, state);
+      return input;
+    },
+  };
+}
