@@ -18,6 +18,8 @@ export interface KnownRate {
 export interface KnownRates {
   readonly reaction: KnownRate | null;
   readonly decomposition: KnownRate | null;
+  /** K by which a measured accumulation exceeds the rise that the kinetics give; 0 without one */
+  readonly measuredExcess: number;
 }
 
 /**
@@ -30,6 +32,7 @@ export function knownRates(model: CaseModel): KnownRates {
   return {
     reaction: rateConstant === null ? null : knownRate(rateConstant),
     decomposition: model.decomposition === null ? null : knownRate(model.decomposition.rateConstant),
+    measuredExcess: 0,
   };
 }
 

@@ -75,6 +75,7 @@ export function realise(model: CaseModel, known: KnownRates, sample: Sample): St
         reaction.rateConstant === null
           ? null
           : rateOf("/reaction/rateConstant", reaction.rateConstant, known.reaction, sample),
+      measuredExcess: known.measuredExcess,
     },
     decomposition: null,
     vessel: {

@@ -12,6 +12,7 @@ import { kineticsCautions } from "./cautions/kinetics.js";
 import { verdictCautions } from "./cautions/verdicts.js";
 import type { Caution, Findings } from "./findings.js";
 import { type KnownRates, knownRates } from "./known.js";
+import { measuredCautions, measuredFindings, measuredOf, withMeasured } from "./measured.js";
 import type { CaseModel } from "./model.js";
 import { notice } from "./notice.js";
 import { rateFindings } from "./rateFindings.js";
@@ -41,17 +42,20 @@ export interface ScreenOptions {
  * @returns findings: every number finite or null
  */
 export function screen(model: CaseModel, options: ScreenOptions): Findings {
-  const known = knownRates(model);
+  const known = withMeasured(model, knownRates(model));
   const step = realise(model, known, estimates);
   const study = studyOf(step, "draws");
   const process = step.reaction.temperature;
   const { runaway } = study;
   const { rate } = step.reaction;
   const dosing = rate === null ? null : doseAt(step, rate, process);
-  const mtsr = dosing === null ? null : process + dosing.rise.value;
+  const measured = measuredOf(model, step);
+  const rise = dosing?.rise.value ?? measured?.rise.value ?? null;
+  const mtsr = rise === null ? null : process + rise;
   const t24 = runaway === null ? null : td24(runaway);
   const temperatures = temperatureFindings(step, mtsr, t24);
-  const accumulation = dosing === null ? null : accumulationFindings(step, dosing);
+  const kinetic = dosing === null ? null : accumulationFindings(step, dosing);
+  const accumulation = measuredFindings(step, kinetic, measured, model);
   const span = curveSpan(step, mtsr, t24);
   const timeToMaximumRate = tmradFindings(runaway, process, mtsr, span);
   const cooling = dosing === null ? null : coolingFindings(step, dosing);
@@ -70,6 +74,7 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
       historyRatio: historyRatio(study),
     }),
     ...usedRates(model, known, step, temperatures).flatMap((used) => kineticsCautions(used, process)),
+    ...measuredCautions(model, step, dosing),
     ...inputCautions(model),
     ...notBuilt(options.depth),
   ];

@@ -22,7 +22,7 @@ export interface Dosing {
   readonly balance: IsothermalBalance;
   /** largest accumulation, part of the limiting amount */
   readonly accumulation: Extreme;
-  /** largest rise that the accumulation could still bring, K: MTSR less the process temperature */
+  /** largest rise that the accumulation could still bring, K: MTSR less the process temperature; not below a measured one */
   readonly rise: Extreme;
   /** largest rate of the reaction, mol/s */
   readonly fastest: Extreme & { readonly extent: number };
@@ -92,12 +92,17 @@ export function doseAt(
   return {
     balance,
     accumulation,
-    rise,
+    rise: { value: rise.value + step.reaction.measuredExcess, at: rise.at },
     fastest: { ...fastest, extent: run.extentAt(fastest.at) },
     endExtent,
     endRate: balance.limiting * balance.rate(balance.feedEnd, endExtent),
     run,
   };
+}
+
+/** The few figures of an isothermal step that its limits need. */
+export function figuresOf({ rise, fastest, endRate }: Dosing): DosingFigures {
+  return { rise: rise.value, fastest, endRate };
 }
 
 /** A function of the time and of the extent that the run has then. */

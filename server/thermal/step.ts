@@ -33,6 +33,8 @@ export interface Reaction {
   readonly heat: number;
   /** null: unknown, only a measured accumulation is there */
   readonly rate: ModifiedArrhenius | null;
+  /** K by which a measured accumulation lets MTSR exceed what the kinetics say; 0 without one */
+  readonly measuredExcess: number;
 }
 
 export interface Feed {
