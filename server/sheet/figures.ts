@@ -2,22 +2,34 @@ import type { Figure } from "../charts/figure.js";
 import { drawPdf, type PdfFonts, pdfHeight } from "../charts/pdf.js";
 import { facesOf } from "./fonts.js";
 import { lineHeight, wrap } from "./lines.js";
-import { type Cursor, childElement, ensure, paragraph, readable, styles, subheading } from "./page.js";
+import { type Cursor, childElement, paragraph, readable, styles, subheading } from "./page.js";
 
-/** Draws a figure in one piece with its title and its sentence; the sentence is also what is read aloud. */
-export function drawFigure(cursor: Cursor, figure: Figure, options: { titled: boolean }): void {
-  const { pdf, left, width } = cursor;
-  const height = pdfHeight(figure, width);
+/** Draws a figure in one piece with its title and its sentence. */
+export function drawFigure(cursor: Cursor, figure: Figure): void {
+  const { pdf, width } = cursor;
   const sentence = wrap(pdf, figure.sentence, width, styles.small).length * lineHeight(styles.small);
-  if (options.titled) subheading(cursor, figure.title, height + sentence + 10);
-  else ensure(cursor, height + sentence + 10);
+  subheading(cursor, figure.title, pdfHeight(figure, width) + sentence + 10);
+  drawMarks(cursor, figure, width);
+  paragraph(cursor, figure.sentence, styles.small, { tag: "Caption", after: 6 });
+}
+
+/** Below this part of the full width a figure's words would be too small to read on paper. */
+const leastScale = 0.84;
+
+/** Draws a figure without words of its own, smaller where there is not the room for its full width. */
+export function drawPicture(cursor: Cursor, figure: Figure, room: number): void {
+  const scale = Math.min(1, room / pdfHeight(figure, cursor.width));
+  drawMarks(cursor, figure, cursor.width * Math.max(scale, leastScale));
+}
+
+/** What the figure shows is read aloud in its place. */
+function drawMarks(cursor: Cursor, figure: Figure, width: number): void {
   const element = childElement(cursor, "Figure", { alt: `${figure.title}. ${figure.sentence}` });
   readable(cursor, element, "Figure", () => {
-    drawPdf(pdf, figure, { x: left, y: cursor.y, width }, chartFonts());
+    const x = cursor.left + (cursor.width - width) / 2;
+    cursor.y += drawPdf(cursor.pdf, figure, { x, y: cursor.y, width }, chartFonts()) + 2;
   });
   element.end();
-  cursor.y += height + 2;
-  paragraph(cursor, figure.sentence, styles.small, { tag: "Caption", after: 6 });
 }
 
 function chartFonts(): PdfFonts {

@@ -1,7 +1,7 @@
 import type { Figure } from "../charts/figure.js";
 import type { Caution, Findings, TmradFindings } from "../screening/findings.js";
 import { differenceText, durationText, temperatureText } from "../words/numbers.js";
-import { drawFigure } from "./figures.js";
+import { drawPicture } from "./figures.js";
 import { drawLine, lineHeight, shorten, type TextStyle, wrap } from "./lines.js";
 import { type Cursor, childElement, ink, ornament, paragraph, readable, styles } from "./page.js";
 import {
@@ -37,13 +37,20 @@ export function writeFront(
   writeTitle(cursor, block, findings);
   noticeBox(cursor, findings.notice);
   stopBox(cursor, findings);
-  if (picture !== null) drawFigure(cursor, picture, { titled: false });
+  if (picture !== null) drawPicture(cursor, picture, roomForPicture(cursor));
   for (const sentence of [windowSentence(findings), classSentence(findings), actSentence(findings)]) {
     paragraph(cursor, sentence, styles.strong, { after: 2 });
   }
   cursor.y += 3;
   facts(cursor, keyFacts(findings), 4);
   frontCautions(cursor, findings.cautions);
+}
+
+/** What the sentences, the facts and the first cautions need below the picture, pt. */
+const belowPicture = 245;
+
+function roomForPicture(cursor: Cursor): number {
+  return cursor.bottom - cursor.y - belowPicture;
 }
 
 function writeTitle(cursor: Cursor, block: TitleBlock, findings: Findings): void {

@@ -40,11 +40,11 @@ export async function renderSheet({ document, model, findings, paper }: SheetInp
   const cursor = startPages(pdf);
   writeFront(cursor, document, findings, picture);
   newPage(cursor);
-  writeInputs(cursor, model.inputs);
+  writeInputs(cursor, document, model.inputs);
   writeResults(cursor, findings);
   const others = figures.filter((figure) => figure !== picture);
   if (others.length > 0) heading(cursor, "Figures", 200);
-  for (const figure of others) drawFigure(cursor, figure, { titled: true });
+  for (const figure of others) drawFigure(cursor, figure);
   writeWorking(cursor, model, findings);
   writeCautions(cursor, findings.cautions, findings);
   writeSignatures(cursor, document.batch?.preparedBy ?? null, findings.digest);

@@ -158,12 +158,12 @@ function cooling(cursor: Cursor, findings: Findings): void {
     ],
     [
       "Temperature of no return",
-      shown(found.noReturn_K, (kelvin) => temperatureText(kelvin, "down")),
+      found.noReturn_K === null ? "none found" : temperatureText(found.noReturn_K, "down"),
       "at full cooling",
     ],
     [
       "Critical coolant temperature",
-      shown(found.criticalCoolant_K, (kelvin) => temperatureText(kelvin, "down")),
+      found.criticalCoolant_K === null ? "none found" : temperatureText(found.criticalCoolant_K, "down"),
       "",
     ],
   ]);

@@ -98,8 +98,13 @@ function rowsThatFit(cursor: Cursor, headHeight: number, rows: readonly Row[], f
   return fresh ? Math.max(count, 1) : count;
 }
 
+/** Text whose cell has nothing to its right may use the room that is left there. */
 function layRow(cursor: Cursor, widths: readonly number[], texts: readonly string[], style: TextStyle): Row {
-  const cells = widths.map((width, column) => wrap(cursor.pdf, texts[column] ?? "", width, style));
+  const last = texts.findLastIndex((text) => text !== "");
+  const room = widths.slice(last).reduce((sum, width) => sum + width + gap, -gap);
+  const cells = widths.map((width, column) =>
+    wrap(cursor.pdf, texts[column] ?? "", column === last ? room : width, style),
+  );
   return { cells, style, height: rowHeight(cells, style) };
 }
 

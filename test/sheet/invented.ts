@@ -1,11 +1,9 @@
+import { readCase } from "../../server/case/read.js";
 import type { Caution, FailureFindings, Findings, RateFindings } from "../../server/screening/findings.js";
-import type { CaseModel, InputNote } from "../../server/screening/model.js";
 
 // Every name and figure here is invented: it only has to have the shape of a real case.
 
-const exact = (value: number) => ({ value, standardError: null });
-
-/** The title block of an invented case document. */
+/** A whole case document. */
 export const inventedDocument = {
   format: "thermal-window/case-1",
   title: "Invented acylation of amine X-1 in a 2.5 m³ vessel",
@@ -15,150 +13,81 @@ export const inventedDocument = {
     vessel: "V-000",
     preparedBy: "A. N. Author",
   },
-};
-
-const notes: readonly InputNote[] = [
-  note("/mixture/mass", "mass of the contents before any feed", "1450 kg", null, "measured", "Batch sheet"),
-  note(
-    "/mixture/heatCapacity",
-    "heat capacity of the contents",
-    "1.95 kJ/(kg K)",
-    "0.05 kJ/(kg K)",
-    "measured",
-    "Notebook 14, p. 31",
-  ),
-  note("/mixture/density", "density of the contents", "0.94 kg/L", null, "assumed", null),
-  note(
-    "/reaction/heat",
-    "heat of reaction per mol of A",
-    "−118 kJ·mol⁻¹",
-    "4 kJ/mol",
-    "measured",
-    "Heat flow run 7",
-  ),
-  note(
-    "/reaction/rateConstant/activationEnthalpy",
-    "activation enthalpy",
-    "62 kJ/mol",
-    "1.6 kJ/mol",
-    "measured",
-    null,
-  ),
-  note(
-    "/decomposition/heat",
-    "heat of decomposition per mass of mixture",
-    "420 J/g",
-    "25 J/g",
-    "measured",
-    "DSC 0815",
-  ),
-  note(
-    "/vessel/heatTransferCoefficient",
-    "heat transfer coefficient",
-    "320 W/(m² K)",
-    null,
-    "estimated",
-    "Cooling curve with solvent",
-  ),
-  note(
-    "/limits/maximumTechnicalTemperature",
-    "maximum technical temperature (MTT)",
-    "78 °C",
-    null,
-    null,
-    "boiling point at 1 atm",
-  ),
-  note("/failures/0/changes/0/after", "failure 1, change 1: after", "0 min", null, null, null),
-];
-
-function note(
-  pointer: string,
-  label: string,
-  text: string,
-  standardErrorText: string | null,
-  basis: InputNote["basis"],
-  source: string | null,
-): InputNote {
-  return { pointer, label, text, standardErrorText, basis, source };
-}
-
-export const inventedModel: CaseModel = {
-  title: inventedDocument.title,
   mixture: {
-    mass: exact(1450),
-    density: exact(940),
-    heatCapacity: { value: 1950, standardError: 50 },
-    thermalInertia: exact(1),
+    mass: { value: "1450 kg", basis: "measured", source: "Batch sheet" },
+    density: { value: "0.94 kg/L", basis: "assumed" },
+    heatCapacity: {
+      value: "1.95 kJ/(kg K)",
+      standardError: "0.05 kJ/(kg K)",
+      basis: "measured",
+      source: "Notebook 14, p. 31",
+    },
   },
   reaction: {
     name: "Acylation",
     operation: "semibatch",
-    temperature: exact(308.15),
-    a: { name: "amine X-1", amount: exact(2900), order: exact(1) },
-    b: { name: "acylating agent", amount: exact(3050), order: exact(1), perA: exact(1) },
+    temperature: "35 °C",
+    reactants: {
+      A: { name: "amine X-1", amount: "2.9 kmol" },
+      B: { name: "acylating agent", amount: "3.05 kmol" },
+    },
     feed: {
       reactant: "B",
-      mass: exact(420),
-      density: exact(1050),
-      heatCapacity: exact(1800),
-      temperature: exact(293.15),
-      duration: exact(10800),
+      mass: "420 kg",
+      density: "1.05 kg/L",
+      heatCapacity: "1.8 kJ/(kg K)",
+      temperature: "20 °C",
+      duration: "3 h",
     },
-    heat: { value: -118000, standardError: 4000 },
+    heat: { value: "−118 kJ·mol⁻¹", standardError: "4 kJ/mol", source: "Heat flow run 7" },
     rateConstant: {
-      form: "eyring",
-      order: 2,
-      activationEnthalpy: { value: 62000, standardError: 1600 },
-      activationEntropy: { value: -95, standardError: 5.5 },
-      correlation: 0.998,
-      standardConcentration: 1000,
-      transmissionCoefficient: 1,
-      fittedRange: [278.15, 303.15],
-      points: 6,
-      viscosity: null,
+      form: "table",
+      fitAs: "eyring",
+      rows: [
+        { temperature: "5 °C", rateConstant: "2.1e-4 L/(mol s)" },
+        { temperature: "15 °C", rateConstant: "5.4e-4 L/(mol s)" },
+        { temperature: "25 °C", rateConstant: "1.18e-3 L/(mol s)", relativeError: 0.05 },
+        { temperature: "30 °C", rateConstant: "9e-3 L/(mol s)", leftOut: "stirrer stood still" },
+      ],
     },
-    measuredAccumulation: null,
   },
   decomposition: {
-    heat: { value: 420000, standardError: 25000 },
-    rateLaw: { model: "order", order: exact(1), productOrder: exact(1), initiation: exact(0) },
-    rateConstant: {
-      form: "arrhenius",
-      order: 1,
-      lnPreExponential: exact(26.71),
-      activationEnergy: exact(128000),
-      correlation: null,
-      fittedRange: null,
-      points: null,
-      viscosity: null,
-    },
+    heat: { value: "420 J/g", standardError: "25 J/g" },
+    rateLaw: { model: "order", order: 1 },
+    rateConstant: { form: "arrhenius", preExponential: "4.0e11 s^-1", activationEnergy: "128 kJ/mol" },
   },
   vessel: {
-    heatTransferCoefficient: exact(320),
-    heatTransferArea: exact(5.6),
-    agitatorPower: exact(2000),
-    heatGain: null,
-    coolant: {
-      temperature: exact(278.15),
-      flowing: { flow: exact(4.5), heatCapacity: exact(3600), holdup: exact(180) },
-    },
+    heatTransferCoefficient: { value: "320 W/(m² K)", basis: "estimated", source: "Cooling curve" },
+    heatTransferArea: "5.6 m²",
+    agitatorPower: "2 kW",
+    coolant: { temperature: "5 °C", flow: "4.5 kg/s", heatCapacity: "3.6 kJ/(kg K)", holdup: "180 kg" },
   },
   limits: {
-    maximumTechnicalTemperature: exact(351.15),
-    maximumTechnicalTemperatureBasis: "boiling point at 1 atm",
-    lowestTemperature: 273.15,
-    highestTemperature: 353.15,
-    availableTime: 28800,
-    targetConversion: 0.98,
-    coolingUse: 0.8,
-    minimumTimeToMaximumRate: 86400,
-    decompositionAllowed: 0.05,
-    controlBand: 2,
-    controlBandGiven: true,
+    maximumTechnicalTemperature: { value: "78 °C", basis: "boiling point at 1 atm" },
+    lowestTemperature: "0 °C",
+    highestTemperature: "80 °C",
+    availableTime: "8 h",
+    controlBand: "2 K",
   },
-  failures: [],
-  inputs: notes,
+  failures: [
+    {
+      name: "Coolant pump stops, feed runs on",
+      response: { detection: "2 min", decision: "5 min", action: "3 min" },
+      changes: [
+        { after: "0 min", coolantFlow: 0, feed: "continue" },
+        {
+          after: "30 min",
+          quench: { mass: "300 kg", heatCapacity: "2 kJ/(kg K)", density: "0.87 kg/L", temperature: "15 °C" },
+        },
+      ],
+    },
+  ],
 };
+
+const read = readCase(inventedDocument);
+if (!read.ok) throw new Error(JSON.stringify(read.faults));
+
+export const inventedModel = read.model;
 
 const rate: RateFindings = {
   atProcess: {

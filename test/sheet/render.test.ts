@@ -169,11 +169,12 @@ test("anything that can be typed can be printed", async () => {
     title: `<b>&amp; "quoted" \u202e ${"very ".repeat(300)}long 中文 \u0000 👩‍🔬 ${"x".repeat(2000)}`,
     batch: { record: "]]>&<", step: "", vessel: "ä".repeat(400), preparedBy: "العربية" },
   };
-  const model = {
-    ...inventedModel,
-    inputs: inventedModel.inputs.map((note) => ({ ...note, source: "y ".repeat(9000) })),
+  const { mixture } = inventedDocument;
+  const talkative = {
+    ...strange,
+    mixture: { ...mixture, mass: { value: "1450 kg", source: "y ".repeat(60_000) } },
   };
-  const texts = await pageTexts(await renderSheet({ ...input, document: strange, model }));
+  const texts = await pageTexts(await renderSheet({ ...input, document: talkative }));
   expect(texts.length).toBeGreaterThan(20);
   expect(texts[0]).toContain("[U+202E]");
   const { missing } = await missingGlyphs(await renderSheet({ ...input, document: strange }));
