@@ -2,7 +2,7 @@ import { lnRateConstant } from "../kinetics/rateConstant.js";
 import { lawValue } from "../kinetics/rateLaw.js";
 import { maximise } from "../numeric/roots.js";
 import { decompositionRise, fedMass } from "./balance.js";
-import type { Dosing } from "./dosing.js";
+import { type Dosing, type DosingFigures, figuresOf } from "./dosing.js";
 import { progressAfterHold } from "./history.js";
 import type { FeedRun } from "./isothermal.js";
 import type { Runaway } from "./runaway.js";
@@ -81,28 +81,43 @@ export function decompositionHeat(step: Step, temperature: number, time: number)
  * @param dosing the isothermal step at that temperature
  * @returns W
  */
-export function coolingDuty(
+export function coolingDuty(step: Step, temperature: number, dosing: Dosing): number {
+  return coolingDutyFrom(step, temperature, figuresOf(dosing), () => dosing);
+}
+
+/**
+ * `coolingDuty` from the few figures that it mostly needs.
+ *
+ * @param step SI numbers
+ * @param temperature K
+ * @param figures of the isothermal step at that temperature
+ * @param whole the step itself: asked for where the decomposition could move the moment of the largest heat
+ * @returns W; NaN where that step could not be integrated
+ */
+export function coolingDutyFrom(
   step: Step,
   temperature: number,
-  dosing: Pick<Dosing, "fastest" | "endRate" | "balance" | "run">,
+  figures: DosingFigures,
+  whole: () => Dosing | null,
 ): number {
   const { reaction, vessel } = step;
   const { feed } = reaction;
-  const { fastest } = dosing;
+  const { fastest, endRate } = figures;
   const perMol = -reaction.heat;
   if (feed === null) {
     return fastest.value * perMol + decompositionHeat(step, temperature, 0) + vessel.agitatorPower;
   }
   const feedTerm = ((feed.mass * feed.heatCapacity) / feed.duration) * (temperature - feed.temperature);
   const decomposingAtEnd = decompositionHeat(step, temperature, feed.duration);
-  const end = dosing.endRate * perMol + decomposingAtEnd;
+  const end = endRate * perMol + decomposingAtEnd;
   const start = decompositionHeat(step, temperature, 0);
   const peak = fastest.value * perMol + decompositionHeat(step, temperature, fastest.at);
   let largest = Math.max(end, start, peak);
   // A decomposition that adds next to nothing cannot move the largest heat: the run is then not looked at.
   if (decomposingAtEnd > 1e-7 * largest) {
+    const dosing = whole();
+    if (dosing === null || dosing.run === null) return Number.NaN;
     const { balance, run } = dosing;
-    if (run === null) return Number.NaN;
     const released = (time: number, extent: number): number =>
       balance.limiting * balance.rate(time, extent) * perMol + decompositionHeat(step, temperature, time);
     largest = Math.max(largest, largestAlong(run, released));

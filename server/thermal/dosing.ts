@@ -17,6 +17,16 @@ export interface Extreme {
   readonly at: number;
 }
 
+/** What the limits on a step need to know of it at one constant temperature. */
+export interface DosingFigures {
+  /** largest rise that the accumulation could still bring, K: MTSR less the process temperature */
+  readonly rise: number;
+  /** largest rate of the reaction, mol/s, and its time, s from the start of the feed */
+  readonly fastest: Extreme;
+  /** rate of the reaction at the end of the feed, mol/s; for a batch that of the start */
+  readonly endRate: number;
+}
+
 /** What the desired reaction does at one constant temperature. */
 export interface Dosing {
   readonly balance: IsothermalBalance;

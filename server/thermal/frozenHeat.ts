@@ -6,7 +6,7 @@ import {
 import { gasConstant } from "../numeric/constants.js";
 import { findRoot } from "../numeric/roots.js";
 import { coolingCapacity, decompositionHeat, effectiveUa } from "./cooling.js";
-import type { Dosing } from "./dosing.js";
+import type { DosingFigures } from "./dosing.js";
 import type { Step } from "./step.js";
 
 /**
@@ -32,7 +32,7 @@ export function freezeHeat(
   step: Step,
   rate: ModifiedArrhenius,
   temperature: number,
-  dosing: Dosing,
+  dosing: Pick<DosingFigures, "fastest">,
 ): FrozenHeat {
   const reactionHeat = dosing.fastest.value * -step.reaction.heat;
   const lnReaction = Math.log(reactionHeat) - lnRateConstant(rate, temperature);

@@ -7,6 +7,8 @@ import type { Study } from "./study.js";
 export interface Lane {
   readonly criterion: Criterion;
   readonly assessed: boolean;
+  /** temperatures at which it holds, on [lowest - band, highest + band]; empty where not assessed */
+  readonly held: readonly Span[];
   /** set points about which the criterion holds over the whole control band; empty where not assessed */
   readonly allowed: readonly Span[];
   /** at the planned temperature; null where not assessed */
@@ -62,26 +64,47 @@ export function temperatureWindow(study: Study, criteria = everyCriterion): Temp
 }
 
 function laneOf(study: Study, criterion: Criterion): Lane {
-  if (!criterion.assessable(study)) return { criterion, assessed: false, allowed: [], metAtProcess: null };
+  if (!criterion.assessable(study)) {
+    return { criterion, assessed: false, held: [], allowed: [], metAtProcess: null };
+  }
   const { lowestTemperature: low, highestTemperature: high, controlBand } = study.step.limits;
   const process = study.step.reaction.temperature;
   const margin = (temperature: number): number => criterion.margin(study, temperature);
+  const held = spansWhere(margin, low - controlBand, high + controlBand);
   return {
     criterion,
     assessed: true,
-    allowed: narrowBy(spansWhere(margin, low - controlBand, high + controlBand), controlBand, low, high),
+    held,
+    allowed: narrowBy(held, controlBand, low, high),
     metAtProcess: holdsOverBand(margin, process, controlBand),
   };
 }
 
-/** The planned temperature may lie outside the study: it is then looked at by itself. */
-function holdsOverBand(margin: (temperature: number) => number, process: number, band: number): boolean {
+/**
+ * Whether a criterion holds over a whole control band. The band may lie outside the study: it is looked at by
+ * itself.
+ *
+ * @param margin of temperature
+ * @param process middle of the band, K
+ * @param band half-width, K
+ */
+export function holdsOverBand(
+  margin: (temperature: number) => number,
+  process: number,
+  band: number,
+): boolean {
   if (band === 0) return margin(process) >= 0;
   const spans = spansWhere(margin, process - band, process + band);
   return spans.length === 1 && spans[0][0] === process - band && spans[0][1] === process + band;
 }
 
-function choosePart(parts: readonly Span[], process: number): Span | null {
+/**
+ * The part of a window that a plan would use: the one that holds the planned temperature, else the widest.
+ *
+ * @param parts disjoint spans
+ * @param process planned temperature, K
+ */
+export function choosePart(parts: readonly Span[], process: number): Span | null {
   const holding = parts.find((part) => holds([part], process));
   if (holding !== undefined) return holding;
   return parts.reduce<Span | null>(

@@ -1,12 +1,5 @@
-import { timeToConversion } from "../../thermal/completion.js";
 import { durationText, percentText } from "../../words/numbers.js";
 import type { Criterion } from "../criterion.js";
-import type { Study } from "../study.js";
-
-function time(study: Study, temperature: number): number {
-  const dosing = study.dosingAt(temperature);
-  return dosing === null ? Number.NaN : timeToConversion(dosing, study.step.limits.targetConversion);
-}
 
 /** The target conversion is reached at constant temperature within the available time. */
 export const completion: Criterion = {
@@ -14,10 +7,11 @@ export const completion: Criterion = {
   label: "done in time",
   binding: true,
   assessable: (study) => study.step.reaction.rate !== null,
-  margin: (study, temperature) => Math.log(study.step.limits.availableTime / time(study, temperature)),
+  margin: (study, temperature) =>
+    Math.log(study.step.limits.availableTime / study.isothermal.completionAt(temperature)),
   account(study, temperature) {
     const { targetConversion, availableTime } = study.step.limits;
-    const needed = time(study, temperature);
+    const needed = study.isothermal.completionAt(temperature);
     const asked = `${durationText(availableTime)} are available`;
     return Number.isFinite(needed)
       ? `${percentText(targetConversion)} conversion takes ${durationText(needed, "up")}, ${asked}`

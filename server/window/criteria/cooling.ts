@@ -1,11 +1,13 @@
-import { coolingCapacity, coolingDuty } from "../../thermal/cooling.js";
+import { coolingCapacity, coolingDutyFrom } from "../../thermal/cooling.js";
 import { percentText, powerText } from "../../words/numbers.js";
 import type { Criterion } from "../criterion.js";
 import type { Study } from "../study.js";
 
 function duty(study: Study, temperature: number): number {
-  const dosing = study.dosingAt(temperature);
-  return dosing === null ? Number.NaN : coolingDuty(study.step, temperature, dosing);
+  const { step, isothermal } = study;
+  const figures = isothermal.figuresAt(temperature);
+  if (figures === null) return Number.NaN;
+  return coolingDutyFrom(step, temperature, figures, () => isothermal.dosingAt(temperature));
 }
 
 /** The largest heat to be removed is at most the allowed part of the full cooling capacity. */

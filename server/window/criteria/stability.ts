@@ -6,9 +6,9 @@ import type { Study } from "../study.js";
 
 function ratio(study: Study, temperature: number): number {
   const { rate } = study.step.reaction;
-  const dosing = study.dosingAt(temperature);
-  if (rate === null || dosing === null) return Number.NaN;
-  return freezeHeat(study.step, rate, temperature, dosing).slope(temperature) / effectiveUa(study.step);
+  const figures = study.isothermal.figuresAt(temperature);
+  if (rate === null || figures === null) return Number.NaN;
+  return freezeHeat(study.step, rate, temperature, figures).slope(temperature) / effectiveUa(study.step);
 }
 
 /**
