@@ -139,7 +139,7 @@ function sentenceOf(accumulation: AccumulationFindings, { temperatures }: Findin
     );
   if (temperatures.allAtOnce_K !== null)
     parts.push(
-      `With everything charged at once it would be ${temperatureText(temperatures.allAtOnce_K, "up")}: no feed interlock, no MTSR below that.`,
+      `With everything charged at once it would be ${temperatureText(temperatures.allAtOnce_K, "up")}: MTSR relies on the feed stopping.`,
     );
   return parts.join(" ");
 }

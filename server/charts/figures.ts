@@ -1,10 +1,21 @@
-import type { Findings } from "../screening/findings.js";
+import type { FailureFindings, Findings } from "../screening/findings.js";
+import { dosing } from "./dosing.js";
+import { failures } from "./failures.js";
+import { byTimeToAct } from "./failuresWords.js";
 import type { Figure } from "./figure.js";
 import { fitResiduals } from "./fitResiduals.js";
+import { heat } from "./heat.js";
 import { ladder } from "./ladder.js";
+import { lever } from "./lever.js";
 import { rateFigure } from "./rate.js";
 import { tmrad } from "./tmrad.js";
+import { type VulnerableMoment, vulnerable } from "./vulnerable.js";
 import { windowFigure } from "./window.js";
+
+/** What a failure may carry beside its own course: the same one begun at other moments. */
+interface WithMoments {
+  readonly vulnerable?: readonly VulnerableMoment[] | null;
+}
 
 /** All figures of a case in the order of the page; those without data are left out. */
 export function figuresOf(findings: Findings): Figure[] {
@@ -28,6 +39,11 @@ export function figuresOf(findings: Findings): Figure[] {
       ),
       fitResiduals(decompositionRate, "decomposition-residuals", "Residuals of the decomposition's fit"),
     );
-  figures.push(tmrad(findings));
+  figures.push(tmrad(findings), dosing(findings), heat(findings), lever(findings), failures(findings));
+  figures.push(
+    ...byTimeToAct(findings.failures ?? []).map((failure: FailureFindings & WithMoments, at) =>
+      vulnerable(failure.name, at + 1, failure.vulnerable ?? []),
+    ),
+  );
   return figures.filter((figure) => figure !== null);
 }

@@ -50,7 +50,7 @@ function tagged(entry: KeyEntry, x: number, y: number): Primitive[] {
 }
 
 /**
- * The key of a panel, in as many rows as it takes.
+ * The key of a panel, in as many rows as it takes; marks of the same name stand in it once.
  *
  * @param top y of its upper edge; without entries it takes no room
  */
@@ -64,7 +64,8 @@ export function layoutKey(
   const primitives: Primitive[] = [];
   let x = left;
   let middle = top + rowHeight / 2;
-  for (const entry of entries) {
+  const named = new Map(entries.map((entry) => [entry.name, entry]));
+  for (const entry of named.values()) {
     const lines = wrapText(entry.name, textSizes.small, right - left - sampleWidth);
     const width = sampleWidth + 6 + Math.max(...lines.map((line) => textWidth(line, textSizes.small)));
     if (x > left && x + width > right) {

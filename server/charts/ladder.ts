@@ -107,11 +107,17 @@ function rungLane(label: string, marks: readonly LaneMark[], text: string | null
 
 /**
  * The temperatures that a ladder's axis must show, K: the values, and their intervals as far as these do not
- * squeeze the values together.
+ * squeeze the values together. An MTSR far beyond all else, or the end of an interval, is an arrow at the edge.
+ *
+ * @param more what else lies on the axis, K
  */
-export function ladderReach(findings: Findings): number[] {
+export function ladderReach(findings: Findings, more: readonly number[] = []): number[] {
   const rungs = rungsOf(findings);
-  const values = rungs.flatMap((rung) => (rung.value_K === null ? [] : [rung.value_K]));
+  const { mtsr_K } = findings.temperatures;
+  const others = rungs.flatMap(({ value_K }) => (value_K === null || value_K === mtsr_K ? [] : [value_K]));
+  others.push(...more);
+  const span = Math.max(40, Math.max(...others) - Math.min(...others));
+  const values = mtsr_K === null ? others : [...others, Math.min(mtsr_K, Math.max(...others) + 1.5 * span)];
   const low = Math.min(...values);
   const high = Math.max(...values);
   const beyond = Math.max(20, 0.5 * (high - low));

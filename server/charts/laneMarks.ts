@@ -3,7 +3,7 @@ import type { LaneMark } from "./figure.js";
 import type { Box, Point } from "./geometry.js";
 import { textSizes } from "./palette.js";
 import type { Primitive, Text } from "./primitive.js";
-import { grown, rectangle, shapeAt, strokeAlong, textAt, textBox } from "./strokes.js";
+import { filledOutline, grown, rectangle, shapeAt, strokeAlong, textAt, textBox } from "./strokes.js";
 import { textWidth } from "./textWidth.js";
 
 /** Where a mark stands in a lane that has its words underneath. */
@@ -15,7 +15,9 @@ export const crowdedRoom = 15;
 /** Reach of a mark with its interval, cut to the frame. */
 function reach(mark: LaneMark, left: number, right: number, x: Scale): readonly [number, number] {
   const ends = [mark.value, ...(mark.interval ?? [])].map(x);
-  return [Math.max(left, Math.min(...ends)) - 6, Math.min(right, Math.max(...ends)) + 6];
+  const low = Math.min(right, Math.max(left, Math.min(...ends)));
+  const high = Math.max(left, Math.min(right, Math.max(...ends)));
+  return [low - 6, high + 6];
 }
 
 /** The side of a mark on which its words fit; null where they do on neither. */
@@ -38,7 +40,8 @@ export function drawLaneMark(mark: LaneMark, box: Box, x: Scale): Primitive[] {
   const primitives: Primitive[] = [];
   if (mark.interval !== null) primitives.push(...whisker(mark.interval, middle, mark, box, x));
   const at = Math.min(box.right, Math.max(box.left, x(mark.value)));
-  primitives.push(shapeAt([at, middle], mark.shape, mark.tone, 5));
+  if (at === x(mark.value)) primitives.push(shapeAt([at, middle], mark.shape, mark.tone, 5));
+  else primitives.push(arrowAt(at, middle, at === box.left ? -1 : 1, mark));
   const [from, to] = reach(mark, box.left, box.right, x);
   const style = { size: "normal", bold: true, tone: mark.tone } as const;
   const half = textWidth(mark.text, textSizes.normal, true) / 2;
@@ -53,6 +56,20 @@ export function drawLaneMark(mark: LaneMark, box: Box, x: Scale): Primitive[] {
           });
   if (side !== "right") primitives.push(rectangle(textBox(text), "faint", "paper"));
   return [...primitives, text];
+}
+
+/** A value beyond the axis: an arrow that points on from its edge. */
+function arrowAt(x: number, y: number, direction: 1 | -1, mark: LaneMark): Primitive {
+  const tip = x + 9 * direction;
+  return filledOutline(
+    [
+      [x - 3 * direction, y - 6],
+      [tip, y],
+      [x - 3 * direction, y + 6],
+    ],
+    mark.tone,
+    "tone",
+  );
 }
 
 /** The interval of a value; an end beyond the axis is an arrow. */

@@ -1,6 +1,6 @@
 import type { Findings, WindowFindings } from "../screening/findings.js";
 import { durationText, temperatureNumber, temperatureText } from "../words/numbers.js";
-import type { Axis, Figure, Line, Mark } from "./figure.js";
+import type { Axis, Band, Figure, Line, Mark } from "./figure.js";
 import { celsius, roomyDomain } from "./temperatureAxis.js";
 
 type Step = NonNullable<WindowFindings["feedLever"]>[number];
@@ -30,6 +30,22 @@ function endLine(steps: readonly Step[], which: "lower_K" | "upper_K"): Line {
   };
 }
 
+/** The window as an area, interrupted where there is none. */
+function windowBands(steps: readonly Step[]): Band[] {
+  const runs: { x: number; low: number; high: number }[][] = [[]];
+  for (const { duration_s, lower_K, upper_K } of steps) {
+    if (lower_K === null || upper_K === null) runs.push([]);
+    else runs.at(-1)?.push({ x: duration_s, low: celsius(lower_K), high: celsius(upper_K) });
+  }
+  const drawn = runs.filter((run) => run.length > 1);
+  return drawn.map((points, at) => ({
+    type: "band",
+    tone: "reaction",
+    points,
+    ...(at === 0 ? { name: "window" } : {}),
+  }));
+}
+
 function marksOf(steps: readonly Step[], process_K: number): Mark[] {
   const known = steps.flatMap(({ duration_s, lower_K, upper_K }) =>
     lower_K === null || upper_K === null
@@ -43,12 +59,7 @@ function marksOf(steps: readonly Step[], process_K: number): Mark[] {
     [duration_s, upper] as const,
   ]);
   return [
-    {
-      type: "band",
-      tone: "reaction",
-      points: known.map(({ duration_s, lower, upper }) => ({ x: duration_s, low: lower, high: upper })),
-      name: "window",
-    },
+    ...windowBands(steps),
     {
       type: "rule",
       across: "y",

@@ -64,30 +64,26 @@ function lineMarks(rate: RateFindings, tone: Tone): Mark[] {
   if (rate.fittedRange_K === null)
     return [{ type: "line", tone, dash: "solid", weight: "normal", points: points.map(pair) }];
   const [left, right] = [reciprocal(rate.fittedRange_K[1]), reciprocal(rate.fittedRange_K[0])];
-  const piece = (dash: "solid" | "dashed", of: readonly RatePoint[]): Mark => ({
+  const piece = (outside: boolean, of: readonly RatePoint[]): Mark => ({
     type: "line",
     tone,
-    dash,
+    dash: outside ? "dashed" : "solid",
     weight: "normal",
     points: of.map(pair),
+    ...(outside ? ({ name: "extrapolated", keyed: true } as const) : {}),
   });
   const slack = 1e-12;
-  const named = {
-    ...piece(
-      "dashed",
+  return [
+    piece(
+      true,
       points.filter((each) => each.x <= left + slack),
     ),
-    name: "extrapolated",
-    keyed: true,
-  } as Mark;
-  return [
-    named,
     piece(
-      "solid",
+      false,
       points.filter((each) => each.x >= left - slack && each.x <= right + slack),
     ),
     piece(
-      "dashed",
+      true,
       points.filter((each) => each.x >= right - slack),
     ),
   ];

@@ -45,7 +45,8 @@ export function hatching(box: Box, tone: Tone): Path {
 
 /** A stretch or an area in one of the four fills. */
 export function filledBox(box: Box, fill: Fill, tone: Tone, outlined: boolean): Primitive[] {
-  if (fill === "hatched") return [rectangle(box, tone, "none", outlined), hatching(box, tone)];
+  if (fill === "hatched")
+    return outlined ? [rectangle(box, tone, "none", true), hatching(box, tone)] : [hatching(box, tone)];
   return [rectangle(box, tone, fill === "solid" ? "tone" : fill, outlined)];
 }
 

@@ -134,7 +134,7 @@ function keyOf(window: WindowFindings): (Area & { readonly name: string })[] {
 
 /** The main picture: the ladder and, along the same axis, a lane for each criterion of the window. */
 export function windowFigure(findings: Findings, window: WindowFindings): Figure {
-  const xAxis = temperatureAxis([...ladderReach(findings), window.lowest_K, window.highest_K]);
+  const xAxis = temperatureAxis(ladderReach(findings, [window.lowest_K, window.highest_K]));
   const binding = window.criteria.filter((each) => each.binding);
   const advisory = window.criteria.filter((each) => !each.binding);
   const ladder = ladderTable(findings);

@@ -11,6 +11,8 @@ import { drawPdf, type PdfFonts, pdfHeight } from "../../server/charts/pdf.js";
 import type { Primitive } from "../../server/charts/primitive.js";
 import { drawSvg, drawSvgAt } from "../../server/charts/svg.js";
 import { inventedBatch } from "./invented.js";
+import { inventedWhole } from "./inventedWhole.js";
+import { screened } from "./screened.js";
 
 const require = createRequire(import.meta.url);
 const plex = require.resolve("@ibm/plex-sans/package.json").replace("package.json", "fonts/complete/woff/");
@@ -43,10 +45,14 @@ function strokes(primitive: Primitive): boolean {
   return primitive.kind !== "text" && primitive.stroke !== null;
 }
 
-const figures = figuresOf(inventedBatch);
+const figures = figuresOf(inventedWhole);
+const drawn: [string, Figure][] = Object.entries({ inventedBatch, inventedWhole, ...screened() }).flatMap(
+  ([name, findings]) =>
+    figuresOf(findings).map((figure): [string, Figure] => [`${name} ${figure.id}`, figure]),
+);
 
-describe.each(figures.map((figure) => [figure.id, figure] as const))("the figure %s", (_, figure) => {
-  test("has the same marks on the page and on the sheet", async () => {
+describe.each(drawn)("the figure %s", (_, figure) => {
+  test("has the same marks on the page and on the sheet, at the same places", async () => {
     const { primitives } = layout(figure, "wide");
     const svg = drawSvgAt(figure, "wide");
     const pdf = await pageOf((document) => drawPdf(document, figure, { x: 0, y: 0, width: 500 }, fonts));
@@ -58,12 +64,6 @@ describe.each(figures.map((figure) => [figure.id, figure] as const))("the figure
     const fallbacks = words.reduce((sum, each) => sum + (each.text.match(/⁻/g)?.length ?? 0), 0);
     expect(count(/^BT$/gm, pdf)).toBeGreaterThanOrEqual(words.length);
     expect(count(/^BT$/gm, pdf)).toBeLessThanOrEqual(words.length + 2 * fallbacks);
-  });
-
-  test("has its rectangles and the starts of its paths at the same places in both", async () => {
-    const { primitives } = layout(figure, "wide");
-    const svg = drawSvgAt(figure, "wide");
-    const pdf = await pageOf((document) => drawPdf(document, figure, { x: 0, y: 0, width: 500 }, fonts));
     for (const primitive of primitives) {
       if (primitive.kind === "rect") {
         const { x, y, width, height } = primitive;
@@ -87,6 +87,7 @@ describe.each(figures.map((figure) => [figure.id, figure] as const))("the figure
     expect(svg).toContain(`<title id="${figure.id}-wide-title">`);
     expect(svg).toContain(`<desc id="${figure.id}-wide-desc">`);
     expect(figure.sentence).toMatch(/\d/);
+    expect(figure.sentence).not.toMatch(/NaN|Infinity|undefined|null/);
     expect(figure.table.rows.length).toBeGreaterThan(0);
     for (const row of figure.table.rows) expect(row).toHaveLength(figure.table.columns.length);
   });
