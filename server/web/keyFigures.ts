@@ -70,7 +70,7 @@ function heat({ heat, accumulation }: Findings): readonly KeyFigure[] {
       heat.decompositionSeverity === null ? null : `severity ${heat.decompositionSeverity}`,
     ),
     figure(
-      "of unreacted feed, the largest",
+      "not yet reacted, at most",
       "Accumulation",
       shown(accumulation?.maximumFraction, (value) => percentText(value, "up")),
       shown(accumulation?.at_s, (value) => `at ${durationText(value, "nearest")}`),

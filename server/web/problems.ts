@@ -14,7 +14,7 @@ export interface Problem {
 /** Answers with a problem: programs get problem details (RFC 9457), people the error page. */
 export function refuse(request: Request, response: Response, problem: Problem): void {
   response.status(problem.status).set("Cache-Control", "no-store");
-  if (request.path.startsWith("/api/")) {
+  if (request.originalUrl.startsWith("/api/")) {
     // Without a type of its own a problem is "about:blank", and its title the status in words (RFC 9457, 4.2.1).
     response.type("application/problem+json").send(JSON.stringify({ type: "about:blank", ...problem }));
   } else {
@@ -49,7 +49,7 @@ export function answerErrors(log: Logger): ErrorRequestHandler {
   return (error: unknown, request, response, next) => {
     if (response.headersSent) return next(error);
     const problem = problemOf(error);
-    if (problem.status >= 500) log.error({ err: error, method: request.method, path: request.path });
+    if (problem.status >= 500) log.error({ err: error, method: request.method, path: request.originalUrl.split("?")[0] });
     refuse(request, response, problem);
   };
 }

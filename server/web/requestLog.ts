@@ -5,7 +5,7 @@ import type { Logger } from "pino";
 export function requestLog(log: Logger): RequestHandler {
   return (request, response, next) => {
     const start = performance.now();
-    const { method, path } = request;
+    const { method, path } = request; // before routers shorten the path
     response.on("finish", () => {
       const time_ms = Math.round(performance.now() - start);
       log.info({ method, path, status: response.statusCode, time_ms }, "answered");
