@@ -12,7 +12,7 @@ export function editForm(document: unknown, action: string): unknown {
     const path = pathOf(action.slice("remove:unused:".length));
     return unusedOf(document)
       .filter((unused) => path.every((key, i) => unused[i] === key))
-      .reduceRight<unknown>((edited, unused) => without(edited, unused), document);
+      .reduceRight<unknown>((edited, unused) => withoutEmpty(edited, unused), document);
   }
   if (action.startsWith("add:")) return added(document, pathOf(action.slice("add:".length)));
   if (action.startsWith("remove:")) return without(document, pathOf(action.slice("remove:".length)));
@@ -58,4 +58,13 @@ function without(document: unknown, [key, ...rest]: readonly string[]): unknown 
   return Object.fromEntries(
     Object.entries(isGroup(document) ? document : {}).filter(([other]) => other !== key),
   );
+}
+
+/** The same, and without the groups that it leaves empty on the way. */
+function withoutEmpty(document: unknown, path: readonly string[]): unknown {
+  const edited = without(document, path);
+  const parent = path.slice(0, -1);
+  const left = valueAt(edited, ...parent);
+  const isEmpty = typeof left === "object" && left !== null && Object.keys(left).length === 0;
+  return parent.length > 0 && isEmpty ? withoutEmpty(edited, parent) : edited;
 }

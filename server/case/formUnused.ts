@@ -65,13 +65,15 @@ function isRead(leaf: Leaf, value: unknown): boolean {
   return detailed && isGroup(value);
 }
 
-const shown = ["value", "standardError", "source", "basis"];
-
-function insideLeaf(value: unknown, path: readonly string[], found: string[][]): void {
+function insideLeaf(value: unknown, path: readonly string[], found: string[][], isInner = false): void {
   if (!isGroup(value)) return;
   for (const [key, part] of Object.entries(value)) {
     const nested = key === "value" && isGroup(part);
-    if (nested) insideLeaf(part, [...path, key], found);
+    // Inside the value of a limit a basis has no control of its own: the limit's is free text.
+    const shown = isInner
+      ? ["value", "standardError", "source"]
+      : ["value", "standardError", "source", "basis"];
+    if (nested) insideLeaf(part, [...path, key], found, true);
     else if (!shown.includes(key) || typeof part === "object") look(undefined, part, [...path, key], found);
   }
 }

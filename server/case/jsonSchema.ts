@@ -30,9 +30,14 @@ function leafJsonSchema(leaf: Leaf): JsonSchema {
     case "choice":
       return { ...about, enum: Object.keys(leaf.choices) };
     case "number":
-      return leaf.estimated ? { ...about, ...withNotes({ type: "number" }) } : { ...about, type: "number" };
+      return leaf.estimated
+        ? { ...about, ...withNotes({ type: "number" }, basisWords) }
+        : { ...about, type: "number" };
     case "rate":
-      return { ...about, ...withNotes({ type: "string", examples: ["2.4e-5 1/s", "3e-4 L/(mol s)"] }) };
+      return {
+        ...about,
+        ...withNotes({ type: "string", examples: ["2.4e-5 1/s", "3e-4 L/(mol s)"] }, basisWords),
+      };
     case "quantity":
       return { ...about, ...quantityJsonSchema(leaf) };
   }
@@ -45,21 +50,26 @@ function quantityJsonSchema(leaf: Extract<Leaf, { kind: "quantity" }>): JsonSche
     description: `${words}, text with its unit (${unit} or any of the same dimension)`,
     examples: leaf.word === undefined ? [example] : [example, leaf.word],
   };
-  return leaf.freeBasis === true ? withNotes(text, { type: "string" }, withNotes(text)) : withNotes(text);
+  return leaf.freeBasis === true
+    ? withNotes(text, { type: "string" }, withNotes(text, undefined))
+    : withNotes(text, basisWords);
 }
 
+const basisWords: JsonSchema = { enum: Object.keys(bases) };
+
 /** A bare value, or an object that says how well it is known. */
-function withNotes(
-  bare: JsonSchema,
-  basis: JsonSchema = { enum: Object.keys(bases) },
-  value: JsonSchema = bare,
-): JsonSchema {
+function withNotes(bare: JsonSchema, basis: JsonSchema | undefined, value: JsonSchema = bare): JsonSchema {
   return {
     anyOf: [
       bare,
       {
         type: "object",
-        properties: { value, standardError: bare, source: { type: "string" }, basis },
+        properties: {
+          value,
+          standardError: bare,
+          source: { type: "string" },
+          ...(basis === undefined ? {} : { basis }),
+        },
         required: ["value"],
         additionalProperties: false,
       },

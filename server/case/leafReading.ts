@@ -266,6 +266,10 @@ export function readLimit(typed: unknown, dimension: Dimension, report: Report):
   const nested = isGroup(rest.value);
   const plain = nested ? Object.keys(rest).filter((key) => key !== "value") : [];
   for (const key of plain) report(`${unknownKey(key, ["value", "basis"])}; value holds a group already`, key);
+  if (isGroup(rest.value) && rest.value.basis !== undefined) {
+    report("stands inside the value; the basis of a limit stands beside it, in any words", "value", "basis");
+    return null;
+  }
   const estimate = nested
     ? readEstimate(rest.value, dimension, "any", (message, ...path) => report(message, "value", ...path))
     : readEstimate(rest, dimension, "any", report);
