@@ -2,28 +2,56 @@ import { createTrajectory, type Trajectory } from "../numeric/trajectory.js";
 import { afterFeeding } from "./charge.js";
 import type { MixingAssumption } from "./conditions.js";
 import { fastest, hottest, type Peak } from "./extremes.js";
-import { type Followed, follow, type Leg, type Marks, type Observer } from "./follow.js";
+import { follow, type Leg, type Marks, type Observer } from "./follow.js";
 import { type Loss, lossOf } from "./loss.js";
 import type { FailureStart, Moment } from "./start.js";
 import { lastChange, type Timeline, watch } from "./timeline.js";
 import type { Vessel } from "./vessel.js";
 
-/** A failure left to itself, from its start to the end of what is shown of it. */
-export interface FailureRun {
+/** A failure left to itself, kept so that another run can branch off anywhere. */
+export interface Run {
   readonly start: FailureStart;
   readonly mixing: MixingAssumption;
   readonly trajectory: Trajectory;
   readonly legs: readonly Leg[];
-  readonly marks: Marks;
   /** by the rule, within 24 h after the last change, whatever is shown */
   readonly loss: Loss | null;
   /** s after the failure: 24 h after the last change */
   readonly watchedUntil: number;
+}
+
+/** A failure from its start to the end of what is shown of it. */
+export interface FullRun extends Run {
+  readonly marks: Marks;
   /** K */
   readonly peak: Peak;
   /** K/s */
   readonly fastest: Peak;
   readonly end: Moment;
+}
+
+/**
+ * Runs a failure until it is lost, or to the end of its watch.
+ *
+ * @param vessel to run it in
+ * @param start moment of the failure
+ * @param mixing how the contents react while the agitator is off
+ * @param relativeTolerance of every step
+ */
+export function runUntilLost(
+  vessel: Vessel,
+  start: FailureStart,
+  timeline: Timeline,
+  mixing: MixingAssumption,
+  relativeTolerance: number,
+): Run {
+  const { contents, integrator } = vessel;
+  const trajectory = createTrajectory(contents.system.size, 64);
+  const watchedUntil = lastChange(timeline) + watch;
+  const options = { relativeTolerance, mixing, td24: null, untilLost: true, trajectory };
+  const followed = follow(contents, integrator, start, timeline.changes, watchedUntil, options);
+  const loss = lossOf(contents, followed);
+  return { start, mixing, trajectory, legs: followed.legs, loss, watchedUntil };
 }
 
 /**
@@ -34,13 +62,13 @@ export interface FailureRun {
  * @param mixing how the contents react while the agitator is off
  * @param relativeTolerance of every step
  */
-export function runFailure(
+export function runToHorizon(
   vessel: Vessel,
   start: FailureStart,
   timeline: Timeline,
   mixing: MixingAssumption,
   relativeTolerance: number,
-): FailureRun {
+): FullRun {
   const { contents, integrator, td24 } = vessel;
   const trajectory = createTrajectory(contents.system.size, 256);
   const top = hottest(contents);
@@ -59,7 +87,7 @@ export function runFailure(
   const watchedUntil = lastChange(timeline) + watch;
   const watched = follow(contents, integrator, start, timeline.changes, watchedUntil, options);
   const loss = lossOf(contents, watched);
-  const run = (legs: readonly Leg[], marks: Marks, end: Moment): FailureRun => ({
+  const run = (legs: readonly Leg[], marks: Marks, end: Moment): FullRun => ({
     start,
     mixing,
     trajectory,
@@ -76,34 +104,33 @@ export function runFailure(
     return run(watched.legs, watched.marks, watched.end);
   }
   const rest = follow(contents, integrator, watched.end, [], horizon, options);
-  return run([...watched.legs, ...rest.legs], firstOf(watched, rest), rest.end);
+  return run([...watched.legs, ...rest.legs], earlier(watched.marks, rest.marks), rest.end);
 }
 
-function firstOf(one: Followed, other: Followed): Marks {
+function earlier(one: Marks, other: Marks): Marks {
   return {
-    mtt: one.marks.mtt ?? other.marks.mtt,
-    td24: one.marks.td24 ?? other.marks.td24,
-    allowed: one.marks.allowed ?? other.marks.allowed,
+    mtt: one.mtt ?? other.mtt,
+    td24: one.td24 ?? other.td24,
+    allowed: one.allowed ?? other.allowed,
   };
 }
 
+/** Before or after the change that happens at the very time. */
+export type Side = "before" | "after";
+
 /**
- * The moment of a run just before whatever happens at a time: what the timeline does before it has happened.
+ * A moment of a run.
  *
  * @param time s after the failure, within the run
- * @param side "before": without the change at that very time; "after": with it
+ * @param side where a change falls on the time
  */
-export function momentOf(vessel: Vessel, run: FailureRun, time: number, side: "before" | "after"): Moment {
+export function momentOf(vessel: Vessel, run: Run, time: number, side: Side): Moment {
   const leg = run.legs.findLast((each) => (side === "before" ? each.time < time : each.time <= time));
   // Before the failure itself there is no leg.
   if (leg === undefined) return run.start;
-  const state = new Float64Array(vessel.contents.system.size);
-  const atStart = run.trajectory.steps === 0;
-  if (atStart) state.set(run.end.state);
-  else run.trajectory.evaluate(time, state, side === "before");
-  const { conditions } = leg;
-  const charge = conditions.feeding
-    ? afterFeeding(vessel.contents.step, leg.charge, time - leg.time)
-    : leg.charge;
-  return { time, state, charge, conditions };
+  const { step, system } = vessel.contents;
+  const state = new Float64Array(system.size);
+  run.trajectory.evaluate(time, state, side === "before");
+  const charge = leg.conditions.feeding ? afterFeeding(step, leg.charge, time - leg.time) : leg.charge;
+  return { time, state, charge, conditions: leg.conditions };
 }
