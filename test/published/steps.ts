@@ -12,6 +12,7 @@ export function stepWith(reaction: Partial<Reaction>, vessel: Partial<Vessel> = 
       feed: null,
       heat: -1,
       rate: null,
+      measuredExcess: 0,
       ...reaction,
     },
     decomposition: null,
