@@ -219,6 +219,16 @@ export interface FailureFindings {
   readonly timeToAct_s: number | null;
   readonly margin_s: number | null;
   readonly alarm_K: number | null;
+  /** what stopping the feed alone would do; null where the failure holds or no feed runs on */
+  readonly stopFeedOnly?: { readonly suffices: boolean; readonly timeToAct_s: number | null } | null;
+  /** the same failure started at other moments of the feed; null for a batch */
+  readonly vulnerable?:
+    | readonly {
+        readonly startedAt_s: number;
+        readonly timeToAct_s: number | null;
+        readonly verdict: "holds" | "act" | "lost";
+      }[]
+    | null;
   readonly trace: readonly {
     readonly time_s: number;
     readonly temperature_K: number;
@@ -237,7 +247,12 @@ export interface UncertaintyFindings {
   readonly seed: number;
   readonly td24_K: Percentiles | null;
   readonly mtsr_K: Percentiles | null;
+  /** the window's upper end; a percentile is null where nothing is left of the window */
   readonly upper_K: Percentiles | null;
+  readonly timeToMaximumRateAtProcess_s: Percentiles | null;
+  readonly timeToMaximumRateAtMtsr_s: Percentiles | null;
+  /** cooling duty over capacity at the planned temperature */
+  readonly coolingUse: Percentiles | null;
   readonly timeToAct_s: Percentiles | null;
   readonly drivers: readonly unknown[] | null;
   readonly nextMeasurement: unknown;
