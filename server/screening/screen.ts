@@ -5,11 +5,14 @@ import { timeToMaximumRate } from "../thermal/runaway.js";
 import type { Step } from "../thermal/step.js";
 import { td24 } from "../thermal/td24.js";
 import { type Study, studyOf } from "../window/study.js";
+import { temperatureWindow } from "../window/window.js";
 import { program } from "../words/program.js";
 import { byLevel, caution } from "./cautions/catalogue.js";
 import { inputCautions } from "./cautions/inputs.js";
 import { kineticsCautions } from "./cautions/kinetics.js";
 import { verdictCautions } from "./cautions/verdicts.js";
+import { drawnFindings, windowWithDraws } from "./drawn.js";
+import { failureFindings } from "./failureFindings.js";
 import type { Caution, Findings } from "./findings.js";
 import { type KnownRates, knownRates } from "./known.js";
 import { measuredCautions, measuredFindings, measuredOf, withMeasured } from "./measured.js";
@@ -59,10 +62,14 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
   const span = curveSpan(step, mtsr, t24);
   const timeToMaximumRate = tmradFindings(runaway, process, mtsr, span);
   const cooling = dosing === null ? null : coolingFindings(step, dosing);
-  const window = step.reaction.rate === null ? null : windowFindings(study, options.depth === "full");
+  const full = options.depth === "full";
+  const allowed = rate === null ? null : temperatureWindow(study);
+  const drawn = full ? drawnFindings(model, known, { study, window: allowed, td24: t24 }) : null;
+  const window = allowed === null ? null : windowWithDraws(windowFindings(study, allowed, full), drawn);
+  const failed = full ? failureFindings(step, model.failures) : null;
   const criticality: Findings["criticality"] = {
     class: mtsr === null || t24 === null ? null : criticalityClass(process, mtsr, temperatures.mtt_K, t24),
-    probability: null,
+    probability: drawn?.criticalityProbability ?? null,
   };
   const judged = { temperatures, criticality, cooling, window, timeToMaximumRate };
   const cautions: Caution[] = [
@@ -75,8 +82,9 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
     }),
     ...usedRates(model, known, step, temperatures).flatMap((used) => kineticsCautions(used, process)),
     ...measuredCautions(model, step, dosing),
+    ...(failed?.cautions ?? []),
     ...inputCautions(model),
-    ...notBuilt(options.depth),
+    ...notBuilt(options.depth, model),
   ];
   return {
     format: "thermal-window/findings-1",
@@ -91,8 +99,8 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
     criticality,
     cooling,
     window,
-    failures: null,
-    uncertainty: null,
+    failures: failed?.failures ?? null,
+    uncertainty: drawn?.uncertainty ?? null,
     cautions: byLevel(cautions),
   };
 }
@@ -155,13 +163,13 @@ function historyRatio(study: Study): number | null {
   return Number.isFinite(fresh) && fresh > 0 ? careful / fresh : null;
 }
 
-function notBuilt(depth: ScreenOptions["depth"]): Caution[] {
-  if (depth === "quick") return [];
+function notBuilt(depth: ScreenOptions["depth"], model: CaseModel): Caution[] {
+  if (depth === "quick" || model.failures.length === 0) return [];
   return [
     caution(
       "NOT_BUILT",
-      "",
-      "Cooling failures and draws are not part of this version: time to act, probabilities and cautious sides are not given.",
+      "/failures",
+      "The time to act is given at the estimates only: how uncertain it is, is not part of this version.",
     ),
   ];
 }

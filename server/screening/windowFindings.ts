@@ -1,7 +1,7 @@
 import type { Step } from "../thermal/step.js";
 import { conflictIn } from "../window/conflict.js";
 import { type Study, studyOf } from "../window/study.js";
-import { temperatureWindow } from "../window/window.js";
+import { type TemperatureWindow, temperatureWindow } from "../window/window.js";
 import type { WindowFindings } from "./findings.js";
 import { criterionLabel } from "./labels.js";
 
@@ -12,11 +12,11 @@ const leverFactors = [0.25, 0.5, 0.75, 1, 1.5, 2, 3, 4];
  * The window of a step with its lanes.
  *
  * @param study of the step at its estimates
+ * @param window of that study
  * @param withLever also what a slower or faster feed does to it
  */
-export function windowFindings(study: Study, withLever: boolean): WindowFindings {
+export function windowFindings(study: Study, window: TemperatureWindow, withLever: boolean): WindowFindings {
   const { limits } = study.step;
-  const window = temperatureWindow(study);
   return {
     lower_K: window.chosen?.[0] ?? null,
     upper_K: window.chosen?.[1] ?? null,

@@ -1,0 +1,131 @@
+import { holds, intersect, narrowBy, type Span, spansWhere } from "../window/spans.js";
+import type { Study } from "../window/study.js";
+import { choosePart, holdsOverBand, type Lane, type TemperatureWindow } from "../window/window.js";
+import { cautiousPart, createCoverage } from "./coverage.js";
+import { alike, heldAlong, type Trail, trailOf } from "./trail.js";
+
+/** The cautious side of one criterion. */
+export interface DrawnLane {
+  readonly key: string;
+  /** temperatures at which it holds in at least 95 % of the draws; null where not assessed */
+  readonly cautious: readonly Span[] | null;
+  /** part of the draws in which it holds at the planned temperature and its band; null where not assessed */
+  readonly probability: number | null;
+}
+
+/** The window over all draws. */
+export interface DrawnWindow {
+  readonly lanes: readonly DrawnLane[];
+  /** part of what all assessed binding criteria allow jointly in at least 95 % of the draws; null: nothing */
+  readonly cautious: Span | null;
+}
+
+/** A window that draws are laid into, one after the other. */
+export interface WindowCollector {
+  /**
+   * @param study of one draw
+   * @returns upper end of its window, K; -Infinity where nothing is left of it
+   */
+  add(study: Study): number;
+  /** @param count of draws that were added */
+  result(count: number): DrawnWindow;
+}
+
+/** Draws on which following the ends is held against a search of the whole range. */
+const checks = 16;
+
+/** Ends that are followed may differ from those of the search by this, K. */
+const agreement = 0.02;
+
+/** Cautious ends are drawn in by this, K, so that what they are resolved to never widens a claim. */
+const drawnIn = 0.005;
+
+/**
+ * Follows the ends of every criterion from the estimates into the draws. On evenly spaced draws the followed ends
+ * are held against a search of the whole range; a criterion that differs on any of them is searched on all.
+ *
+ * @param study of the step at its estimates
+ * @param window of that study
+ * @param count of the draws
+ * @param drawn study of one draw by its index, for the check
+ */
+export function collectWindows(
+  study: Study,
+  window: TemperatureWindow,
+  count: number,
+  drawn: (index: number) => Study,
+): WindowCollector {
+  const { lowestTemperature: low, highestTemperature: high, controlBand: band } = study.step.limits;
+  const [bottom, top] = [low - band, high + band];
+  const lanes = window.lanes
+    .filter((lane) => lane.assessed)
+    .map((lane) => ({
+      lane,
+      trail: trailOf((at) => lane.criterion.margin(study, at), lane.held, bottom, top),
+      coverage: createCoverage(),
+      met: 0,
+    }));
+  const followers = lanes.map((each) => ({
+    ...each,
+    trail: reliable(each.lane, each.trail, count, drawn) ? each.trail : null,
+  }));
+  const joint = createCoverage();
+
+  function add(draw: Study): number {
+    const process = draw.step.reaction.temperature;
+    const inside = process >= low && process <= high;
+    let common: readonly Span[] = [[low, high]];
+    for (const follower of followers) {
+      const { criterion } = follower.lane;
+      const margin = (at: number): number => criterion.margin(draw, at);
+      const allowed = narrowBy(heldAlong(follower.trail, margin, bottom, top), band, low, high);
+      follower.coverage.add(allowed);
+      if (inside ? holds(allowed, process) : holdsOverBand(margin, process, band)) follower.met += 1;
+      if (criterion.binding) common = intersect(common, allowed);
+    }
+    joint.add(common);
+    return choosePart(common, process)?.[1] ?? Number.NEGATIVE_INFINITY;
+  }
+
+  return {
+    add,
+    result(added) {
+      const needed = Math.ceil(cautiousPart * added - 1e-9);
+      const inward = (spans: readonly Span[]): readonly Span[] => drawIn(spans, low, high);
+      return {
+        lanes: window.lanes.map((lane) => {
+          const follower = followers.find((each) => each.lane === lane);
+          return {
+            key: lane.criterion.key,
+            cautious:
+              follower === undefined
+                ? null
+                : intersect(inward(follower.coverage.coveredBy(needed)), lane.allowed),
+            probability: follower === undefined ? null : follower.met / added,
+          };
+        }),
+        cautious: choosePart(
+          intersect(inward(joint.coveredBy(needed)), window.parts),
+          study.step.reaction.temperature,
+        ),
+      };
+    },
+  };
+}
+
+function reliable(lane: Lane, trail: Trail, count: number, drawn: (index: number) => Study): boolean {
+  for (let i = 0; i < checks; i += 1) {
+    const index = Math.floor(((i + 0.5) * count) / checks);
+    const draw = drawn(index);
+    const margin = (at: number): number => lane.criterion.margin(draw, at);
+    const searched = spansWhere(margin, trail.low, trail.high);
+    if (!alike(heldAlong(trail, margin, trail.low, trail.high), searched, agreement)) return false;
+  }
+  return true;
+}
+
+function drawIn(spans: readonly Span[], low: number, high: number): readonly Span[] {
+  return spans
+    .map(([start, end]): Span => [start > low ? start + drawnIn : start, end < high ? end - drawnIn : end])
+    .filter(([start, end]) => start <= end);
+}
