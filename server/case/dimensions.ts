@@ -19,15 +19,30 @@ function powers(mass: number, length: number, time: number, temperature = 0, amo
 
 /** Every kind of quantity that a case document holds; rate constants depend on their order. */
 export const dimensions = {
-  mass: { words: "a mass", unit: "kg", example: "150 kg", powers: powers(1, 0, 0) },
+  mass: {
+    words: "a mass",
+    unit: "kg",
+    example: "150 kg",
+    powers: powers(1, 0, 0),
+  },
   amount: {
     words: "an amount of substance",
     unit: "mol",
     example: "2.5 kmol",
     powers: powers(0, 0, 0, 0, 1),
   },
-  volume: { words: "a volume", unit: "m^3", example: "1500 L", powers: powers(0, 3, 0) },
-  density: { words: "a density", unit: "kg/m^3", example: "0.91 kg/L", powers: powers(1, -3, 0) },
+  volume: {
+    words: "a volume",
+    unit: "m^3",
+    example: "1500 L",
+    powers: powers(0, 3, 0),
+  },
+  density: {
+    words: "a density",
+    unit: "kg/m^3",
+    example: "0.91 kg/L",
+    powers: powers(1, -3, 0),
+  },
   heatCapacity: {
     words: "a specific heat capacity",
     unit: "J/(kg K)",
@@ -47,7 +62,12 @@ export const dimensions = {
     example: "2 K",
     powers: powers(0, 0, 0, 1),
   },
-  time: { words: "a time", unit: "s", example: "30 min", powers: powers(0, 0, 1) },
+  time: {
+    words: "a time",
+    unit: "s",
+    example: "30 min",
+    powers: powers(0, 0, 1),
+  },
   molarEnergy: {
     words: "an energy per amount of substance",
     unit: "J/mol",
@@ -78,23 +98,48 @@ export const dimensions = {
     example: "300 W/(m^2 K)",
     powers: powers(1, 0, -3, -1),
   },
-  area: { words: "an area", unit: "m^2", example: "5.6 m^2", powers: powers(0, 2, 0) },
-  length: { words: "a length", unit: "m", example: "1.4 m", powers: powers(0, 1, 0) },
-  power: { words: "a power", unit: "W", example: "1.5 kW", powers: powers(1, 2, -3) },
+  area: {
+    words: "an area",
+    unit: "m^2",
+    example: "5.6 m^2",
+    powers: powers(0, 2, 0),
+  },
+  length: {
+    words: "a length",
+    unit: "m",
+    example: "1.4 m",
+    powers: powers(0, 1, 0),
+  },
+  power: {
+    words: "a power",
+    unit: "W",
+    example: "1.5 kW",
+    powers: powers(1, 2, -3),
+  },
   heatPerKelvin: {
     words: "a heat flow per kelvin",
     unit: "W/K",
     example: "15 W/K",
     powers: powers(1, 2, -3, -1),
   },
-  massFlow: { words: "a mass flow", unit: "kg/s", example: "4.5 kg/s", powers: powers(1, 0, -1) },
+  massFlow: {
+    words: "a mass flow",
+    unit: "kg/s",
+    example: "4.5 kg/s",
+    powers: powers(1, 0, -1),
+  },
   concentration: {
     words: "a concentration",
     unit: "mol/m^3",
     example: "1 mol/L",
     powers: powers(0, -3, 0, 0, 1),
   },
-  viscosity: { words: "a viscosity", unit: "Pa s", example: "0.9 mPa s", powers: powers(1, -1, -1) },
+  viscosity: {
+    words: "a viscosity",
+    unit: "Pa s",
+    example: "0.9 mPa s",
+    powers: powers(1, -1, -1),
+  },
   conductivity: {
     words: "a thermal conductivity",
     unit: "W/(m K)",
@@ -107,7 +152,12 @@ export const dimensions = {
     example: "0.0002 m^2 K/W",
     powers: powers(-1, 0, 3, 1),
   },
-  pressure: { words: "a pressure", unit: "Pa", example: "1.5 bar", powers: powers(1, -1, -2) },
+  pressure: {
+    words: "a pressure",
+    unit: "Pa",
+    example: "1.5 bar",
+    powers: powers(1, -1, -2),
+  },
 } satisfies Readonly<Record<string, Dimension>>;
 
 /** Name of a kind of quantity. */
@@ -125,7 +175,14 @@ export function rateConstantDimension(order: number): Dimension {
     words: `a rate constant of overall order ${rounded(order)}`,
     unit,
     example: `1e-4 ${rateUnit("L", over, 1)}`,
-    powers: { mass: 0, length: 3 * (order - 1), time: -1, temperature: 0, amount: 1 - order, other: false },
+    powers: {
+      mass: 0,
+      length: 3 * (order - 1),
+      time: -1,
+      temperature: 0,
+      amount: 1 - order,
+      other: false,
+    },
   };
 }
 

@@ -10,21 +10,25 @@ export interface FaultBook {
 
 /** A book of faults. */
 export function faultBook(faults: readonly Fault[]): FaultBook {
-  const waiting = new Set(faults);
-  const taken = (chosen: (fault: Fault) => boolean): string[] => {
-    const messages: string[] = [];
-    for (const fault of waiting) {
-      if (!chosen(fault)) continue;
-      waiting.delete(fault);
-      messages.push(fault.message);
-    }
+  const waiting = new Map<string, string[]>();
+  for (const { pointer, message } of faults) {
+    const messages = waiting.get(pointer);
+    if (messages === undefined) waiting.set(pointer, [message]);
+    else messages.push(message);
+  }
+  const taken = (pointer: string): string[] => {
+    const messages = waiting.get(pointer) ?? [];
+    waiting.delete(pointer);
     return messages;
   };
   return {
     take(...pointers) {
-      const messages = taken(({ pointer }) => pointers.includes(pointer));
+      const messages = pointers.flatMap(taken);
       return messages.length === 0 ? undefined : messages.join(". ");
     },
-    takeBelow: (place) => taken(({ pointer }) => pointer === place || pointer.startsWith(`${place}/`)),
+    takeBelow: (place) =>
+      [...waiting.keys()]
+        .filter((pointer) => pointer === place || pointer.startsWith(`${place}/`))
+        .flatMap(taken),
   };
 }

@@ -28,7 +28,10 @@ export function blankCase(): unknown {
  * @param document as typed so far
  */
 export function formOf(document: unknown, faults: readonly Fault[] = []): FormSection[] {
-  const context: FormContext = { faults: faultBook(faults), order: overallOrder(document) };
+  const context: FormContext = {
+    faults: faultBook(faults),
+    order: overallOrder(document),
+  };
   const unused = unusedOf(document);
   const unusedIn = (section: string) =>
     unusedGroup(
@@ -70,7 +73,12 @@ function caseSection(
     if (place.kind === "leaf") return [fieldOf(place, value, [key], context)];
     return place.kind === "group" ? insideOf(place, value, [key], context) : [];
   });
-  return { id: "case", title: "The step", blocks, faults: context.faults.takeBelow("/batch") };
+  return {
+    id: "case",
+    title: "The step",
+    blocks,
+    faults: context.faults.takeBelow("/batch"),
+  };
 }
 
 function sectionOf(

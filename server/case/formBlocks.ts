@@ -1,5 +1,5 @@
 import { pathOf, pointerOf } from "./faults.js";
-import { choicesOf, type FormContext, fieldOf, optional, textOf } from "./formFields.js";
+import { blankOf, choicesOf, type FormContext, fieldOf, optional, textOf } from "./formFields.js";
 import type { FormBlock, FormButton, FormField, FormGroup, FormList } from "./formShape.js";
 import { memberOf, type Place } from "./outline.js";
 
@@ -13,7 +13,7 @@ const rowsAtLeast = 4;
  * The members of a group as blocks of the form: those that the choices made so far call for, and those
  * that hold something.
  */
-export function blocksOf(
+function blocksOf(
   members: ReadonlyMap<string, Place>,
   parent: unknown,
   path: readonly string[],
@@ -84,7 +84,7 @@ export function insideOf(
     label: place.about.choosing ?? teller,
     kind: "choice",
     value: typed,
-    choices: choicesOf(choices, typed, true),
+    choices: choicesOf(choices, typed, blankOf(true)),
     required: place.required,
     ...optional("fault", context.faults.take(pointer)),
   };
@@ -113,7 +113,12 @@ export function listOf(
       blocks: inside,
       faults: context.faults.takeBelow(pointerOf(at)),
       ...(layout === "groups"
-        ? { button: { value: `remove:${pointerOf(at)}`, label: `Remove: ${name} ${i + 1}` } }
+        ? {
+            button: {
+              value: `remove:${pointerOf(at)}`,
+              label: `Remove: ${name} ${i + 1}`,
+            },
+          }
         : {}),
     };
   });
@@ -159,7 +164,10 @@ export function unusedGroup(
       intro: "Left from another choice, or not known here. Clear these fields, or change the choice back",
       blocks,
       faults: [],
-      button: { value: `remove:unused:/${section}`, label: "Clear all that is not used" },
+      button: {
+        value: `remove:unused:/${section}`,
+        label: "Clear all that is not used",
+      },
     },
   ];
 }

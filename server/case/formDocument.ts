@@ -87,7 +87,12 @@ function membersSent(place: Place, sent: Sent): ReadonlyMap<string, Place> {
   return option?.members ?? new Map([[place.teller, wordPlace]]);
 }
 
-const wordPlace: Place = { kind: "word", word: "", required: true, fallback: undefined };
+const wordPlace: Place = {
+  kind: "word",
+  word: "",
+  required: true,
+  fallback: undefined,
+};
 
 /** Rows that are blank vanish; groups stay until they are removed. */
 function listSent(place: Place & { readonly kind: "list" }, sent: Sent): unknown[] | undefined {

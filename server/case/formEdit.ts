@@ -1,7 +1,7 @@
 import { pathOf } from "./faults.js";
 import { unusedOf } from "./formUnused.js";
-import { isGroup } from "./leafReading.js";
 import { memberOf, outline, type Place, placeBelow, valueAt } from "./outline.js";
+import { isGroup } from "./typedParts.js";
 
 /**
  * What a button of the form does to the document: `add:/failures`, `add:/decomposition`,

@@ -2,9 +2,9 @@ import { rateConstantDimension } from "./dimensions.js";
 import type { FaultBook } from "./faultBook.js";
 import { pointerOf } from "./faults.js";
 import type { FormChoice, FormControl, FormField } from "./formShape.js";
-import { bases, isGroup } from "./leafReading.js";
 import type { Leaf } from "./leaves.js";
 import { memberOf, type Place } from "./outline.js";
+import { bases, isGroup } from "./typedParts.js";
 
 /** What every part of the form is built with. */
 export interface FormContext {
@@ -37,7 +37,11 @@ export function fieldOf(
     label: leaf.label,
     kind: leaf.kind === "rate" ? "quantity" : leaf.kind === "rateUnit" ? "text" : leaf.kind,
     value: text,
-    ...(leaf.kind === "choice" ? { choices: choicesOf(leaf.choices, text, place.required) } : {}),
+    ...(leaf.kind === "choice"
+      ? {
+          choices: choicesOf(leaf.choices, text, leaf.blank ?? blankOf(place.required)),
+        }
+      : {}),
     ...optional("unitHint", unitHintOf(leaf, path, context)),
     ...optional("hint", hint === "" ? undefined : hint),
     required: place.required,
@@ -73,7 +77,7 @@ function detailOf(
       label: `${label}: ${leaf.label}`,
       value: text,
       kind: isChoice ? "choice" : "text",
-      ...(isChoice ? { choices: choicesOf(bases, text, false) } : {}),
+      ...(isChoice ? { choices: choicesOf(bases, text, blankOf(false)) } : {}),
       ...optional("fault", faults.take(name)),
     };
   };
@@ -86,17 +90,24 @@ function detailOf(
   return { standardError, basis, source, used };
 }
 
+/** What the words of a choice say where none was chosen. */
+export function blankOf(required: boolean): string {
+  return required ? "Choose" : "Not said";
+}
+
 /** The words of a choice; one that was typed but is not among them stays, so that it can be seen. */
 export function choicesOf(
   choices: Readonly<Record<string, string>>,
   typed: string,
-  required: boolean,
+  blank: string,
 ): FormChoice[] {
-  const known = Object.entries(choices).map(([value, label]) => ({ value, label }));
-  const blank = { value: "", label: required ? "Choose" : "Not said" };
+  const known = Object.entries(choices).map(([value, label]) => ({
+    value,
+    label,
+  }));
   const strange =
     typed === "" || Object.hasOwn(choices, typed) ? [] : [{ value: typed, label: `${typed} (unknown)` }];
-  return [blank, ...known, ...strange];
+  return [{ value: "", label: blank }, ...known, ...strange];
 }
 
 function unitHintOf(leaf: Leaf, path: readonly string[], { order }: FormContext): string | undefined {

@@ -1,7 +1,7 @@
-import { isGroup } from "./leafReading.js";
 import type { Leaf } from "./leaves.js";
 import { memberOf, membersOf, outline, type Place } from "./outline.js";
 import { caseFormat } from "./schema.js";
+import { isGroup } from "./typedParts.js";
 
 /** More than anyone clears by hand. */
 const most = 300;

@@ -1,8 +1,9 @@
 import type { InputNote } from "../screening/model.js";
 import { pointerOf } from "./faults.js";
-import { type Basis, bases, isGroup } from "./leafReading.js";
+import type { Leaf } from "./leaves.js";
 import { memberOf, type Place } from "./outline.js";
 import { visitLeaves } from "./typed.js";
+import { type Basis, bases, isGroup } from "./typedParts.js";
 
 /**
  * How every quantity of an accepted document is known, in the order of the schema: as typed, with its
@@ -15,7 +16,7 @@ export function inputNotes(document: unknown): InputNote[] {
     if (!isQuantity && leaf.kind !== "number") return;
     notes.push({
       pointer: pointerOf(path),
-      label: labelOf(leaf.label, path, groups),
+      label: labelOf(leaf, path, groups),
       ...notesOf(value),
     });
   });
@@ -23,7 +24,7 @@ export function inputNotes(document: unknown): InputNote[] {
 }
 
 /** `Mass` of the feed as "mass of the feed"; entries of lists with their number. */
-export function labelOf(label: string, path: readonly string[], groups: readonly Place[]): string {
+export function labelOf(leaf: Leaf, path: readonly string[], groups: readonly Place[]): string {
   const of = groups.flatMap((place) =>
     (place.kind === "group" || place.kind === "variants") && place.about.of !== undefined
       ? [place.about.of]
@@ -33,7 +34,7 @@ export function labelOf(label: string, path: readonly string[], groups: readonly
   const entries = groups.flatMap((place, depth) =>
     place.kind === "list" ? [`${lowered(place.about.entry)} ${Number(path[depth]) + 1}`] : [],
   );
-  const name = `${lowered(label)}${suffix}`;
+  const name = leaf.alone ?? `${lowered(leaf.label)}${suffix}`;
   return entries.length === 0 ? name : `${name}, ${entries.join(", ")}`;
 }
 
@@ -43,7 +44,13 @@ function lowered(label: string): string {
 }
 
 function notesOf(typed: unknown): Omit<InputNote, "pointer" | "label"> {
-  if (!isGroup(typed)) return { text: String(typed), standardErrorText: null, basis: null, source: null };
+  if (!isGroup(typed))
+    return {
+      text: String(typed),
+      standardErrorText: null,
+      basis: null,
+      source: null,
+    };
   const inner = isGroup(typed.value) ? typed.value : null;
   const part = (key: string) => memberOf(typed, key) ?? memberOf(inner, key);
   const basis = part("basis");
@@ -51,7 +58,8 @@ function notesOf(typed: unknown): Omit<InputNote, "pointer" | "label"> {
     text: textOf(inner === null ? typed.value : inner.value) ?? "",
     standardErrorText: textOf(part("standardError")),
     basis: isBasis(basis) ? basis : null,
-    source: textOf(part("source")),
+    // The basis of a limit is told in any words: to a reader that is where the figure comes from.
+    source: textOf(part("source")) ?? (isBasis(basis) ? null : textOf(basis)),
   };
 }
 

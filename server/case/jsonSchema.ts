@@ -1,7 +1,7 @@
 import { z } from "zod";
-import { bases } from "./leafReading.js";
 import { type Leaf, leaves } from "./leaves.js";
 import { caseSchema } from "./schema.js";
+import { bases } from "./typedParts.js";
 
 type JsonSchema = z.core.JSONSchema.BaseSchema;
 
@@ -22,7 +22,10 @@ export function caseJsonSchema(): object {
 }
 
 function leafJsonSchema(leaf: Leaf): JsonSchema {
-  const about = { title: leaf.label, ...(leaf.hint === undefined ? {} : { description: leaf.hint }) };
+  const about = {
+    title: leaf.label,
+    ...(leaf.hint === undefined ? {} : { description: leaf.hint }),
+  };
   switch (leaf.kind) {
     case "text":
     case "rateUnit":

@@ -2,49 +2,53 @@ import { z } from "zod";
 import type { Estimate } from "../numeric/estimate.js";
 import { type Dimension, dimensions, type Kind } from "./dimensions.js";
 import { cameAs } from "./faults.js";
+import { type Range, readEstimatedNumber, readNumber, type TypedNumber } from "./typedNumbers.js";
+import { isWord, meant, oneOf, type Report, readText } from "./typedParts.js";
 import {
-  isWord,
   type Limit,
-  meant,
-  oneOf,
-  type Range,
-  type Report,
   readEstimate,
-  readEstimatedNumber,
   readLimit,
-  readNumber,
   readParts,
-  readText,
   type Sign,
   type TypedLimit,
-  type TypedNumber,
   type TypedQuantity,
   type TypedRate,
-} from "./leafReading.js";
+} from "./typedQuantities.js";
+
+/** More about a field than its label. */
+interface About {
+  readonly hint?: string;
+  /** its name where it stands alone, without its group: "heat of reaction" */
+  readonly alone?: string;
+  /** what a choice that was not made means: "As it was" */
+  readonly blank?: string;
+}
 
 /** What a form, a sheet or a fault must know about a field that holds one typed thing. */
-export type Leaf = {
+export type Leaf = About & {
   /** as the form names it: "Heat transfer coefficient" */
   readonly label: string;
-  readonly hint?: string;
 } & (
-  | { readonly kind: "text" }
-  | { readonly kind: "choice"; readonly choices: Readonly<Record<string, string>> }
-  /** a number without dimension; `estimated` ones may carry a standard error */
-  | { readonly kind: "number"; readonly estimated: boolean }
-  /** `freeBasis`: its basis is any text, not one of the three words */
-  | {
-      readonly kind: "quantity";
-      readonly dimension: Dimension;
-      readonly freeBasis?: true;
-      /** a word that may stand instead of the quantity */
-      readonly word?: string;
-    }
-  /** a quantity whose dimension depends on the order of its rate law */
-  | { readonly kind: "rate" }
-  /** the unit of a rate constant alone */
-  | { readonly kind: "rateUnit" }
-);
+    | { readonly kind: "text" }
+    | {
+        readonly kind: "choice";
+        readonly choices: Readonly<Record<string, string>>;
+      }
+    /** a number without dimension; `estimated` ones may carry a standard error */
+    | { readonly kind: "number"; readonly estimated: boolean }
+    /** `freeBasis`: its basis is any text, not one of the three words */
+    | {
+        readonly kind: "quantity";
+        readonly dimension: Dimension;
+        readonly freeBasis?: true;
+        /** a word that may stand instead of the quantity */
+        readonly word?: string;
+      }
+    /** a quantity whose dimension depends on the order of its rate law */
+    | { readonly kind: "rate" }
+    /** the unit of a rate constant alone */
+    | { readonly kind: "rateUnit" }
+  );
 
 /** Every leaf of the schema with what is known about it. */
 export const leaves = z.registry<Leaf>();
@@ -67,8 +71,8 @@ function leafSchema<Typed, Read>(leaf: Leaf, read: (typed: unknown, report: Repo
 }
 
 /** Free text of one line or more, at least one character. */
-export function text(label: string, hint?: string) {
-  return leafSchema<string, string>({ kind: "text", label, ...given({ hint }) }, (typed, report) =>
+export function text(label: string, about: About = {}) {
+  return leafSchema<string, string>({ kind: "text", label, ...about }, (typed, report) =>
     readText(typed, "text", report),
   );
 }
@@ -77,10 +81,10 @@ export function text(label: string, hint?: string) {
 export function choice<const Choices extends Readonly<Record<string, string>>>(
   label: string,
   choices: Choices,
-  hint?: string,
+  about: About = {},
 ) {
   type Word = Extract<keyof Choices, string>;
-  return leafSchema<Word, Word>({ kind: "choice", label, choices, ...given({ hint }) }, (typed, report) => {
+  return leafSchema<Word, Word>({ kind: "choice", label, choices, ...about }, (typed, report) => {
     const words = Object.keys(choices);
     if (isWord(typed, choices)) return typed;
     report(`${cameAs(typed)}; expected ${oneOf(words)}${meant(typed, words)}`);
@@ -89,59 +93,62 @@ export function choice<const Choices extends Readonly<Record<string, string>>>(
 }
 
 /** A quantity with a dimension: text with its unit, or an object with its error, source and basis. */
-export function quantity(kind: Kind, label: string, options: { sign?: Sign; hint?: string } = {}) {
+export function quantity(
+  kind: Kind,
+  label: string,
+  { sign, ...about }: About & { readonly sign?: Sign } = {},
+) {
   const dimension: Dimension = dimensions[kind];
-  const sign = options.sign ?? (dimension.absolute === true ? "any" : "positive");
+  const bound = sign ?? (dimension.absolute === true ? "any" : "positive");
   return leafSchema<TypedQuantity, Estimate>(
-    { kind: "quantity", label, dimension, ...given({ hint: options.hint }) },
-    (typed, report) => readEstimate(typed, dimension, sign, report),
+    { kind: "quantity", label, dimension, ...about },
+    (typed, report) => readEstimate(typed, dimension, bound, report),
   );
 }
 
 /** A number without dimension that is taken as it is. */
-export function plain(label: string, range: Range, hint?: string) {
-  return leafSchema<number, number>(
-    { kind: "number", label, estimated: false, ...given({ hint }) },
-    (typed, report) => readNumber(typed, range, report),
+export function plain(label: string, range: Range, about: About = {}) {
+  return leafSchema<number, number>({ kind: "number", label, estimated: false, ...about }, (typed, report) =>
+    readNumber(typed, range, report),
   );
 }
 
 /** A number without dimension that may carry a standard error. */
-export function estimatedNumber(label: string, range: Range, hint?: string) {
+export function estimatedNumber(label: string, range: Range, about: About = {}) {
   return leafSchema<TypedNumber, Estimate>(
-    { kind: "number", label, estimated: true, ...given({ hint }) },
+    { kind: "number", label, estimated: true, ...about },
     (typed, report) => readEstimatedNumber(typed, range, report),
   );
 }
 
 /** A rate constant, or a pre-exponential factor: its unit follows from the order of its rate law. */
-export function rate(label: string, hint?: string) {
-  return leafSchema<TypedQuantity, TypedRate>({ kind: "rate", label, ...given({ hint }) }, (typed, report) =>
+export function rate(label: string, about: About = {}) {
+  return leafSchema<TypedQuantity, TypedRate>({ kind: "rate", label, ...about }, (typed, report) =>
     readParts(typed, 'a rate constant with its unit, such as "2.4e-5 1/s"', report),
   );
 }
 
 /** The unit in which a logarithm of a rate constant was taken. */
-export function rateUnit(label: string, hint?: string) {
-  return leafSchema<string, string>({ kind: "rateUnit", label, ...given({ hint }) }, (typed, report) =>
+export function rateUnit(label: string, about: About = {}) {
+  return leafSchema<string, string>({ kind: "rateUnit", label, ...about }, (typed, report) =>
     readText(typed, 'the unit of a rate constant, such as "1/s"', report),
   );
 }
 
 /** A limit whose basis is told in any words: "boiling point at 1 atm". */
-export function limit(kind: Kind, label: string, hint?: string) {
+export function limit(kind: Kind, label: string, about: About = {}) {
   const dimension: Dimension = dimensions[kind];
   return leafSchema<TypedLimit, Limit>(
-    { kind: "quantity", label, dimension, freeBasis: true, ...given({ hint }) },
+    { kind: "quantity", label, dimension, freeBasis: true, ...about },
     (typed, report) => readLimit(typed, dimension, report),
   );
 }
 
 /** A moment: a time of zero or more, or the one that turns out worst. */
-export function timeOrWorst(label: string, hint?: string) {
+export function timeOrWorst(label: string, about: About = {}) {
   const dimension: Dimension = dimensions.time;
   return leafSchema<TypedQuantity, Estimate | "worst">(
-    { kind: "quantity", label, dimension, word: "worst", ...given({ hint }) },
+    { kind: "quantity", label, dimension, word: "worst", ...about },
     (typed, report) => {
       if (typed === "worst") return typed;
       return readEstimate(typed, dimension, "notNegative", (message, ...path) =>
@@ -149,16 +156,4 @@ export function timeOrWorst(label: string, hint?: string) {
       );
     },
   );
-}
-
-/** An object without the keys whose value is undefined. */
-function given<Parts extends Readonly<Record<string, string | undefined>>>(
-  parts: Parts,
-): { readonly [Key in keyof Parts]?: string } {
-  const kept: { [Key in keyof Parts]?: string } = {};
-  for (const key in parts) {
-    const part = parts[key];
-    if (part !== undefined) kept[key] = part;
-  }
-  return kept;
 }

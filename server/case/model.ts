@@ -38,7 +38,15 @@ function reactionOf(reaction: CaseFigures["reaction"]): ReactionModel {
     operation: reaction.operation,
     temperature: reaction.temperature,
     a: { name: A.name ?? null, amount: A.amount, order: A.order },
-    b: B === undefined ? null : { name: B.name ?? null, amount: B.amount, order: B.order, perA: B.perA },
+    b:
+      B === undefined
+        ? null
+        : {
+            name: B.name ?? null,
+            amount: B.amount,
+            order: B.order,
+            perA: B.perA,
+          },
     feed: reaction.feed ?? null,
     heat: reaction.heat,
     rateConstant: reaction.rateConstant === undefined ? null : rateConstantOf(reaction.rateConstant, order),
@@ -63,7 +71,11 @@ function decompositionOf(decomposition: NonNullable<CaseFigures["decomposition"]
     rateLaw:
       rateLaw.model === "autocatalytic"
         ? rateLaw
-        : { ...rateLaw, productOrder: { value: 1, standardError: null }, initiation: none },
+        : {
+            ...rateLaw,
+            productOrder: { value: 1, standardError: null },
+            initiation: none,
+          },
     rateConstant: decompositionRateOf(decomposition.rateConstant),
   };
 }
@@ -76,7 +88,10 @@ function vesselOf(vessel: CaseFigures["vessel"]): VesselModel {
     heatTransferArea: vessel.heatTransferArea,
     agitatorPower: vessel.agitatorPower,
     heatGain: vessel.heatGain ?? null,
-    coolant: { temperature, flowing: flowing ? { flow, heatCapacity, holdup } : null },
+    coolant: {
+      temperature,
+      flowing: flowing ? { flow, heatCapacity, holdup } : null,
+    },
   };
 }
 
@@ -142,5 +157,7 @@ function defined<Parts extends object>(
   parts: Parts,
 ): { [Key in keyof Parts]: Exclude<Parts[Key], undefined> } {
   const kept = Object.entries(parts).filter(([, part]) => part !== undefined);
-  return Object.fromEntries(kept) as { [Key in keyof Parts]: Exclude<Parts[Key], undefined> };
+  return Object.fromEntries(kept) as {
+    [Key in keyof Parts]: Exclude<Parts[Key], undefined>;
+  };
 }

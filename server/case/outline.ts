@@ -6,11 +6,18 @@ import { caseSchema } from "./schema.js";
 type Schema = z.core.$ZodType;
 
 /** One place of the schema, as the form and the faults look at it. */
-export type Place = { readonly required: boolean; readonly fallback: unknown } & (
+export type Place = {
+  readonly required: boolean;
+  readonly fallback: unknown;
+} & (
   | { readonly kind: "leaf"; readonly leaf: Leaf }
   /** one fixed word */
   | { readonly kind: "word"; readonly word: string }
-  | { readonly kind: "group"; readonly about: Group; readonly members: ReadonlyMap<string, Place> }
+  | {
+      readonly kind: "group";
+      readonly about: Group;
+      readonly members: ReadonlyMap<string, Place>;
+    }
   /** groups of which a word inside tells which one it is */
   | {
       readonly kind: "variants";
@@ -53,8 +60,19 @@ function placeOf(schema: Schema, required: boolean, fallback: unknown): Place {
     return { ...whether, kind: "variants", about, teller, options };
   }
   if (schema instanceof z.ZodArray) {
-    const about = lists.get(schema) ?? { title: "", entry: "", layout: "groups", atLeast: 0, atMost: 0 };
-    return { ...whether, kind: "list", about, entry: placeOf(schema.element, true, undefined) };
+    const about = lists.get(schema) ?? {
+      title: "",
+      entry: "",
+      layout: "groups",
+      atLeast: 0,
+      atMost: 0,
+    };
+    return {
+      ...whether,
+      kind: "list",
+      about,
+      entry: placeOf(schema.element, true, undefined),
+    };
   }
   if (schema instanceof z.ZodTuple) {
     return {

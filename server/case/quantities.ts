@@ -111,7 +111,10 @@ function secondNumber(text: string, wanted: string): string {
 function readNumber(plain: string): { number: number; rest: string } | null {
   const bare = powerOfTen.exec(plain);
   if (bare !== null) {
-    return { number: Number(`${bare[1]}1e${bare[2]}`), rest: plain.slice(bare[0].length) };
+    return {
+      number: Number(`${bare[1]}1e${bare[2]}`),
+      rest: plain.slice(bare[0].length),
+    };
   }
   const match = leadingNumber.exec(plain);
   if (match === null) return null;

@@ -1,8 +1,8 @@
 import type { DecompositionRate, RateConstant, TableRow } from "../kinetics/parameters.js";
 import type { Estimate } from "../numeric/estimate.js";
-import type { TypedRate } from "./leafReading.js";
 import { readRate, readRateUnit } from "./rates.js";
 import type { CaseFigures } from "./schema.js";
+import type { TypedRate } from "./typedQuantities.js";
 
 type Figures = NonNullable<CaseFigures["reaction"]["rateConstant"]>;
 type DecompositionFigures = NonNullable<CaseFigures["decomposition"]>["rateConstant"];

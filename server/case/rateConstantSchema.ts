@@ -3,38 +3,56 @@ import { group, list, variants } from "./groups.js";
 import { choice, estimatedNumber, plain, quantity, rate, rateUnit, text } from "./leaves.js";
 
 const fittedRange = z
-  .tuple([quantity("temperature", "Fitted from"), quantity("temperature", "Fitted up to")])
+  .tuple([
+    quantity("temperature", "Fitted from", {
+      alone: "lowest temperature of the fit",
+    }),
+    quantity("temperature", "Fitted up to", {
+      alone: "highest temperature of the fit",
+    }),
+  ])
   .optional();
 
 const fitted = {
   correlation: plain(
     "Correlation of the two parameters",
     { above: -1, below: 1 },
-    "As the fit printed it, between −1 and 1",
+    {
+      hint: "As the fit printed it, between −1 and 1",
+      alone: "correlation of the fit",
+    },
   ).optional(),
   fittedRange,
   points: plain(
     "Number of rate constants fitted",
     { atLeast: 3, whole: true },
-    "Sets the width of the interval",
+    { hint: "Sets the width of the interval" },
   ).optional(),
   viscosity: quantity("viscosity", "Viscosity of the medium", {
     hint: "For the diffusion limit; that of water where empty",
   }).optional(),
 };
 
-const activationEnergy = quantity("molarEnergy", "Activation energy", { sign: "any" });
+const activationEnergy = quantity("molarEnergy", "Activation energy", {
+  sign: "any",
+});
 
 const eyring = group(
   { title: "Eyring: activation enthalpy and entropy" },
   {
     form: z.literal("eyring"),
-    activationEnthalpy: quantity("molarEnergy", "Activation enthalpy", { sign: "any" }),
-    activationEntropy: quantity("molarEntropy", "Activation entropy", { sign: "any" }),
-    standardConcentration: quantity("concentration", "Standard concentration of the entropy").prefault(
-      "1 mol/L",
-    ),
-    transmissionCoefficient: plain("Transmission coefficient", { above: 0 }).prefault(1),
+    activationEnthalpy: quantity("molarEnergy", "Activation enthalpy", {
+      sign: "any",
+    }),
+    activationEntropy: quantity("molarEntropy", "Activation entropy", {
+      sign: "any",
+    }),
+    standardConcentration: quantity("concentration", "Standard concentration of the entropy", {
+      alone: "standard concentration",
+    }).prefault("1 mol/L"),
+    transmissionCoefficient: plain("Transmission coefficient", {
+      above: 0,
+    }).prefault(1),
     ...fitted,
   },
 );
@@ -68,7 +86,9 @@ const reference = group(
   {
     form: z.literal("reference"),
     rateConstant: rate("Rate constant"),
-    at: quantity("temperature", "At the temperature"),
+    at: quantity("temperature", "At the temperature", {
+      alone: "reference temperature",
+    }),
     activationEnergy,
     fittedRange,
   },
@@ -79,8 +99,16 @@ const row = group(
   {
     temperature: quantity("temperature", "Temperature"),
     rateConstant: rate("Rate constant"),
-    relativeError: plain("Relative error", { above: 0 }, "Standard error over the rate constant").optional(),
-    leftOut: text("Left out because", "A reason takes the row out of the fit").optional(),
+    relativeError: plain(
+      "Relative error",
+      { above: 0 },
+      {
+        hint: "Standard error over the rate constant",
+      },
+    ).optional(),
+    leftOut: text("Left out because", {
+      hint: "A reason takes the row out of the fit",
+    }).optional(),
   },
 );
 
@@ -111,7 +139,9 @@ const heatRate = group(
     heatReleaseRate: quantity("specificPower", "Heat release rate", {
       hint: "Initial rate of an order law, largest isothermal rate of an autocatalytic one",
     }),
-    at: quantity("temperature", "At the temperature"),
+    at: quantity("temperature", "At the temperature", {
+      alone: "reference temperature",
+    }),
     activationEnergy,
   },
 );
@@ -149,18 +179,26 @@ const decompositionOrder = { atLeast: 0, atMost: 3 };
 export const rateLaw = variants({ title: "Rate law", choosing: "Model" }, "model", [
   group(
     { title: "Order: the rate falls as material is used up" },
-    { model: z.literal("order"), order: estimatedNumber("Order", decompositionOrder).prefault(1) },
+    {
+      model: z.literal("order"),
+      order: estimatedNumber("Order", decompositionOrder).prefault(1),
+    },
   ),
   group(
     { title: "Autocatalytic: the products speed it up" },
     {
       model: z.literal("autocatalytic"),
       order: estimatedNumber("Order", decompositionOrder).prefault(1),
-      productOrder: estimatedNumber("Order in the products", { above: 0, atMost: 3 }).prefault(1),
+      productOrder: estimatedNumber("Order in the products", {
+        above: 0,
+        atMost: 3,
+      }).prefault(1),
       initiation: estimatedNumber(
         "Initiation",
         { above: 0 },
-        "The w of (1 − α)ⁿ (w + αᵐ): how much of the rate is there at the start",
+        {
+          hint: "The w of (1 − α)ⁿ (w + αᵐ): how much of the rate is there at the start",
+        },
       ),
     },
   ),

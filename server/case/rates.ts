@@ -1,7 +1,7 @@
 import type { Estimate } from "../numeric/estimate.js";
 import { type Dimension, rateConstantDimension } from "./dimensions.js";
-import type { TypedRate } from "./leafReading.js";
 import { readQuantity, readUnit } from "./quantities.js";
+import type { TypedRate } from "./typedQuantities.js";
 
 /** A rate constant in SI, or what is wrong with it. */
 export type RateReading =
@@ -12,7 +12,11 @@ export type RateReading =
       /** ln k, its standard error that of k over k */
       readonly lnK: Estimate;
     }
-  | { readonly ok: false; readonly part: "value" | "standardError"; readonly message: string };
+  | {
+      readonly ok: false;
+      readonly part: "value" | "standardError";
+      readonly message: string;
+    };
 
 /**
  * Reads a rate constant or a pre-exponential factor.
@@ -32,7 +36,11 @@ export function readRate(typed: TypedRate, order: number): RateReading {
     };
   }
   if (typed.standardError === null) {
-    return { ok: true, k: { value, standardError: null }, lnK: { value: ln, standardError: null } };
+    return {
+      ok: true,
+      k: { value, standardError: null },
+      lnK: { value: ln, standardError: null },
+    };
   }
   return withError(value, ln, typed.standardError, dimension);
 }
@@ -51,7 +59,10 @@ function withError(value: number, ln: number, typed: string, dimension: Dimensio
   return {
     ok: true,
     k: { value, standardError: error.value },
-    lnK: { value: ln, standardError: error.value === 0 ? 0 : Math.exp(error.ln - ln) },
+    lnK: {
+      value: ln,
+      standardError: error.value === 0 ? 0 : Math.exp(error.ln - ln),
+    },
   };
 }
 

@@ -11,7 +11,9 @@ const reactants = group(
       { title: "Reactant A", of: "of A" },
       {
         name: text("Name").optional(),
-        amount: quantity("amount", "Amount", { hint: "All of it, whether charged or fed" }),
+        amount: quantity("amount", "Amount", {
+          hint: "All of it, whether charged or fed",
+        }),
         order: estimatedNumber("Order", reactionOrder).prefault(1),
       },
     ),
@@ -19,9 +21,15 @@ const reactants = group(
       { title: "Reactant B", of: "of B" },
       {
         name: text("Name").optional(),
-        amount: quantity("amount", "Amount", { hint: "All of it, whether charged or fed" }),
+        amount: quantity("amount", "Amount", {
+          hint: "All of it, whether charged or fed",
+        }),
         order: estimatedNumber("Order", reactionOrder).prefault(1),
-        perA: estimatedNumber("Mol of B per mol of A", { above: 0 }).prefault(1),
+        perA: estimatedNumber(
+          "Mol of B per mol of A",
+          { above: 0 },
+          { alone: "mol of B per mol of A" },
+        ).prefault(1),
       },
     ).optional(),
   },
@@ -67,7 +75,10 @@ const measuredAccumulation = group(
         { title: "Row" },
         {
           time: quantity("time", "Time", { sign: "notNegative" }),
-          releasedFraction: plain("Released fraction", { atLeast: 0, atMost: 1 }),
+          releasedFraction: plain("Released fraction", {
+            atLeast: 0,
+            atMost: 1,
+          }),
         },
       ),
     ),
@@ -83,11 +94,14 @@ export const reaction = group(
       batch: "Batch: everything is in the vessel at the start",
       semibatch: "Semibatch: one reactant is fed",
     }),
-    temperature: quantity("temperature", "Process temperature"),
+    temperature: quantity("temperature", "Process temperature", {
+      alone: "process temperature",
+    }),
     reactants,
     feed: feed.optional(),
     heat: quantity("molarEnergy", "Heat of reaction", {
       sign: "exothermic",
+      alone: "heat of reaction",
       hint: "Per mol of A; negative, because heat leaves",
     }),
     rateConstant: rateConstant.optional(),
@@ -104,7 +118,10 @@ export const decomposition = group(
     adding: "Add a decomposition",
   },
   {
-    heat: quantity("specificEnergy", "Heat of decomposition", { hint: "Per mass of mixture; positive" }),
+    heat: quantity("specificEnergy", "Heat of decomposition", {
+      alone: "heat of decomposition",
+      hint: "Per mass of mixture; positive",
+    }),
     rateLaw,
     rateConstant: decompositionRateConstant,
   },

@@ -47,7 +47,13 @@ export function readCase(document: unknown): ReadCase {
     return { ok: false, faults: limited(faults), kind: "case" };
   }
   const model = modelOf(parsed.data, document);
-  return { ok: true, document, model, digest: digestOf(document), figures: parsed.data };
+  return {
+    ok: true,
+    document,
+    model,
+    digest: digestOf(document),
+    figures: parsed.data,
+  };
 }
 
 /** A document that the schema and the rules found nothing wrong with is a case document. */

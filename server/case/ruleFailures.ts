@@ -1,7 +1,7 @@
-import { isGroup } from "./leafReading.js";
 import { memberOf, valueAt } from "./outline.js";
 import type { ReportAt } from "./rules.js";
 import { figureTyped } from "./typed.js";
+import { isGroup } from "./typedParts.js";
 
 /** Timelines that can be run, and slips that change something. */
 export function failureRules(document: unknown, report: ReportAt): void {

@@ -1,8 +1,8 @@
-import type { TypedRate } from "./leafReading.js";
 import { memberOf, valueAt } from "./outline.js";
 import { readRate, readRateUnit } from "./rates.js";
 import type { ReportAt } from "./rules.js";
 import { figureTyped, overallOrder, rateTyped, visitLeaves } from "./typed.js";
+import type { TypedRate } from "./typedQuantities.js";
 
 /** Rate constants against the order of their rate laws, and what belongs to their forms. */
 export function rateFaults(document: unknown, report: ReportAt): void {

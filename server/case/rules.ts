@@ -1,11 +1,11 @@
 import type { Fault } from "./faults.js";
 import { pointerOf } from "./faults.js";
-import { isGroup } from "./leafReading.js";
 import { memberOf, valueAt } from "./outline.js";
 import { failureRules } from "./ruleFailures.js";
 import { helperRules } from "./ruleHelpers.js";
 import { rateFaults } from "./ruleRates.js";
 import { figureTyped } from "./typed.js";
+import { isGroup } from "./typedParts.js";
 
 /** Reports a fault of the field at a path. */
 export type ReportAt = (path: readonly PropertyKey[], message: string) => void;

@@ -7,6 +7,7 @@ import { limits, vessel } from "./vesselSchema.js";
 /** The one format there is. */
 export const caseFormat = "thermal-window/case-1";
 
+const full = { hint: "1 full, 0 none" };
 const factor = { atLeast: 0, atMost: 1 };
 
 const quench = group(
@@ -22,17 +23,23 @@ const quench = group(
 const change = group(
   { title: "Change" },
   {
-    after: quantity("time", "After", { sign: "notNegative", hint: "From the failure on; the first at 0" }),
-    coolantFlow: plain("Coolant flow", factor, "1 full, 0 none").optional(),
-    heatTransfer: plain("Heat transfer", factor, "1 full, 0 none").optional(),
+    after: quantity("time", "After", {
+      sign: "notNegative",
+      hint: "From the failure on; the first at 0",
+    }),
+    coolantFlow: plain("Coolant flow", factor, full).optional(),
+    heatTransfer: plain("Heat transfer", factor, full).optional(),
     coolantTemperature: quantity("temperature", "Coolant temperature").optional(),
-    feed: choice("Feed", { stop: "Stops", continue: "Runs on" }).optional(),
+    feed: choice("Feed", { stop: "Stops", continue: "Runs on" }, { blank: "As it was" }).optional(),
     agitator: choice(
       "Agitator",
       { on: "On", off: "Off" },
-      "Off: say what is left of the heat transfer",
+      {
+        blank: "As it was",
+        hint: "Off: say what is left of the heat transfer",
+      },
     ).optional(),
-    mixing: plain("Mixing", factor, "1 full, 0 none").optional(),
+    mixing: plain("Mixing", factor, full).optional(),
     quench: quench.optional(),
   },
 );
@@ -41,10 +48,9 @@ const failure = group(
   { title: "Failure" },
   {
     name: text("Name"),
-    at: timeOrWorst(
-      "Begins at",
-      "A time from the start of the feed or the reaction, or the word worst",
-    ).prefault("worst"),
+    at: timeOrWorst("Begins at", {
+      hint: "A time from the start of the feed or the reaction, or the word worst",
+    }).prefault("worst"),
     startTemperature: quantity("temperature", "Temperature at the failure", {
       hint: "The process temperature where empty",
     }).optional(),
@@ -52,7 +58,11 @@ const failure = group(
       hint: "Never less than 24 h beyond the last change",
     }).optional(),
     response: group(
-      { title: "Response", of: "of the response", intro: "How long people take" },
+      {
+        title: "Response",
+        of: "of the response",
+        intro: "How long people take",
+      },
       {
         detection: quantity("time", "Detection", { sign: "notNegative" }),
         decision: quantity("time", "Decision", { sign: "notNegative" }),
@@ -79,14 +89,32 @@ const slip = group(
     name: text("Name"),
     chargeOfA: plain("Amount of A, times", { above: 0 }).optional(),
     chargeOfB: plain("Amount of B, times", { above: 0 }).optional(),
-    fedAmount: plain("Fed amount, times", { above: 0 }, "The reactant in the feed, with its mass").optional(),
-    solvent: plain("Solvent, times", { above: 0 }, "The mass charged, the amounts as they are").optional(),
+    fedAmount: plain(
+      "Fed amount, times",
+      { above: 0 },
+      {
+        hint: "The reactant in the feed, with its mass",
+      },
+    ).optional(),
+    solvent: plain(
+      "Solvent, times",
+      { above: 0 },
+      {
+        hint: "The mass charged, the amounts as they are",
+      },
+    ).optional(),
     rate: plain("Rate constant, times", { above: 0 }).optional(),
     feedDuration: plain("Duration of the feed, times", { above: 0 }).optional(),
     heatTransfer: plain("Heat transfer, times", { atLeast: 0 }).optional(),
-    feedTemperature: quantity("temperatureDifference", "Feed warmer by", { sign: "any" }).optional(),
-    temperature: quantity("temperatureDifference", "Process warmer by", { sign: "any" }).optional(),
-    coolantTemperature: quantity("temperatureDifference", "Coolant warmer by", { sign: "any" }).optional(),
+    feedTemperature: quantity("temperatureDifference", "Feed warmer by", {
+      sign: "any",
+    }).optional(),
+    temperature: quantity("temperatureDifference", "Process warmer by", {
+      sign: "any",
+    }).optional(),
+    coolantTemperature: quantity("temperatureDifference", "Coolant warmer by", {
+      sign: "any",
+    }).optional(),
   },
 );
 
@@ -107,7 +135,11 @@ export const caseSchema = group(
       },
     ).optional(),
     mixture: group(
-      { title: "Mixture", of: "of the mixture", intro: "The contents before any feed" },
+      {
+        title: "Mixture",
+        of: "of the mixture",
+        intro: "The contents before any feed",
+      },
       {
         mass: quantity("mass", "Mass"),
         density: quantity("density", "Density"),
@@ -115,7 +147,10 @@ export const caseSchema = group(
         thermalInertia: estimatedNumber(
           "Thermal inertia",
           { atLeast: 1 },
-          "1: the walls take up no heat, the cautious case",
+          {
+            alone: "thermal inertia",
+            hint: "1: the walls take up no heat, the cautious case",
+          },
         ).prefault(1),
       },
     ),

@@ -1,7 +1,7 @@
 import type { z } from "zod";
 import { cameAs, type Fault, pointerOf, shortened } from "./faults.js";
-import { oneOf, unknownKey } from "./leafReading.js";
 import { membersOf, outline, type Place, placeBelow, valueAt } from "./outline.js";
+import { oneOf, unknownKey } from "./typedParts.js";
 
 /**
  * The schema's complaints in our words: what came, what was expected, what would do.

@@ -1,8 +1,9 @@
 import { dimensions, type Kind } from "./dimensions.js";
-import { isGroup, type TypedRate } from "./leafReading.js";
 import type { Leaf } from "./leaves.js";
 import { memberOf, outline, type Place, placeBelow, valueAt } from "./outline.js";
 import { readQuantity } from "./quantities.js";
+import { isGroup } from "./typedParts.js";
+import type { TypedRate } from "./typedQuantities.js";
 
 /** Called for everything typed that stands where the schema has a leaf. */
 export type Visit = (leaf: Leaf, value: unknown, path: readonly string[], groups: readonly Place[]) => void;
@@ -47,7 +48,7 @@ function variantMembers(place: Place, value: unknown): ReadonlyMap<string, Place
 }
 
 /** The figure of something typed as a number, with or without its error; null where it is none. */
-export function numberTyped(typed: unknown): number | null {
+function numberTyped(typed: unknown): number | null {
   const value = isGroup(typed) ? typed.value : typed;
   return typeof value === "number" && Number.isFinite(value) ? value : null;
 }
@@ -65,7 +66,10 @@ export function rateTyped(typed: unknown): TypedRate | null {
   if (typeof typed === "string") return { value: typed, standardError: null };
   if (!isGroup(typed) || typeof typed.value !== "string") return null;
   const { value, standardError } = typed;
-  return { value, standardError: typeof standardError === "string" ? standardError : null };
+  return {
+    value,
+    standardError: typeof standardError === "string" ? standardError : null,
+  };
 }
 
 /**

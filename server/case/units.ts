@@ -29,7 +29,11 @@ export interface Powers {
 /** What of the unit parser's result is used here. */
 interface ParsedUnit {
   readonly units: readonly {
-    readonly unit: { readonly name: string; readonly value: unknown; readonly offset: number };
+    readonly unit: {
+      readonly name: string;
+      readonly value: unknown;
+      readonly offset: number;
+    };
     readonly prefix: { readonly value: number };
     readonly power: number;
   }[];
@@ -61,9 +65,9 @@ class Ratio {
 function loadUnitClass(): UnitClass {
   const require = createRequire(import.meta.url);
   const folder = dirname(require.resolve("mathjs/package.json"));
-  const file: { createUnitClass(parts: Readonly<Record<string, unknown>>): UnitClass } = require(
-    join(folder, "lib/cjs/type/unit/Unit.js"),
-  );
+  const file: {
+    createUnitClass(parts: Readonly<Record<string, unknown>>): UnitClass;
+  } = require(join(folder, "lib/cjs/type/unit/Unit.js"));
   const units = file.createUnitClass({
     config: { number: "number" },
     addScalar: (a: number, b: number) => a + b,

@@ -34,11 +34,19 @@ const area = variants(
     ),
     group(
       { title: "Torispherical bottom, DIN 28011 (Klöpper)" },
-      { bottom: z.literal("kloepper"), ...level, wallThickness: quantity("length", "Wall thickness") },
+      {
+        bottom: z.literal("kloepper"),
+        ...level,
+        wallThickness: quantity("length", "Wall thickness"),
+      },
     ),
     group(
       { title: "Torispherical bottom, DIN 28013 (Korbbogen)" },
-      { bottom: z.literal("korbbogen"), ...level, wallThickness: quantity("length", "Wall thickness") },
+      {
+        bottom: z.literal("korbbogen"),
+        ...level,
+        wallThickness: quantity("length", "Wall thickness"),
+      },
     ),
   ],
 );
@@ -56,7 +64,9 @@ const coefficient = group(
     wallConductivity: quantity("conductivity", "Conductivity of the wall"),
     liningThickness: quantity("length", "Lining thickness").optional(),
     liningConductivity: quantity("conductivity", "Conductivity of the lining").optional(),
-    insideFouling: quantity("fouling", "Fouling resistance inside", { sign: "notNegative" }).optional(),
+    insideFouling: quantity("fouling", "Fouling resistance inside", {
+      sign: "notNegative",
+    }).optional(),
     outsideFouling: quantity("fouling", "Fouling resistance in the jacket", {
       sign: "notNegative",
     }).optional(),
@@ -65,7 +75,10 @@ const coefficient = group(
       brine: "Water or brine",
       heatTransferOil: "Heat transfer oil",
     }).optional(),
-    wall: choice("Wall", { stainless: "Stainless steel", glassLined: "Glass-lined steel" }).optional(),
+    wall: choice("Wall", {
+      stainless: "Stainless steel",
+      glassLined: "Glass-lined steel",
+    }).optional(),
     contents: choice("Contents", {
       water: "Water",
       aqueous: "Aqueous solution",
@@ -101,7 +114,13 @@ const boiling = variants(
         a: plain("a", {}),
         b: plain("b", { above: 0 }),
         c: plain("c", {}),
-        pressureUnit: choice("Unit of p", { bar: "bar", kPa: "kPa", Pa: "Pa", mmHg: "mmHg", atm: "atm" }),
+        pressureUnit: choice("Unit of p", {
+          bar: "bar",
+          kPa: "kPa",
+          Pa: "Pa",
+          mmHg: "mmHg",
+          atm: "atm",
+        }),
         temperatureUnit: choice("Unit of T", { degC: "°C", K: "K" }),
         lowest: quantity("temperature", "Valid from"),
         highest: quantity("temperature", "Valid up to"),
@@ -119,11 +138,15 @@ export const vessel = group(
     heatTransferCoefficientFrom: coefficient.optional(),
     heatTransferArea: quantity("area", "Heat transfer area"),
     heatTransferAreaFrom: area.optional(),
-    agitatorPower: quantity("power", "Agitator power", { sign: "notNegative" }).prefault("0 W"),
+    agitatorPower: quantity("power", "Agitator power", {
+      sign: "notNegative",
+    }).prefault("0 W"),
     heatGain: group(
       { title: "Heat gained from the surroundings", of: "of the surroundings" },
       {
-        coefficient: quantity("heatPerKelvin", "Coefficient"),
+        coefficient: quantity("heatPerKelvin", "Coefficient", {
+          alone: "heat gain coefficient",
+        }),
         ambient: quantity("temperature", "Temperature"),
       },
     ).optional(),
@@ -137,7 +160,9 @@ export const vessel = group(
         temperature: quantity("temperature", "Temperature"),
         flow: quantity("massFlow", "Flow").optional(),
         heatCapacity: quantity("heatCapacity", "Specific heat capacity").optional(),
-        holdup: quantity("mass", "Mass in the jacket").optional(),
+        holdup: quantity("mass", "Mass in the jacket", {
+          alone: "coolant in the jacket",
+        }).optional(),
       },
     ),
   },

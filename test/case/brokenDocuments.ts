@@ -150,7 +150,10 @@ const numbers = [
 const rows = (...typed: readonly (readonly [string, string])[]) => ({
   form: "table",
   fitAs: "eyring",
-  rows: typed.map(([temperature, rateConstant]) => ({ temperature, rateConstant })),
+  rows: typed.map(([temperature, rateConstant]) => ({
+    temperature,
+    rateConstant,
+  })),
 });
 
 /** What fields must have to do with each other: name, pointer changed, its value, pointer of the fault. */
@@ -182,7 +185,11 @@ const together: readonly (readonly [string, string, unknown, string])[] = [
   [
     "a rate constant of another order",
     "/reaction/rateConstant",
-    { form: "arrhenius", preExponential: "1e7 1/s", activationEnergy: "60 kJ/mol" },
+    {
+      form: "arrhenius",
+      preExponential: "1e7 1/s",
+      activationEnergy: "60 kJ/mol",
+    },
     "/reaction/rateConstant/preExponential",
   ],
   [
@@ -342,7 +349,11 @@ function broken(): BrokenDocument[] {
   const base = completeCase();
   const documents: BrokenDocument[] = [];
   const add = (name: string, pointer: string, value: unknown, faultAt = pointer, from: unknown = base) =>
-    documents.push({ name: `${name}: ${pointer}`, document: edited(from, pointer, value), pointer: faultAt });
+    documents.push({
+      name: `${name}: ${pointer}`,
+      document: edited(from, pointer, value),
+      pointer: faultAt,
+    });
   for (const pointer of quantities) {
     for (const [name, value] of [...neverRight, ...neverQuantities]) {
       const isGroup = typeof value === "object" && value !== null && !Array.isArray(value);
@@ -367,7 +378,11 @@ function broken(): BrokenDocument[] {
     ["an empty object", {}],
     ["a list in a list", [[[]]]],
   ] as const) {
-    documents.push({ name, document, pointer: name === "an empty object" ? "/mixture" : "" });
+    documents.push({
+      name,
+      document,
+      pointer: name === "an empty object" ? "/mixture" : "",
+    });
   }
   return documents;
 }

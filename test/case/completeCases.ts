@@ -25,7 +25,13 @@ export function edited(document: unknown, pointer: string, value: unknown): Fiel
     at = at[key] as Fields;
   }
   if (value === undefined) delete at[last];
-  else Object.defineProperty(at, last, { value, enumerable: true, configurable: true, writable: true });
+  else
+    Object.defineProperty(at, last, {
+      value,
+      enumerable: true,
+      configurable: true,
+      writable: true,
+    });
   return copy;
 }
 
@@ -36,10 +42,14 @@ const noted = (value: string, standardError: string) => ({
   basis: "measured",
 });
 
-const pair = { correlation: 0.99, fittedRange: ["5 degC", "30 degC"], points: 6 };
+const pair = {
+  correlation: 0.99,
+  fittedRange: ["5 degC", "30 degC"],
+  points: 6,
+};
 
 /** Every form of a rate constant of overall order 2. */
-export const secondOrderRates: readonly Fields[] = [
+const secondOrderRates: readonly Fields[] = [
   {
     form: "eyring",
     activationEnthalpy: noted("62 kJ/mol", "1.6 kJ/mol"),
@@ -72,10 +82,21 @@ export const secondOrderRates: readonly Fields[] = [
     form: "table",
     fitAs: "arrhenius",
     rows: [
-      { temperature: "5 degC", rateConstant: "4.0e-5 L/(mol s)", relativeError: 0.05 },
-      { temperature: "15 degC", rateConstant: noted("1.0e-4 L/(mol s)", "5e-6 L/(mol s)") },
+      {
+        temperature: "5 degC",
+        rateConstant: "4.0e-5 L/(mol s)",
+        relativeError: 0.05,
+      },
+      {
+        temperature: "15 degC",
+        rateConstant: noted("1.0e-4 L/(mol s)", "5e-6 L/(mol s)"),
+      },
       { temperature: "25 degC", rateConstant: "2.6e-4 L/(mol s)" },
-      { temperature: "35 degC", rateConstant: "9.9e-3 L/(mol s)", leftOut: "sample warmed up on the way" },
+      {
+        temperature: "35 degC",
+        rateConstant: "9.9e-3 L/(mol s)",
+        leftOut: "sample warmed up on the way",
+      },
     ],
     viscosity: "0.8 mPa s",
   },
@@ -89,15 +110,24 @@ export const decompositionOnlyRates: readonly Fields[] = [
     at: "140 degC",
     activationEnergy: "128 kJ/mol",
   },
-  { form: "td24", temperature: noted("78 degC", "3 K"), activationEnergy: "128 kJ/mol" },
+  {
+    form: "td24",
+    temperature: noted("78 degC", "3 K"),
+    activationEnergy: "128 kJ/mol",
+  },
 ];
 
 /** Rate laws of a decomposition. */
-export const rateLaws: readonly Fields[] = [
+const rateLaws: readonly Fields[] = [
   { model: "order", order: 1 },
   {
     model: "autocatalytic",
-    order: { value: 1, standardError: 0.1, source: "Fit of run 7", basis: "estimated" },
+    order: {
+      value: 1,
+      standardError: 0.1,
+      source: "Fit of run 7",
+      basis: "estimated",
+    },
     productOrder: 1,
     initiation: { value: 0.02, standardError: 0.005 },
   },
@@ -111,16 +141,21 @@ const level = {
 };
 
 /** Every bottom that an area can be worked out for. */
-export const areas: readonly Fields[] = [
+const areas: readonly Fields[] = [
   { bottom: "flat", ...level },
   { bottom: "ellipsoidal", ...level },
-  { bottom: "torispherical", ...level, dishRadius: "1.4 m", knuckleRadius: "0.14 m" },
+  {
+    bottom: "torispherical",
+    ...level,
+    dishRadius: "1.4 m",
+    knuckleRadius: "0.14 m",
+  },
   { bottom: "kloepper", ...level, wallThickness: "10 mm" },
   { bottom: "korbbogen", ...level, wallThickness: "10 mm" },
 ];
 
 /** Both ways to work a boiling point out. */
-export const boilingPoints: readonly Fields[] = [
+const boilingPoints: readonly Fields[] = [
   {
     method: "clausius-clapeyron",
     normalBoilingPoint: "78 degC",
@@ -143,8 +178,16 @@ export const boilingPoints: readonly Fields[] = [
 /** A limit in each of its shapes. */
 const maximumTemperatures: readonly unknown[] = [
   "78 degC",
-  { value: "78 degC", standardError: "2 K", source: "Note 3", basis: "boiling point at 1 atm" },
-  { value: { value: "78 degC", standardError: "2 K", source: "Note 3" }, basis: "boiling point at 1 atm" },
+  {
+    value: "78 degC",
+    standardError: "2 K",
+    source: "Note 3",
+    basis: "boiling point at 1 atm",
+  },
+  {
+    value: { value: "78 degC", standardError: "2 K", source: "Note 3" },
+    basis: "boiling point at 1 atm",
+  },
 ];
 
 /** A semibatch case with everything that a case can hold. Invented. */
@@ -152,7 +195,12 @@ export function completeCase(): Fields {
   const document = demo("acylation");
   return {
     ...document,
-    batch: { record: "DEMO-1", step: "Step 3", vessel: "V-1", preparedBy: "A. Person" },
+    batch: {
+      record: "DEMO-1",
+      step: "Step 3",
+      vessel: "V-1",
+      preparedBy: "A. Person",
+    },
     reaction: {
       ...(document.reaction as Fields),
       rateConstant: secondOrderRates[0],

@@ -131,7 +131,10 @@ describe("faults", () => {
   test("a fault of a field stands at that field", () => {
     const wrong = edited(demo("acylation"), "/mixture/mass", "1450 L");
     const field = fieldsOf(formOf(wrong, faultsOf(wrong))).find(({ pointer }) => pointer === "/mixture/mass");
-    expect(field).toMatchObject({ value: "1450 L", fault: expect.stringContaining("is a volume") });
+    expect(field).toMatchObject({
+      value: "1450 L",
+      fault: expect.stringContaining("is a volume"),
+    });
   });
 
   test("a fault of a standard error stands at its control", () => {
@@ -326,13 +329,21 @@ describe("what is sent", () => {
       "/mixture/mass": "5",
     });
     expect(document).toMatchObject({
-      reaction: { rateConstant: { correlation: -0.5 }, reactants: { A: { order: 1.5 } } },
+      reaction: {
+        rateConstant: { correlation: -0.5 },
+        reactants: { A: { order: 1.5 } },
+      },
       mixture: { thermalInertia: "1,0", mass: "5" },
     });
   });
 
   test("a quantity whose error alone was typed keeps the error", () => {
-    expect(documentFromForm({ "/mixture/mass": "", "/mixture/mass/standardError": "1 kg" })).toMatchObject({
+    expect(
+      documentFromForm({
+        "/mixture/mass": "",
+        "/mixture/mass/standardError": "1 kg",
+      }),
+    ).toMatchObject({
       mixture: { mass: { standardError: "1 kg" } },
     });
   });
@@ -343,7 +354,9 @@ describe("what is sent", () => {
       "/reaction/rateConstant/fittedRange/0": "",
       "/reaction/rateConstant/fittedRange/1": "30 degC",
     });
-    expect(document).toMatchObject({ reaction: { rateConstant: { fittedRange: ["", "30 degC"] } } });
+    expect(document).toMatchObject({
+      reaction: { rateConstant: { fittedRange: ["", "30 degC"] } },
+    });
   });
 });
 

@@ -15,7 +15,10 @@ describe("the JSON Schema of the case document", () => {
       $schema: "https://json-schema.org/draft/2020-12/schema",
       required: ["format", "title", "mixture", "reaction", "vessel", "limits"],
       additionalProperties: false,
-      properties: { format: { const: "thermal-window/case-1" }, title: { title: "Title", type: "string" } },
+      properties: {
+        format: { const: "thermal-window/case-1" },
+        title: { title: "Title", type: "string" },
+      },
     });
   });
 
