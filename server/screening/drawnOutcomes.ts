@@ -1,4 +1,4 @@
-import { coolingCapacity, coolingDutyFrom } from "../thermal/cooling.js";
+import { coolingCapacity } from "../thermal/cooling.js";
 import { type Criticality, criticalityClass } from "../thermal/criticality.js";
 import { measuredDosing } from "../thermal/measuredAccumulation.js";
 import { type Runaway, timeToMaximumRate } from "../thermal/runaway.js";
@@ -67,12 +67,11 @@ function time(runaway: Runaway, start: number): number {
   return Number.isNaN(found) ? 0 : found;
 }
 
-function coolingUse({ step, isothermal }: Study): number | null {
-  const { temperature, rate } = step.reaction;
+function coolingUse(study: Study): number | null {
+  const { temperature, rate } = study.step.reaction;
   if (rate === null) return null;
-  const figures = isothermal.figuresAt(temperature);
-  const capacity = coolingCapacity(step, temperature);
-  if (figures === null || !(capacity > 0)) return Number.POSITIVE_INFINITY;
-  const duty = coolingDutyFrom(step, temperature, figures, () => isothermal.dosingAt(temperature));
+  const capacity = coolingCapacity(study.step, temperature);
+  if (!(capacity > 0)) return Number.POSITIVE_INFINITY;
+  const duty = study.dutyAt(temperature);
   return Number.isNaN(duty) ? Number.POSITIVE_INFINITY : duty / capacity;
 }

@@ -2,9 +2,8 @@ import { lnRateConstant } from "../kinetics/rateConstant.js";
 import { lawValue } from "../kinetics/rateLaw.js";
 import { maximise } from "../numeric/roots.js";
 import { decompositionRise, fedMass } from "./balance.js";
-import { type Dosing, type DosingFigures, figuresOf } from "./dosing.js";
+import { courseOf, type Dosing, type DosingFigures, figuresOf, type RateCourse } from "./dosing.js";
 import { progressAfterHold } from "./history.js";
-import type { FeedRun } from "./isothermal.js";
 import type { Runaway } from "./runaway.js";
 import type { Step } from "./step.js";
 
@@ -82,7 +81,7 @@ export function decompositionHeat(step: Step, temperature: number, time: number)
  * @returns W
  */
 export function coolingDuty(step: Step, temperature: number, dosing: Dosing): number {
-  return coolingDutyFrom(step, temperature, figuresOf(dosing), () => dosing);
+  return coolingDutyFrom(step, temperature, figuresOf(dosing), () => courseOf(dosing), 1e-7);
 }
 
 /**
@@ -91,14 +90,16 @@ export function coolingDuty(step: Step, temperature: number, dosing: Dosing): nu
  * @param step SI numbers
  * @param temperature K
  * @param figures of the isothermal step at that temperature
- * @param whole the step itself: asked for where the decomposition could move the moment of the largest heat
- * @returns W; NaN where that step could not be integrated
+ * @param course of its rate: asked for where the decomposition could move the moment of the largest heat
+ * @param negligible a decomposition below this part of the largest heat cannot; bounds the error as well
+ * @returns W; NaN where the step could not be integrated
  */
 export function coolingDutyFrom(
   step: Step,
   temperature: number,
   figures: DosingFigures,
-  whole: () => Dosing | null,
+  course: () => RateCourse | null,
+  negligible: number,
 ): number {
   const { reaction, vessel } = step;
   const { feed } = reaction;
@@ -113,28 +114,21 @@ export function coolingDutyFrom(
   const start = decompositionHeat(step, temperature, 0);
   const peak = fastest.value * perMol + decompositionHeat(step, temperature, fastest.at);
   let largest = Math.max(end, start, peak);
-  // A decomposition that adds next to nothing cannot move the largest heat: the run is then not looked at.
-  if (decomposingAtEnd > 1e-7 * largest) {
-    const dosing = whole();
-    if (dosing === null || dosing.run === null) return Number.NaN;
-    const { balance, run } = dosing;
-    const released = (time: number, extent: number): number =>
-      balance.limiting * balance.rate(time, extent) * perMol + decompositionHeat(step, temperature, time);
-    largest = Math.max(largest, largestAlong(run, released));
+  if (decomposingAtEnd > negligible * largest) {
+    const rate = course();
+    if (rate === null) return Number.NaN;
+    const released = (time: number): number =>
+      rate.rateAt(time) * perMol + decompositionHeat(step, temperature, time);
+    largest = Math.max(largest, largestOver(rate.times, released));
   }
   return Math.max(largest - feedTerm, end) + vessel.agitatorPower;
 }
 
-/** Largest value over the steps of a run, refined about the best of their starts, middles and ends. */
-function largestAlong(run: FeedRun, value: (time: number, extent: number) => number): number {
-  const values = run.times.map((time, i) => value(time, run.extents[i]));
+/** Largest value over a course, refined about the best of its times. */
+function largestOver(times: readonly number[], value: (time: number) => number): number {
+  const values = times.map(value);
   const best = values.indexOf(Math.max(...values));
   if (best === 0 || best === values.length - 1) return values[best];
-  const refined = maximise(
-    (time) => value(time, run.extentAt(time)),
-    run.times[best - 1],
-    run.times[best + 1],
-    1e-5 * run.times[best],
-  );
+  const refined = maximise(value, times[best - 1], times[best + 1], 1e-5 * times[best]);
   return Math.max(values[best], refined.value);
 }

@@ -27,6 +27,14 @@ export interface DosingFigures {
   readonly endRate: number;
 }
 
+/** The rate of reaction over the feed. */
+export interface RateCourse {
+  /** s, ascending from 0 to the end of the feed, close enough that the rate turns at most once between two */
+  readonly times: readonly number[];
+  /** mol/s */
+  rateAt(time: number): number;
+}
+
 /** What the desired reaction does at one constant temperature. */
 export interface Dosing {
   readonly balance: IsothermalBalance;
@@ -76,22 +84,14 @@ export function doseAt(
   }
   const run = runFeed(balance, relativeTolerance);
   if (run === null) return null;
-  const heat = balance.limiting * -step.reaction.heat;
-  const capacityAt = (time: number): number => heatCapacityOf(step, fedMass(step, time));
-  const capacityRate = (step.reaction.feed.mass * step.reaction.feed.heatCapacity) / balance.feedEnd;
-  const accumulated = (time: number, extent: number): number =>
-    Math.max(0, Math.min(balance.fed(time), balance.charged) - extent);
-  const gain = (time: number, extent: number): number => balance.feedRate - balance.rate(time, extent);
-
   // After the stoichiometric point nothing adds to the accumulation: its largest values lie before.
-  const stoichiometric = stoichiometricTime(balance);
-  const accumulation = largest(run, stoichiometric, accumulated, gain);
-  const rise = largest(
+  const accumulation = largest(
     run,
-    stoichiometric,
-    (time, extent) => (accumulated(time, extent) * heat) / capacityAt(time),
-    (time, extent) => gain(time, extent) * capacityAt(time) - accumulated(time, extent) * capacityRate,
+    stoichiometricTime(balance),
+    (time, extent) => accumulated(balance, time, extent),
+    (time, extent) => gain(balance, time, extent),
   );
+  const rise = largestRise(step, balance, run);
   const fastest = largest(
     run,
     balance.feedEnd,
@@ -107,6 +107,48 @@ export function doseAt(
     endExtent,
     endRate: balance.limiting * balance.rate(balance.feedEnd, endExtent),
     run,
+  };
+}
+
+/** Part of the limiting amount that has been fed, could react and has not. */
+function accumulated(balance: IsothermalBalance, time: number, extent: number): number {
+  return Math.max(0, Math.min(balance.fed(time), balance.charged) - extent);
+}
+
+/** How fast the accumulation grows before the stoichiometric point, 1/s. */
+function gain(balance: IsothermalBalance, time: number, extent: number): number {
+  return balance.feedRate - balance.rate(time, extent);
+}
+
+/**
+ * Largest rise that the accumulation of a semibatch could bring, max over the feed of nacc (-dHr)/C(t).
+ *
+ * @param step SI numbers; its heat and heat capacities may be others than those of the run
+ * @param balance of the run
+ * @param run over the feed
+ * @returns K, and the time in s from the start of the feed
+ * @see Gygax 1988, Chem. Eng. Sci. 43:1759
+ */
+export function largestRise(step: Step, balance: IsothermalBalance, run: FeedRun): Extreme {
+  const { feed, heat: perMol } = step.reaction;
+  const heat = balance.limiting * -perMol;
+  const capacityAt = (time: number): number => heatCapacityOf(step, fedMass(step, time));
+  const capacityRate = feed === null ? 0 : (feed.mass * feed.heatCapacity) / balance.feedEnd;
+  return largest(
+    run,
+    stoichiometricTime(balance),
+    (time, extent) => (accumulated(balance, time, extent) * heat) / capacityAt(time),
+    (time, extent) =>
+      gain(balance, time, extent) * capacityAt(time) - accumulated(balance, time, extent) * capacityRate,
+  );
+}
+
+/** The rate of reaction over the feed of an isothermal step; null for a batch. */
+export function courseOf({ balance, run }: Dosing): RateCourse | null {
+  if (run === null) return null;
+  return {
+    times: run.times,
+    rateAt: (time) => balance.limiting * balance.rate(time, run.extentAt(time)),
   };
 }
 

@@ -35,8 +35,7 @@ export function batchAtUnitRate(step: Step): BatchAtUnitRate {
  */
 export function batchFigures(step: Step, unit: BatchAtUnitRate): Isothermal {
   const { rate } = step.reaction;
-  const whole = integrated(step);
-  if (rate === null) return whole;
+  if (rate === null) return integrated(step);
   const rise = adiabaticRise(step);
   const k = (temperature: number): number => Math.exp(lnRateConstant(rate, temperature));
   return {
@@ -44,7 +43,7 @@ export function batchFigures(step: Step, unit: BatchAtUnitRate): Isothermal {
       const value = unit.fastest * k(temperature);
       return { rise, fastest: { value, at: 0 }, endRate: value };
     },
-    dosingAt: whole.dosingAt,
+    courseAt: () => null,
     completionAt: (temperature) => unit.completion / k(temperature),
   };
 }

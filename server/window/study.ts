@@ -1,6 +1,13 @@
 import { timeToConversion } from "../thermal/completion.js";
-import { runawayOf } from "../thermal/cooling.js";
-import { type Dosing, type DosingFigures, doseAt, figuresOf } from "../thermal/dosing.js";
+import { coolingDutyFrom, runawayOf } from "../thermal/cooling.js";
+import {
+  courseOf,
+  type Dosing,
+  type DosingFigures,
+  doseAt,
+  figuresOf,
+  type RateCourse,
+} from "../thermal/dosing.js";
 import { progressAfterHold } from "../thermal/history.js";
 import type { Accuracy, Runaway } from "../thermal/runaway.js";
 import type { Step } from "../thermal/step.js";
@@ -9,8 +16,8 @@ import type { Step } from "../thermal/step.js";
 export interface Isothermal {
   /** null where it could not be integrated or no rate constant is known */
   figuresAt(temperature: number): DosingFigures | null;
-  /** the whole step, integrated; null as above */
-  dosingAt(temperature: number): Dosing | null;
+  /** the rate of reaction over the feed; null as above and for a batch */
+  courseAt(temperature: number): RateCourse | null;
   /** time to the target conversion, s; infinite where it is never reached, NaN where it is not known */
   completionAt(temperature: number): number;
 }
@@ -21,6 +28,8 @@ export interface Study {
   readonly runaway: Runaway | null;
   readonly accuracy: Accuracy;
   readonly isothermal: Isothermal;
+  /** largest heat to be removed at a temperature, W; NaN where the isothermal step is not known */
+  dutyAt(temperature: number): number;
   /** maximum temperature of the synthesis reaction, K; null where the isothermal step is not known */
   mtsrAt(temperature: number): number | null;
   /** progress of the decomposition that the available time at a temperature leaves behind; 0 without one */
@@ -29,6 +38,9 @@ export interface Study {
 
 /** Of an isothermal run: a window's ends then move by less than 0.0001 K. */
 const windowTolerance = 1e-6;
+
+/** Part of the largest heat below which a decomposition is not looked at over the feed: under 0.001 K. */
+const negligibleHeat = 1e-5;
 
 /** Temperatures are held apart by more than this; it only bounds the memory of a study. */
 const remembered = 400;
@@ -55,7 +67,10 @@ export function integrated(step: Step): Isothermal {
       const dosing = dosingAt(temperature);
       return dosing === null ? null : figuresOf(dosing);
     },
-    dosingAt,
+    courseAt(temperature) {
+      const dosing = dosingAt(temperature);
+      return dosing === null ? null : courseOf(dosing);
+    },
     completionAt(temperature) {
       const dosing = dosingAt(temperature);
       return dosing === null ? Number.NaN : timeToConversion(dosing, step.limits.targetConversion);
@@ -81,6 +96,12 @@ export function studyOf(
     runaway,
     accuracy,
     isothermal,
+    dutyAt(temperature) {
+      const figures = isothermal.figuresAt(temperature);
+      if (figures === null) return Number.NaN;
+      const course = () => isothermal.courseAt(temperature);
+      return coolingDutyFrom(step, temperature, figures, course, negligibleHeat);
+    },
     mtsrAt(temperature) {
       const figures = isothermal.figuresAt(temperature);
       return figures === null ? null : temperature + figures.rise;

@@ -1,14 +1,6 @@
-import { coolingCapacity, coolingDutyFrom } from "../../thermal/cooling.js";
+import { coolingCapacity } from "../../thermal/cooling.js";
 import { percentText, powerText } from "../../words/numbers.js";
 import type { Criterion } from "../criterion.js";
-import type { Study } from "../study.js";
-
-function duty(study: Study, temperature: number): number {
-  const { step, isothermal } = study;
-  const figures = isothermal.figuresAt(temperature);
-  if (figures === null) return Number.NaN;
-  return coolingDutyFrom(step, temperature, figures, () => isothermal.dosingAt(temperature));
-}
 
 /** The largest heat to be removed is at most the allowed part of the full cooling capacity. */
 export const cooling: Criterion = {
@@ -18,13 +10,13 @@ export const cooling: Criterion = {
   assessable: (study) => study.step.reaction.rate !== null,
   margin(study, temperature) {
     const capacity = coolingCapacity(study.step, temperature);
-    const spare = study.step.limits.coolingUse * capacity - duty(study, temperature);
+    const spare = study.step.limits.coolingUse * capacity - study.dutyAt(temperature);
     // Without a capacity nothing is cooled, even where nothing has to be.
     return capacity > 0 ? spare : Math.min(spare, capacity, -1e-9);
   },
   account(study, temperature) {
     const use = percentText(study.step.limits.coolingUse, "down");
     const capacity = powerText(coolingCapacity(study.step, temperature), "down");
-    return `the duty is ${powerText(duty(study, temperature), "up")}, ${use} of ${capacity} may be used`;
+    return `the duty is ${powerText(study.dutyAt(temperature), "up")}, ${use} of ${capacity} may be used`;
   },
 };
