@@ -2,7 +2,13 @@ import { lnRateConstant, type ModifiedArrhenius } from "../kinetics/rateConstant
 import { gasConstant } from "../numeric/constants.js";
 import type { StiffSystem } from "../numeric/rosenbrockStep.js";
 import { limitingAmount } from "../thermal/balance.js";
-import { amountPower, amountPowerSlope, overallOrder, volumePower } from "../thermal/reactionRate.js";
+import {
+  amountPower,
+  amountPowerSlope,
+  linearPart,
+  overallOrder,
+  volumePower,
+} from "../thermal/reactionRate.js";
 import type { Step } from "../thermal/step.js";
 import { type Charge, feedMassRate } from "./charge.js";
 import type { Conditions } from "./conditions.js";
@@ -33,8 +39,10 @@ export interface Contents {
    * @param time s after the failure
    * @param charge what is in the vessel then
    * @param mixing part of the contents that reacts
+   * @param blur part of a recipe's amount that the integration cannot tell from nothing; powers below one fall
+   * linearly over it
    */
-  enter(time: number, charge: Charge, conditions: Conditions, mixing: number): void;
+  enter(time: number, charge: Charge, conditions: Conditions, mixing: number, blur?: number): void;
   /** Heat capacity C', J/K, of the contents and the walls that warm with them. */
   heatCapacity(time: number): number;
   /** Heat that would have to be taken out to hold the temperature, W: all but the exchange with the jacket. */
@@ -101,6 +109,9 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
   let rateA = 0;
   let chargedB = 0;
   let rateB = 0;
+  let blurredA = totalA;
+  let blurredB = totalB;
+  let blurredProgress = 1;
 
   // What `prepare` computes at one place, shared by the slope and its derivatives.
   let temperature = 0;
@@ -128,12 +139,12 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
     if (mixing > 0) {
       volume = volume0 + volumeRate * elapsed;
       amountA = chargedA + rateA * elapsed - extent * limiting;
-      ofA = amountPower(amountA, orderA, totalA);
+      ofA = amountPower(amountA, orderA, blurredA);
       sign = 1;
       if (b === null) ofB = 1;
       else {
         amountB = chargedB + rateB * elapsed - perA * extent * limiting;
-        ofB = amountPower(amountB, orderB, totalB);
+        ofB = amountPower(amountB, orderB, blurredB);
         // Both used up: odd times odd must not come out positive.
         if (amountA < 0 && amountB < 0) sign = -1;
       }
@@ -147,7 +158,7 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
     if (above < ambient) input += gainCoefficient * (ambient - above);
     if (law !== undefined && decay !== undefined && progressAt !== null) {
       decayConstant = Math.exp(lnRateConstant(decay, temperature));
-      decaying = decayConstant * continuedLaw(law, y[progressAt]);
+      decaying = decayConstant * continuedLaw(law, y[progressAt], blurredProgress);
       decayHeat = (mass0 + massRate * elapsed) * heatPerMass;
       input += decayHeat * decaying;
     }
@@ -177,8 +188,8 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
     let heatPerKelvin = -capacityRate - gaining - exchange;
     if (mixing > 0) {
       const perKelvin = reacting * steepness(rate);
-      const slopeA = amountPowerSlope(amountA, orderA, totalA);
-      const slopeB = b === null ? 0 : amountPowerSlope(amountB, orderB, totalB);
+      const slopeA = amountPowerSlope(amountA, orderA, blurredA);
+      const slopeB = b === null ? 0 : amountPowerSlope(amountB, orderB, blurredB);
       const perExtent = -factor * limiting * (slopeA * ofB + perA * ofA * slopeB);
       heatPerKelvin += heatPerExtent * perKelvin;
       out[1] = (heatPerExtent * perExtent) / capacity;
@@ -192,7 +203,7 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
     }
     if (law !== undefined && decay !== undefined && progressAt !== null) {
       const perKelvin = decaying * steepness(decay);
-      const perProgress = decayConstant * continuedLawSlope(law, y[progressAt]);
+      const perProgress = decayConstant * continuedLawSlope(law, y[progressAt], blurredProgress);
       heatPerKelvin += decayHeat * perKelvin;
       out[progressAt] = (decayHeat * perProgress) / capacity;
       out[progressAt * size] = perKelvin;
@@ -208,8 +219,8 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
     const slope = (input - removal(y)) / capacity;
     let heat = massRate * heatPerMass * decaying;
     if (mixing > 0) {
-      const fromA = rateA === 0 ? 0 : rateA * amountPowerSlope(amountA, orderA, totalA) * ofB;
-      const fromB = rateB === 0 ? 0 : rateB * ofA * amountPowerSlope(amountB, orderB, totalB);
+      const fromA = rateA === 0 ? 0 : rateA * amountPowerSlope(amountA, orderA, blurredA) * ofB;
+      const fromB = rateB === 0 ? 0 : rateB * ofA * amountPowerSlope(amountB, orderB, blurredB);
       out[1] = (reacting * volumeOrder * volumeRate) / volume + factor * (fromA + fromB);
       heat += heatPerExtent * out[1];
     }
@@ -221,7 +232,11 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
     reference,
     places: { temperature: 0, extent: 1, jacket: jacketAt, progress: progressAt },
     system: { size, derivative, jacobian, timeDerivative },
-    enter(time, charge, conditions, mixed) {
+    enter(time, charge, conditions, mixed, blur = linearPart) {
+      const scale = Math.max(1, blur / linearPart);
+      blurredA = scale * totalA;
+      blurredB = scale * totalB;
+      blurredProgress = scale;
       const feeding = conditions.feeding && feed !== null;
       const partFed = feed === null ? 0 : charge.fed / feed.mass;
       const partRate = feeding ? 1 / feed.duration : 0;

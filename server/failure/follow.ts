@@ -102,6 +102,7 @@ export function follow(
   );
 
   const { relativeTolerance } = options;
+  const blur = 10 * relativeTolerance;
   const absoluteTolerance = new Float64Array(system.size).fill(1e-2 * relativeTolerance);
   absoluteTolerance[0] = 10 * relativeTolerance;
   if (places.jacket !== null) absoluteTolerance[places.jacket] = 10 * relativeTolerance;
@@ -124,7 +125,7 @@ export function follow(
     const feedLeft = conditions.feeding ? feedTimeLeft(step, charge) : 0;
     if (conditions.feeding && feedLeft === 0) conditions = { ...conditions, feeding: false };
     legs.push({ time, charge, conditions });
-    contents.enter(time, charge, conditions, effectiveMixing(conditions, options.mixing));
+    contents.enter(time, charge, conditions, effectiveMixing(conditions, options.mixing), blur);
     values.forEach((value, index) => {
       if (value(state) >= 0) mark(index, time);
     });
