@@ -11,6 +11,8 @@ const sameAs: readonly (readonly [RegExp, string])[] = [
   [/\u2103/g, "degC"],
   [/\u2109/g, "degF"],
   [/[\u00b0\u00ba] ?([CF])(?![A-Za-z0-9])/g, "deg$1"],
+  [/\bdeg ([CF])\b/g, "deg$1"],
+  [/[\u00b0\u00ba] ?K\b|\bdegK\b/g, "K"],
   [/\*\*/g, "^"],
   [/\^\(([+-]?[\d.]+)\)/g, "^$1"],
 ];

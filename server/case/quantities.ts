@@ -1,5 +1,6 @@
-import { type Dimension, describe, sameDimension } from "./dimensions.js";
+import { type Dimension, sameDimension } from "./dimensions.js";
 import { plainCharacters } from "./pasted.js";
+import { ambiguous, repairedUnit, wrongDimension } from "./unitAdvice.js";
 import { type UnitFactor, unitFactor } from "./units.js";
 
 /** A quantity in the SI. */
@@ -37,7 +38,7 @@ export function readQuantity(text: string, dimension: Dimension): Reading {
   if (!split.ok) return split;
   const { number, factor } = split;
   if (!sameDimension(factor.powers, dimension.powers)) {
-    return refuse(mismatch(text, split.unit, factor, dimension));
+    return refuse(`${quoted(text)} ${wrongDimension(split.unit, factor, dimension)}`);
   }
   if (!Number.isFinite(number)) {
     return refuse(`${quoted(text)} is not finite: the number is too large to calculate with`);
@@ -61,8 +62,10 @@ export function readQuantity(text: string, dimension: Dimension): Reading {
 export function readUnit(text: string, dimension: Dimension): Reading {
   const split = splitQuantity(`1 ${text}`, dimension);
   if (!split.ok) return split;
+  if (split.number !== 1)
+    return refuse(`${quoted(text)} holds a number; expected a unit alone, such as "${dimension.unit}"`);
   if (!sameDimension(split.factor.powers, dimension.powers)) {
-    return refuse(mismatch(text, split.unit, split.factor, dimension));
+    return refuse(`${quoted(text)} ${wrongDimension(split.unit, split.factor, dimension)}`);
   }
   return { ok: true, measured: scaled(1, split.factor) };
 }
@@ -87,6 +90,11 @@ function splitQuantity(text: string, dimension: Dimension): Split | Refusal {
       `${quoted(text)} has a comma: write a decimal point and no marks between thousands${suggestion}`,
     );
   }
+  if (/±|\+ ?\/ ?-/.test(plain)) {
+    return refuse(
+      `${quoted(text)} holds an error as well: give the value alone, and its error as standardError`,
+    );
+  }
   const odd = Array.from(plain).find((character) => !allowed.test(character));
   if (odd !== undefined) return refuse(`${quoted(text)} holds ${characterName(odd)}; ${wanted}`);
   const read = readNumber(plain);
@@ -99,8 +107,13 @@ function splitQuantity(text: string, dimension: Dimension): Split | Refusal {
   const factor = unitFactor(unit);
   if (typeof factor === "string") {
     if (/[A-Za-z] +[\d.]/.test(unit)) return refuse(secondNumber(text, wanted));
-    return refuse(`${quoted(text)}: ${factor}; ${wanted}`);
+    const repaired = repairedUnit(unit, dimension);
+    return refuse(
+      `${quoted(text)}: ${factor}${repaired === null ? `; ${wanted}` : `: did you mean "${repaired}"?`}`,
+    );
   }
+  const doubtful = ambiguous(unit);
+  if (doubtful !== null) return refuse(`${quoted(text)}: ${doubtful}`);
   return { ok: true, number: read.number, unit, factor };
 }
 
@@ -134,34 +147,6 @@ function scaled(number: number, factor: UnitFactor): Measured {
     value: (number * factor.over) / factor.under,
     ln: Math.log(Math.abs(number)) + factor.ln,
   };
-}
-
-function mismatch(text: string, unit: string, factor: UnitFactor, dimension: Dimension): string {
-  const came = `${quoted(text)} is ${describe(factor.powers)}; expected ${dimension.words} in ${dimension.unit}`;
-  const bracketed = parenthesised(unit);
-  if (bracketed !== null) {
-    const other = unitFactor(bracketed);
-    if (typeof other !== "string" && sameDimension(other.powers, dimension.powers)) {
-      return `${came}. A division takes only the next unit along: write "${bracketed}"`;
-    }
-  }
-  if (dimension.powers.temperature === 1 && /^[CF]$/.test(unit)) {
-    return `${quoted(text)}: ${unit} is the unit of something else; write deg${unit}, such as "${dimension.example}"`;
-  }
-  if (unit === "m" && dimension.powers.time === 1) {
-    return `${came}. m is the metre; the minute is min`;
-  }
-  return `${came}, such as "${dimension.example}"`;
-}
-
-/** `W/m^2 K` as `W/(m^2 K)`: everything behind the first division as its denominator. */
-function parenthesised(unit: string): string | null {
-  const at = unit.indexOf("/");
-  if (at < 0 || unit.includes("(") || unit.indexOf("/", at + 1) >= 0) return null;
-  return `${unit.slice(0, at)}/(${unit
-    .slice(at + 1)
-    .replaceAll("*", " ")
-    .trim()})`;
 }
 
 function refuse(message: string): Refusal {

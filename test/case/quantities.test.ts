@@ -104,7 +104,9 @@ describe("rate constants", () => {
     const reading = readUnit("1/h", rateConstantDimension(1));
     if (!reading.ok) throw new Error(reading.message);
     expect(reading.measured.ln).toBeCloseTo(-Math.log(3600), 14);
-    expect(readUnit("kg", rateConstantDimension(1)).ok).toBe(false);
+    for (const text of ["kg", "5 1/s", "x10^3 1/s", "e3 1/s", ""]) {
+      expect(readUnit(text, rateConstantDimension(1)).ok).toBe(false);
+    }
   });
 });
 
@@ -130,6 +132,8 @@ describe("units", () => {
     expect(si("35°C", "temperature")).toBe(308.15);
     expect(si("35 ℃", "temperature")).toBe(308.15);
     expect(si("35 ° C", "temperature")).toBe(308.15);
+    expect(si("35 deg C", "temperature")).toBe(308.15);
+    expect(si("300 °K", "temperature")).toBe(300);
     expect(si("320\u00a0W/(m²\u202fK)", "heatTransferCoefficient")).toBe(320);
     expect(si("320 W·m⁻²·K⁻¹", "heatTransferCoefficient")).toBe(320);
     expect(si("850 µPa s", "viscosity")).toBeCloseTo(8.5e-4, 15);
@@ -157,6 +161,26 @@ describe("refused, with what came and what would do", () => {
     expect(message).toContain('write "W/(m^2 K)"');
     expect(refusal("320 W/m²·K", "heatTransferCoefficient")).toContain('write "W/(m^2 K)"');
     expect(refusal("62 kJ/kg K", "heatCapacity")).toContain('write "kJ/(kg K)"');
+  });
+
+  test("units that were run together, or written in the wrong case, are met with the right ones", () => {
+    expect(refusal("320 W/m2K", "heatTransferCoefficient")).toContain('did you mean "W/(m2 K)"');
+    expect(refusal("2.1 kJ/kgK", "heatCapacity")).toContain('did you mean "kJ/(kg K)"');
+    expect(refusal("5 Kg", "mass")).toContain('did you mean "kg"');
+    expect(refusal("62 KJ/mol", "molarEnergy")).toContain('did you mean "kJ/mol"');
+    expect(refusal("3 Kmol", "amount")).toContain('did you mean "kmol"');
+  });
+
+  test("a unit that means different things to different people", () => {
+    expect(refusal("2 ton", "mass")).toMatch(/write t for 1000 kg/);
+    expect(refusal("2 tons/h", "massFlow")).toMatch(/write t for 1000 kg/);
+    expect(refusal("2 mt", "mass")).toMatch(/write t for 1000 kg/);
+    expect(si("2 t", "mass")).toBe(2000);
+  });
+
+  test("an error written behind its value has a field of its own", () => {
+    expect(refusal("62 ± 1.6 kJ/mol", "molarEnergy")).toMatch(/standardError/);
+    expect(refusal("62 +/- 1.6 kJ/mol", "molarEnergy")).toMatch(/standardError/);
   });
 
   test("a wrong dimension names both", () => {
