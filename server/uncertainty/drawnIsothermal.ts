@@ -1,6 +1,7 @@
 import type { Step } from "../thermal/step.js";
 import { type Isothermal, integrated } from "../window/study.js";
 import { type BatchAtUnitRate, batchAtUnitRate, batchFigures } from "./batchFigures.js";
+import { dosingTable } from "./dosingTable.js";
 
 /**
  * The isothermal step of each draw, by the cheapest way that is exact enough. While the recipe carries no error
@@ -19,7 +20,8 @@ export function drawnIsothermal(nominal: Step): (step: Step) => Isothermal {
       return batchFigures(step, unit);
     };
   }
-  return integrated;
+  const tabulated = dosingTable(nominal);
+  return (step) => (sameRecipe(step, nominal) ? tabulated(step) : integrated(step));
 }
 
 /** Whether two steps have the same balance at the same k: amounts, orders, volumes and feed. */
