@@ -172,7 +172,11 @@ export function dosing(findings: Findings): Figure | null {
         type: "plot",
         height: 180,
         xAxis,
-        yAxis: { scale: "linear", domain: [0, 1.06 * highest], label: "Share, %" },
+        yAxis: {
+          scale: "linear",
+          domain: [0, 1.06 * highest],
+          label: "Share, %",
+        },
         marks: fractionMarks(accumulation, unit.seconds),
       },
       {

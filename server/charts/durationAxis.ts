@@ -40,7 +40,10 @@ export function durationAxis(times: readonly number[], label: string): Axis {
 }
 
 /** The unit in which a linear axis of times is read: that in which its longest time is a handy number. */
-export function timeUnit(longest: number): { readonly name: string; readonly seconds: number } {
+export function timeUnit(longest: number): {
+  readonly name: string;
+  readonly seconds: number;
+} {
   if (longest <= 3 * minute) return { name: "s", seconds: 1 };
   if (longest <= 4 * hour) return { name: "min", seconds: minute };
   if (longest <= 4 * day) return { name: "h", seconds: hour };

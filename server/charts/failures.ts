@@ -24,7 +24,10 @@ function shownUntil({ timeToMtt_s, timeToAct_s, peakAt_s, timeToTd24_s }: Failur
 }
 
 /** Linear where one scale shows all failures, logarithmic from a minute on where their times differ widely. */
-function timeAxis(failures: readonly FailureFindings[]): { readonly axis: Axis; readonly per: number } {
+function timeAxis(failures: readonly FailureFindings[]): {
+  readonly axis: Axis;
+  readonly per: number;
+} {
   const ends = failures.map(shownUntil);
   const longest = Math.max(...ends) * 1.15;
   if (longest / Math.min(...ends) > 6) {
@@ -78,7 +81,13 @@ function lineMarks(
     const { tone, dash } = looks[at % looks.length] as (typeof looks)[number];
     const { within, beyond } = coursesOf(failure, mtt_K);
     return [
-      { type: "line", tone, dash: "dotted", weight: "thin", points: placed(beyond) },
+      {
+        type: "line",
+        tone,
+        dash: "dotted",
+        weight: "thin",
+        points: placed(beyond),
+      },
       {
         type: "line",
         tone,
@@ -166,8 +175,8 @@ function limitMarks({ temperatures }: Findings, top: number): (Rule | Area)[] {
  * @returns null where no failure was simulated
  */
 export function failures(findings: Findings): Figure | null {
-  const sorted = byTimeToAct((findings.failures ?? []).filter((failure) => failure.trace.length > 1));
-  if (sorted.length === 0) return null;
+  const sorted = byTimeToAct(findings.failures ?? []);
+  if (!sorted.some((failure) => failure.trace.length > 1)) return null;
   const { mtt_K, td24_K, process_K } = findings.temperatures;
   const { axis, per } = timeAxis(sorted);
   const earliest = axis.scale === "log" ? axis.domain[0] : 0;
@@ -188,7 +197,11 @@ export function failures(findings: Findings): Figure | null {
         type: "plot",
         height: 280,
         xAxis: axis,
-        yAxis: { scale: "linear", domain: [celsius(lowest) - 0.05 * span, top], label: "Temperature, °C" },
+        yAxis: {
+          scale: "linear",
+          domain: [celsius(lowest) - 0.05 * span, top],
+          label: "Temperature, °C",
+        },
         marks: [
           ...limitMarks(findings, top),
           ...lineMarks(sorted, mtt_K, per, earliest),

@@ -51,13 +51,26 @@ export function failuresSentence(sorted: readonly FailureFindings[]): string {
 
 /** A failure as a row of the table under the figure. */
 export function failureRow(failure: FailureFindings, at: number): string[] {
-  const { name, startedAt_s, timeToMtt_s, timeToTd24_s, peak_K, peakAt_s, beyondModel, decomposed } = failure;
+  const {
+    name,
+    startedAt_s,
+    timeToMtt_s,
+    timeToTd24_s,
+    peak_K,
+    peakAt_s,
+    beyondModel,
+    decomposed,
+    margin_s,
+    alarm_K,
+  } = failure;
   const after = (time: number | null) => (time === null ? "not reached" : durationText(time));
   return [
     String(at + 1),
     failure.mixingAssumed === "unmixed" ? `${name} (worse without mixing)` : name,
     verdictWords(failure),
     durationText(startedAt_s, "nearest"),
+    margin_s === null ? "not given" : durationText(margin_s),
+    alarm_K === null ? "none" : temperatureNumber(alarm_K, "down"),
     after(timeToMtt_s),
     after(timeToTd24_s),
     beyondModel
@@ -75,6 +88,8 @@ export const failureColumns = [
   "Failure",
   "Time to act",
   "Begins at",
+  "Left after the response",
+  "Latest alarm, °C",
   "MTT after",
   "T_D24 after",
   "Peak, °C",

@@ -73,7 +73,11 @@ export type Mark = Band | Line | Points | Rule | Area | Note;
 export interface Band {
   readonly type: "band";
   readonly tone: Tone;
-  readonly points: readonly { readonly x: number; readonly low: number; readonly high: number }[];
+  readonly points: readonly {
+    readonly x: number;
+    readonly low: number;
+    readonly high: number;
+  }[];
   /** for the key under the panel */
   readonly name?: string;
 }

@@ -1,4 +1,4 @@
-import type { FailureFindings, Findings } from "../screening/findings.js";
+import type { Findings } from "../screening/findings.js";
 import { dosing } from "./dosing.js";
 import { failures } from "./failures.js";
 import { byTimeToAct } from "./failuresWords.js";
@@ -9,13 +9,8 @@ import { ladder } from "./ladder.js";
 import { lever } from "./lever.js";
 import { rateFigure } from "./rate.js";
 import { tmrad } from "./tmrad.js";
-import { type VulnerableMoment, vulnerable } from "./vulnerable.js";
+import { vulnerable } from "./vulnerable.js";
 import { windowFigure } from "./window.js";
-
-/** What a failure may carry beside its own course: the same one begun at other moments. */
-interface WithMoments {
-  readonly vulnerable?: readonly VulnerableMoment[] | null;
-}
 
 /** All figures of a case in the order of the page; those without data are left out. */
 export function figuresOf(findings: Findings): Figure[] {
@@ -41,7 +36,7 @@ export function figuresOf(findings: Findings): Figure[] {
     );
   figures.push(tmrad(findings), dosing(findings), heat(findings), lever(findings), failures(findings));
   figures.push(
-    ...byTimeToAct(findings.failures ?? []).map((failure: FailureFindings & WithMoments, at) =>
+    ...byTimeToAct(findings.failures ?? []).map((failure, at) =>
       vulnerable(failure.name, at + 1, failure.vulnerable ?? []),
     ),
   );

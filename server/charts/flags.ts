@@ -59,7 +59,13 @@ function rowsFor(
         (other.x >= span.left && other.x <= span.right),
     );
     const row = 1 + Math.max(-1, ...touching.map((other) => other.row));
-    placed.push({ ...flag, ...span, row, side: sides[next] ?? "right", crossed: false });
+    placed.push({
+      ...flag,
+      ...span,
+      row,
+      side: sides[next] ?? "right",
+      crossed: false,
+    });
   }
   return placed;
 }

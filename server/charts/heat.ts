@@ -116,7 +116,11 @@ export function heat(findings: Findings): Figure | null {
           domain: [celsius(curve[0]?.temperature_K ?? 0), celsius(curve.at(-1)?.temperature_K ?? 0)],
           label: "Temperature of the contents, °C",
         },
-        yAxis: { scale: "linear", domain: [Math.max(bottom, -0.4 * top), top], label: "Heat flow, kW" },
+        yAxis: {
+          scale: "linear",
+          domain: [Math.max(bottom, -0.4 * top), top],
+          label: "Heat flow, kW",
+        },
         marks: [
           {
             type: "line",

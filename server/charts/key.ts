@@ -6,7 +6,9 @@ import { filledBox, grown, rectangle, shapeAt, strokeAlong, textAt, textBox } fr
 import { textWidth, wrapText } from "./textWidth.js";
 
 /** A mark whose name stands under the panel beside a sample of it. */
-export type KeyEntry = (Line | Points | Band | Area | Rule) & { readonly name: string };
+export type KeyEntry = (Line | Points | Band | Area | Rule) & {
+  readonly name: string;
+};
 
 const sampleWidth = 26;
 const rowHeight = 17;

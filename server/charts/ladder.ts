@@ -102,7 +102,16 @@ export function ladderLanes(findings: Findings): Lane[] {
 }
 
 function rungLane(label: string, marks: readonly LaneMark[], text: string | null): Lane {
-  return { label, detail: null, height: "rung", apart: false, spans: [], marks, text, verdict: null };
+  return {
+    label,
+    detail: null,
+    height: "rung",
+    apart: false,
+    spans: [],
+    marks,
+    text,
+    verdict: null,
+  };
 }
 
 /**

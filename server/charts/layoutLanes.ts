@@ -73,7 +73,11 @@ export function layoutLanes(
   const places = placeLanes(panel.lanes, labelsLeft === left, left, right, frameTop, x);
   const bottom = (places.at(-1)?.box.bottom ?? frameTop) + 4;
   const box: Box = { left, right, top: frameTop, bottom };
-  const frame = { box, x, y: scaleOf({ scale: "linear", domain: [0, 1], label: "" }, bottom, frameTop) };
+  const frame = {
+    box,
+    x,
+    y: scaleOf({ scale: "linear", domain: [0, 1], label: "" }, bottom, frameTop),
+  };
   const primitives: Primitive[] = [
     ...panel.marks.flatMap((mark) => (mark.type === "area" ? drawArea(mark, frame) : [])),
     ...gridAcross(panel.xAxis, box, x),
@@ -121,7 +125,12 @@ function drawSpans({ lane, box }: LanePlace, x: Scale): Primitive[] {
   return lane.spans.flatMap((span) => {
     const left = Math.max(box.left, x(span.from));
     const right = Math.min(box.right, x(span.to));
-    const at = { left, right, top: middle - half * span.breadth, bottom: middle + half * span.breadth };
+    const at = {
+      left,
+      right,
+      top: middle - half * span.breadth,
+      bottom: middle + half * span.breadth,
+    };
     return right > left ? filledBox(at, span.fill, span.tone, span.outlined) : [];
   });
 }
@@ -176,9 +185,9 @@ function drawLane({ lane, labelAbove, box }: LanePlace, labelsLeft: number, x: S
   }
   for (const mark of lane.marks) primitives.push(...drawLaneMark(mark, box, x));
   if (lane.text !== null) {
-    const room = box.right - box.left - 16;
-    const words = shortened(lane.text, textSizes.small, room);
-    primitives.push(...onClearGround(textAt(box.left + 8, middle + 4, words, { tone: "ink" })));
+    const start = Math.max(box.left, ...lane.spans.slice(0, 1).map((span) => x(span.from))) + 8;
+    const words = shortened(lane.text, textSizes.small, box.right - start - 8);
+    primitives.push(...onClearGround(textAt(start, middle + 4, words, { tone: "ink" })));
   }
   return primitives;
 }

@@ -46,7 +46,12 @@ export function layoutPlot(
   );
   const rows = flags.length === 0 ? 0 : 1 + Math.max(...flags.map((flag) => flag.row));
   const frameTop = top + 6 + (panel.topAxis === undefined ? 0 : topAxisRoom) + rows * flagRow;
-  const box: Box = { left, right, top: frameTop, bottom: frameTop + panel.height };
+  const box: Box = {
+    left,
+    right,
+    top: frameTop,
+    bottom: frameTop + panel.height,
+  };
   const frame: Frame = { box, x, y: scaleOf(panel.yAxis, box.bottom, box.top) };
 
   const words = plotWords(panel, frame);
@@ -59,7 +64,10 @@ export function layoutPlot(
     ...plotAxes(panel, frame),
   ];
   const named = layoutKey(words.key, left, right, box.bottom + axisRoom);
-  return { primitives: [...primitives, ...named.primitives], bottom: named.bottom };
+  return {
+    primitives: [...primitives, ...named.primitives],
+    bottom: named.bottom,
+  };
 }
 
 /** Words over vertical rules, with the line that ties each to its rule. */
@@ -77,7 +85,10 @@ export function flagWords(flags: readonly PlacedFlag[], top: number): Primitive[
     const text =
       flag.side === "right"
         ? textAt(flag.left + 4, base, flag.text, { tone: "ink" })
-        : textAt(flag.right - 4, base, flag.text, { tone: "ink", anchor: "end" });
+        : textAt(flag.right - 4, base, flag.text, {
+            tone: "ink",
+            anchor: "end",
+          });
     const ground = flag.crossed ? [rectangle(textBox(text), "faint", "paper")] : [];
     return [...ground, text];
   });

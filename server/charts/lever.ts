@@ -11,7 +11,10 @@ function durationsAxis(steps: readonly Step[]): Axis {
     scale: "log",
     domain: [Math.min(...durations) / 1.12, Math.max(...durations) * 1.12],
     label: "Duration of the feed (logarithmic)",
-    ticks: steps.map((step) => ({ value: step.duration_s, text: durationText(step.duration_s, "nearest") })),
+    ticks: steps.map((step) => ({
+      value: step.duration_s,
+      text: durationText(step.duration_s, "nearest"),
+    })),
   };
 }
 
@@ -35,7 +38,12 @@ function windowBands(steps: readonly Step[]): Band[] {
   const runs: { x: number; low: number; high: number }[][] = [[]];
   for (const { duration_s, lower_K, upper_K } of steps) {
     if (lower_K === null || upper_K === null) runs.push([]);
-    else runs.at(-1)?.push({ x: duration_s, low: celsius(lower_K), high: celsius(upper_K) });
+    else
+      runs.at(-1)?.push({
+        x: duration_s,
+        low: celsius(lower_K),
+        high: celsius(upper_K),
+      });
   }
   const drawn = runs.filter((run) => run.length > 1);
   return drawn.map((points, at) => ({

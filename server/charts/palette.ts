@@ -39,7 +39,11 @@ export const dashes: Readonly<Record<Dash, readonly number[]>> = {
   longdash: [12, 4],
 };
 
-export const weights: Readonly<Record<Weight, number>> = { thin: 0.9, normal: 1.5, strong: 2.4 };
+export const weights: Readonly<Record<Weight, number>> = {
+  thin: 0.9,
+  normal: 1.5,
+  strong: 2.4,
+};
 
 /** Font sizes in units of the figure. */
 export const textSizes = { small: 11, normal: 12.5 } as const;

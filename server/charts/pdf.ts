@@ -121,7 +121,11 @@ function drawText(pdf: PDFKit.PDFDocument, text: Text, fonts: PdfFonts): void {
   const font = text.bold ? fonts.bold : fonts.regular;
   const parts = runs(text.text, fonts.covers).map((part) => {
     const named = part.covered ? font : fonts.fallback;
-    return { text: part.text, font: named, width: pdf.font(named, size).widthOfString(part.text) };
+    return {
+      text: part.text,
+      font: named,
+      width: pdf.font(named, size).widthOfString(part.text),
+    };
   });
   const whole = parts.reduce((sum, part) => sum + part.width, 0);
   let x = text.x - (text.anchor === "end" ? whole : text.anchor === "middle" ? whole / 2 : 0);

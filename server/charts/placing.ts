@@ -1,5 +1,5 @@
 import { type Box, clipSegment, inside, overlap, type Point } from "./geometry.js";
-import { rounded, type Text } from "./primitive.js";
+import type { Text } from "./primitive.js";
 import { grown, textAt, textBox } from "./strokes.js";
 
 /** What words inside a frame have to keep clear of. */
@@ -21,32 +21,72 @@ export interface PlacedText {
 }
 
 interface Candidate {
-  readonly text: Text;
+  readonly x: number;
+  readonly y: number;
+  readonly anchor: Text["anchor"];
   /** dislike of the place itself */
   readonly cost: number;
+  /** may be moved sideways to stay in the frame */
+  readonly slides?: boolean;
 }
 
-function crossings(box: Box, lines: readonly (readonly Point[])[]): number {
+/** Lines that run through a box, counted up to three. */
+function crossings({ left, right, top, bottom }: Box, lines: readonly (readonly Point[])[]): number {
   let count = 0;
   for (const points of lines)
-    for (let at = 1; at < points.length; at++)
-      if (clipSegment(points[at - 1] as Point, points[at] as Point, box) !== null) count++;
+    for (let at = 1; at < points.length; at++) {
+      const [x0, y0] = points[at - 1] as Point;
+      const [x1, y1] = points[at] as Point;
+      const apart =
+        (x0 < left && x1 < left) ||
+        (x0 > right && x1 > right) ||
+        (y0 < top && y1 < top) ||
+        (y0 > bottom && y1 > bottom);
+      if (apart || clipSegment([x0, y0], [x1, y1], { left, right, top, bottom }) === null) continue;
+      count++;
+      if (count === 3) return count;
+    }
   return count;
 }
 
-function best(candidates: readonly Candidate[], obstacles: Obstacles, limit: number): PlacedText | null {
+/** What touching a line and a hatched area costs, against the dislikes of the places. */
+const crossingCost = 12;
+const hatchedCost = 4;
+
+/**
+ * The place with the least cost; crossed lines and hatching add to it, other words and marks exclude it.
+ *
+ * @param limit cost from which no place is good enough
+ */
+function best(
+  words: string,
+  style: Partial<Text>,
+  candidates: readonly Candidate[],
+  obstacles: Obstacles,
+  limit: number,
+): PlacedText | null {
+  const origin = grown(textBox(textAt(0, 0, words, { ...style, anchor: "start" })), 3, 2);
+  const width = origin.right - origin.left - 6;
+  const { frame } = obstacles;
   let chosen: PlacedText | null = null;
   let lowest = limit;
-  for (const { text, cost } of candidates) {
-    if (cost >= lowest) continue;
-    const bare = textBox(text);
-    const box = grown(bare, 3, 2);
-    if (!inside(box, obstacles.frame) || obstacles.boxes.some((each) => overlap(each, box))) continue;
+  for (const { x, y, anchor, cost, slides } of candidates.toSorted((a, b) => a.cost - b.cost)) {
+    if (cost >= lowest) break;
+    const wanted = x - (anchor === "end" ? width : anchor === "middle" ? width / 2 : 0);
+    const start = slides ? Math.max(frame.left + 4, Math.min(wanted, frame.right - 4 - width)) : wanted;
+    const box = {
+      left: start - 3,
+      right: start + width + 3,
+      top: y + origin.top,
+      bottom: y + origin.bottom,
+    };
+    if (!inside(box, frame) || obstacles.boxes.some((each) => overlap(each, box))) continue;
     const crossed = crossings(box, obstacles.lines);
     const hatched = obstacles.hatched.filter((each) => overlap(each, box)).length;
-    const total = cost + 12 * Math.min(crossed, 3) + 4 * hatched;
+    const total = cost + crossingCost * crossed + hatchedCost * hatched;
     if (total < lowest) {
       lowest = total;
+      const text = textAt(x + start - wanted, y, words, { ...style, anchor });
       chosen = { text, box, crossed: crossed + hatched > 0 };
     }
   }
@@ -80,19 +120,15 @@ export function placeBeside(
   obstacles: Obstacles,
 ): PlacedText | null {
   const candidates = [1, 1.8, 2.8, 4].flatMap((reach, ring) =>
-    around.map(({ dx, dy, anchor }, at) => {
-      const text = textAt(x + dx * reach, y + (dy - 4) * reach + 4, words, { ...style, anchor });
-      return { text: dx === 0 ? within(text, obstacles.frame) : text, cost: 0.2 * at + 6 * ring };
-    }),
+    around.map(({ dx, dy, anchor }, at) => ({
+      x: x + dx * reach,
+      y: y + (dy - 4) * reach + 4,
+      anchor,
+      cost: 0.2 * at + 6 * ring,
+      slides: dx === 0,
+    })),
   );
-  return best(candidates, obstacles, Number.POSITIVE_INFINITY);
-}
-
-/** Text moved sideways so that it stands in the frame. */
-function within(text: Text, frame: Box): Text {
-  const box = textBox(text);
-  const shift = Math.max(frame.left + 4 - box.left, Math.min(0, frame.right - 4 - box.right));
-  return { ...text, x: rounded(text.x + shift) };
+  return best(words, style, candidates, obstacles, Number.POSITIVE_INFINITY);
 }
 
 /**
@@ -107,19 +143,24 @@ export function placeAlong(
   obstacles: Obstacles,
   where: "clear" | "anywhere",
 ): PlacedText | null {
-  const places = alongEvenly(points, 40);
+  const places = alongEvenly(points, 24);
   const candidates = places.flatMap(([x, y], at) =>
     ([-6, 14, -12, 20] as const).flatMap((dy, turn) =>
       (["middle", "start", "end"] as const).map((anchor, which) => ({
-        text: textAt(anchor === "start" ? x + 6 : anchor === "end" ? x - 6 : x, y + dy, words, {
-          ...style,
-          anchor,
-        }),
-        cost: 0.05 * (places.length - at) + 0.3 * turn + 0.2 * which,
+        x: anchor === "start" ? x + 6 : anchor === "end" ? x - 6 : x,
+        y: y + dy,
+        anchor,
+        cost: 0.08 * (places.length - at) + 0.3 * turn + 0.2 * which,
       })),
     ),
   );
-  return best(candidates, obstacles, where === "clear" ? 12 : Number.POSITIVE_INFINITY);
+  return best(
+    words,
+    style,
+    candidates,
+    obstacles,
+    where === "clear" ? crossingCost : Number.POSITIVE_INFINITY,
+  );
 }
 
 /** Places at equal distances along a polyline. */
@@ -152,10 +193,12 @@ export function placeOn(
   style: Partial<Text>,
   obstacles: Obstacles,
 ): PlacedText | null {
-  const places = alongEvenly(points, 60);
+  const places = alongEvenly(points, 40);
   const candidates = places.map(([x, y], at) => ({
-    text: textAt(x, y + 4, word, { ...style, anchor: "middle" as const }),
+    x,
+    y: y + 4,
+    anchor: "middle" as const,
     cost: 0.1 * Math.abs(at - 0.8 * places.length),
   }));
-  return best(candidates, obstacles, Number.POSITIVE_INFINITY);
+  return best(word, style, candidates, obstacles, Number.POSITIVE_INFINITY);
 }

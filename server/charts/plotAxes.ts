@@ -93,7 +93,11 @@ export function axisAcross(axis: Axis, box: Box, x: Scale): Primitive[] {
       textAt(at, box.bottom + 16, tick.text, { anchor: "middle", tone: "ink" }),
     );
   }
-  primitives.push(textAt((box.left + box.right) / 2, box.bottom + 33, axis.label, { anchor: "middle" }));
+  primitives.push(
+    textAt((box.left + box.right) / 2, box.bottom + 33, axis.label, {
+      anchor: "middle",
+    }),
+  );
   return primitives;
 }
 
@@ -129,9 +133,15 @@ export function plotAxes(panel: PlotPanel, frame: Frame): Primitive[] {
       "thin",
     ),
     ...clearUp(upTicks(panel), y).map((tick) =>
-      textAt(box.left - 7, y(tick.value) + 4, tick.text, { anchor: "end", tone: "ink" }),
+      textAt(box.left - 7, y(tick.value) + 4, tick.text, {
+        anchor: "end",
+        tone: "ink",
+      }),
     ),
-    textAt(box.left - roomLeft(panel) + 11, middle, panel.yAxis.label, { anchor: "middle", upright: true }),
+    textAt(box.left - roomLeft(panel) + 11, middle, panel.yAxis.label, {
+      anchor: "middle",
+      upright: true,
+    }),
     ...axisAcross(panel.xAxis, box, x),
   ];
   if (panel.rightAxis !== undefined) {
@@ -157,9 +167,14 @@ export function plotAxes(panel: PlotPanel, frame: Frame): Primitive[] {
       ),
       ...clearAcross(panel.topAxis.ticks, x).flatMap((tick) => [
         tickMark(x(tick.value), box.top - 4, 4),
-        textAt(x(tick.value), box.top - 8, tick.text, { anchor: "middle", tone: "ink" }),
+        textAt(x(tick.value), box.top - 8, tick.text, {
+          anchor: "middle",
+          tone: "ink",
+        }),
       ]),
-      textAt((box.left + box.right) / 2, box.top - 24, panel.topAxis.label, { anchor: "middle" }),
+      textAt((box.left + box.right) / 2, box.top - 24, panel.topAxis.label, {
+        anchor: "middle",
+      }),
     );
   }
   return primitives;

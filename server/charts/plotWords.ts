@@ -83,7 +83,12 @@ function obstaclesOf(panel: PlotPanel, frame: Frame): Obstacles {
   const hatched: Box[] = [];
   const keepOff = (place: Point) => {
     if (onFrame(place, frame))
-      boxes.push({ left: place[0] - 5, right: place[0] + 5, top: place[1] - 5, bottom: place[1] + 5 });
+      boxes.push({
+        left: place[0] - 5,
+        right: place[0] + 5,
+        top: place[1] - 5,
+        bottom: place[1] + 5,
+      });
   };
   for (const mark of panel.marks) {
     if (mark.type === "line")

@@ -21,7 +21,11 @@ export function reciprocalAxis(rate: RateFindings): Axis {
     ...rate.table.map((row) => row.temperature_K),
     ...(rate.fit?.rows ?? []).map((row) => row.temperature_K),
   ];
-  return { scale: "linear", domain: roomyDomain(temperatures.map(reciprocal), 0.05), label: "1000/T, K⁻¹" };
+  return {
+    scale: "linear",
+    domain: roomyDomain(temperatures.map(reciprocal), 0.05),
+    label: "1000/T, K⁻¹",
+  };
 }
 
 /** Round temperatures, degC, at their places on a reciprocal axis. */
@@ -31,7 +35,10 @@ export function celsiusTicks(axis: Axis): Tick[] {
   const step = [2, 5, 10, 20, 50, 100].find((each) => (hottest - coldest) / each <= 9) ?? 200;
   const ticks: Tick[] = [];
   for (let at = Math.ceil(coldest / step) * step; at <= hottest; at += step)
-    ticks.push({ value: reciprocal(at - celsius(0)), text: String(at).replace("-", "−") });
+    ticks.push({
+      value: reciprocal(at - celsius(0)),
+      text: String(at).replace("-", "−"),
+    });
   return ticks;
 }
 
@@ -52,7 +59,10 @@ function lineOf(rate: RateFindings): RatePoint[] {
     const [before, next] = [points[after - 1], points[after]];
     if (before === undefined || next === undefined || before.x === x) continue;
     const part = (x - before.x) / (next.x - before.x);
-    points.splice(after, 0, { x, lnK: before.lnK + part * (next.lnK - before.lnK) });
+    points.splice(after, 0, {
+      x,
+      lnK: before.lnK + part * (next.lnK - before.lnK),
+    });
   }
   return points;
 }
@@ -62,7 +72,15 @@ function lineMarks(rate: RateFindings, tone: Tone): Mark[] {
   const points = lineOf(rate);
   const pair = ({ x, lnK }: RatePoint) => [x, lnK] as const;
   if (rate.fittedRange_K === null)
-    return [{ type: "line", tone, dash: "solid", weight: "normal", points: points.map(pair) }];
+    return [
+      {
+        type: "line",
+        tone,
+        dash: "solid",
+        weight: "normal",
+        points: points.map(pair),
+      },
+    ];
   const [left, right] = [reciprocal(rate.fittedRange_K[1]), reciprocal(rate.fittedRange_K[0])];
   const piece = (outside: boolean, of: readonly RatePoint[]): Mark => ({
     type: "line",
@@ -96,7 +114,15 @@ function fitMarks(rate: RateFindings, tone: Tone): Mark[] {
   const leftOut = rows.filter((row) => row.leftOut !== null);
   return [
     ...(used.length > 0
-      ? [{ type: "points", tone, shape: "ring", points: used.map(place), name: "measured" } as const]
+      ? [
+          {
+            type: "points",
+            tone,
+            shape: "ring",
+            points: used.map(place),
+            name: "measured",
+          } as const,
+        ]
       : []),
     ...(leftOut.length > 0
       ? [
@@ -115,7 +141,13 @@ function fitMarks(rate: RateFindings, tone: Tone): Mark[] {
 function marksOf(rate: RateFindings, tone: Tone): Mark[] {
   const band = rate.table.flatMap(({ temperature_K, low95, high95 }) =>
     low95 !== null && high95 !== null && low95 > 0
-      ? [{ x: reciprocal(temperature_K), low: Math.log(low95), high: Math.log(high95) }]
+      ? [
+          {
+            x: reciprocal(temperature_K),
+            low: Math.log(low95),
+            high: Math.log(high95),
+          },
+        ]
       : [],
   );
   const { temperature_K, k, unit } = rate.atProcess;

@@ -9,12 +9,24 @@ const toPath = line<Point>().digits(2);
 
 /** A stroke along a polyline. */
 export function strokeAlong(points: readonly Point[], tone: Tone, dash: Dash, weight: Weight): Path {
-  return { kind: "path", d: toPath(points) ?? "", tone, fill: "none", stroke: { dash, weight } };
+  return {
+    kind: "path",
+    d: toPath(points) ?? "",
+    tone,
+    fill: "none",
+    stroke: { dash, weight },
+  };
 }
 
 /** A filled outline. */
 export function filledOutline(points: readonly Point[], tone: Tone, fill: Paint): Path {
-  return { kind: "path", d: `${toPath(points) ?? ""}Z`, tone, fill, stroke: null };
+  return {
+    kind: "path",
+    d: `${toPath(points) ?? ""}Z`,
+    tone,
+    fill,
+    stroke: null,
+  };
 }
 
 /** A rectangle; `outlined` draws its edge in the tone. */
@@ -40,7 +52,13 @@ export function hatching(box: Box, tone: Tone): Path {
     const cut = clipSegment([x, box.bottom], [x + height, box.top], box);
     if (cut !== null) d += toPath(cut) ?? "";
   }
-  return { kind: "path", d, tone, fill: "none", stroke: { dash: "solid", weight: "thin" } };
+  return {
+    kind: "path",
+    d,
+    tone,
+    fill: "none",
+    stroke: { dash: "solid", weight: "thin" },
+  };
 }
 
 /** A stretch or an area in one of the four fills. */
@@ -61,7 +79,13 @@ export function shapeAt([x, y]: Point, shape: Shape, tone: Tone, radius = 4.5): 
       const d = `M${left},${middle}A${r},${r},0,1,1,${right},${middle}A${r},${r},0,1,1,${left},${middle}Z`;
       return shape === "circle"
         ? { kind: "path", d, tone, fill: "tone", stroke: null }
-        : { kind: "path", d, tone, fill: "paper", stroke: { dash: "solid", weight: "normal" } };
+        : {
+            kind: "path",
+            d,
+            tone,
+            fill: "paper",
+            stroke: { dash: "solid", weight: "normal" },
+          };
     }
     case "diamond":
       return filledOutline(corners([0, -1.3], [1.3, 0], [0, 1.3], [-1.3, 0]), tone, "tone");
@@ -71,7 +95,13 @@ export function shapeAt([x, y]: Point, shape: Shape, tone: Tone, radius = 4.5): 
       return filledOutline(corners([0, -1.2], [1.15, 0.9], [-1.15, 0.9]), tone, "tone");
     case "cross": {
       const d = `${toPath(corners([-0.8, -0.8], [0.8, 0.8])) ?? ""}${toPath(corners([-0.8, 0.8], [0.8, -0.8])) ?? ""}`;
-      return { kind: "path", d, tone, fill: "none", stroke: { dash: "solid", weight: "normal" } };
+      return {
+        kind: "path",
+        d,
+        tone,
+        fill: "none",
+        stroke: { dash: "solid", weight: "normal" },
+      };
     }
   }
 }
@@ -97,10 +127,20 @@ export function textBox({ x, y, text, anchor, size, bold }: Text): Box {
   const height = textSizes[size];
   const width = textWidth(text, height, bold);
   const left = anchor === "start" ? x : anchor === "end" ? x - width : x - width / 2;
-  return { left, top: y - 0.8 * height, right: left + width, bottom: y + 0.24 * height };
+  return {
+    left,
+    top: y - 0.8 * height,
+    right: left + width,
+    bottom: y + 0.24 * height,
+  };
 }
 
 /** A box with a margin. */
 export function grown(box: Box, across: number, up: number): Box {
-  return { left: box.left - across, right: box.right + across, top: box.top - up, bottom: box.bottom + up };
+  return {
+    left: box.left - across,
+    right: box.right + across,
+    top: box.top - up,
+    bottom: box.bottom + up,
+  };
 }

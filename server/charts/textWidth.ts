@@ -10,8 +10,15 @@ const advances = [
   351, 568, 492, 768, 507, 499, 464, 343, 314, 343, 600,
 ] as const;
 
-/** For every other character: no narrower than those that figures use (°, −, ×, superscripts). */
-const otherAdvance = 620;
+/** As wide as a space. */
+const noBreak = "\u00a0";
+
+/** Letters with accents and the symbols that figures use (°, −, ×, superscripts) are no wider. */
+const symbolAdvance = 620;
+const symbols = /[\u00a1-\u024f\u2070-\u207f−≥≤–]/;
+
+/** Anything else may come from a fallback font: as wide as it is high. */
+const otherAdvance = 1000;
 
 /** Semibold letters are at most this much wider. */
 const boldFactor = 1.06;
@@ -23,24 +30,35 @@ const boldFactor = 1.06;
  */
 export function textWidth(text: string, size: number, bold = false): number {
   let sum = 0;
-  for (const character of text) sum += advances[(character.codePointAt(0) ?? 0) - 32] ?? otherAdvance;
+  for (const character of text.replaceAll(noBreak, " "))
+    sum +=
+      advances[(character.codePointAt(0) ?? 0) - 32] ??
+      (symbols.test(character) ? symbolAdvance : otherAdvance);
   return (sum / 1000) * size * (bold ? boldFactor : 1);
 }
 
+/** A space before a unit, where no line may end. */
+const beforeUnit = /\s+(?=(?:°C|K|%|s|min|h|days|years|W|kW)(?:[\s.,;:)]|$))/g;
+
 /**
- * Breaks text at spaces into lines no wider than `width`; a longer word stands alone on its line.
+ * Breaks text at spaces into lines no wider than `width`; a longer word stands alone on its line, and a number
+ * stays with its unit.
  */
 export function wrapText(text: string, size: number, width: number): string[] {
   const lines: string[] = [];
   let line = "";
-  for (const word of text.split(/\s+/).filter((each) => each !== "")) {
+  for (const word of text
+    .replace(beforeUnit, noBreak)
+    .split(/[ \t\r\n]+/)
+    .filter((each) => each !== "")) {
     const longer = line === "" ? word : `${line} ${word}`;
     if (line !== "" && textWidth(longer, size) > width) {
       lines.push(line);
       line = word;
     } else line = longer;
   }
-  return line === "" ? lines : [...lines, line];
+  if (line !== "") lines.push(line);
+  return lines.map((each) => each.replaceAll(noBreak, " "));
 }
 
 /** Cuts text to a width, with an ellipsis where something is missing. */

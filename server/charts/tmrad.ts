@@ -114,7 +114,14 @@ function marksOf(times: TmradFindings, marked: readonly Marked[]): Mark[] {
     ...marked.flatMap(({ temperature_K, time_s, tone }): Mark[] =>
       time_s === null || time_s <= 0
         ? []
-        : [{ type: "points", tone, shape: "circle", points: [[celsius(temperature_K), time_s]] }],
+        : [
+            {
+              type: "points",
+              tone,
+              shape: "circle",
+              points: [[celsius(temperature_K), time_s]],
+            },
+          ],
     ),
   ];
 }
@@ -160,7 +167,10 @@ export function tmrad(findings: Findings): Figure | null {
       {
         type: "plot",
         height: 270,
-        xAxis: { ...xAxis, domain: [celsius(times.curve[0]?.temperature_K ?? 0), xAxis.domain[1]] },
+        xAxis: {
+          ...xAxis,
+          domain: [celsius(times.curve[0]?.temperature_K ?? 0), xAxis.domain[1]],
+        },
         yAxis: durationAxis([...shownTimes, eightHours, day], "TMRad (logarithmic)"),
         marks: marksOf(times, marked),
       },

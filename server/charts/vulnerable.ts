@@ -1,14 +1,10 @@
+import type { FailureFindings } from "../screening/findings.js";
 import { durationText } from "../words/numbers.js";
 import { durationAxis, timeUnit } from "./durationAxis.js";
 import type { Figure, Mark } from "./figure.js";
 
 /** One moment of the batch at which a failure was made to begin. */
-export interface VulnerableMoment {
-  readonly startedAt_s: number;
-  /** 0 for lost, null for holds */
-  readonly timeToAct_s: number | null;
-  readonly verdict: "holds" | "act" | "lost";
-}
+type VulnerableMoment = NonNullable<FailureFindings["vulnerable"]>[number];
 
 function verdictWords({ verdict, timeToAct_s }: VulnerableMoment): string {
   if (verdict === "holds") return "holds by itself";

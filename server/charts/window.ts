@@ -55,7 +55,14 @@ function windowLane(window: WindowFindings): Lane {
     height: "thick",
     apart: true,
     spans: [
-      ...others.map((part) => inCelsius(part, { fill: "pale", tone: "plan", breadth: 1, outlined: true })),
+      ...others.map((part) =>
+        inCelsius(part, {
+          fill: "pale",
+          tone: "plan",
+          breadth: 1,
+          outlined: true,
+        }),
+      ),
       ...spansOf(left === null ? [] : [left], careful, "plan"),
     ],
     marks: [],
@@ -143,7 +150,14 @@ export function windowFigure(findings: Findings, window: WindowFindings): Figure
     title: "Temperatures and window",
     sentence: `${windowSentence(findings, window)} ${ladderSentence(findings)}`,
     panels: [
-      { type: "lanes", xAxis, axisShown: false, lanes: ladderLanes(findings), marks: [], key: [] },
+      {
+        type: "lanes",
+        xAxis,
+        axisShown: false,
+        lanes: ladderLanes(findings),
+        marks: [],
+        key: [],
+      },
       {
         type: "lanes",
         xAxis,

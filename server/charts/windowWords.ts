@@ -21,8 +21,14 @@ const beyond: Readonly<Record<string, { readonly below: string; readonly above: 
     below: "the duty exceeds what the cooling may give",
     above: "the duty exceeds what the cooling may give",
   },
-  stability: { below: "the vessel does not steady itself", above: "the vessel does not steady itself" },
-  "mtsr-mtt": { below: "accumulation lifts MTSR over MTT", above: "MTSR passes MTT" },
+  stability: {
+    below: "the vessel does not steady itself",
+    above: "the vessel does not steady itself",
+  },
+  "mtsr-mtt": {
+    below: "accumulation lifts MTSR over MTT",
+    above: "MTSR passes MTT",
+  },
   "mtsr-tmr": {
     below: "accumulation shortens TMRad from MTSR too far",
     above: "TMRad from MTSR is too short",

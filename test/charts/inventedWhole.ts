@@ -1,4 +1,3 @@
-import type { VulnerableMoment } from "../../server/charts/vulnerable.js";
 import type { FailureFindings, Findings } from "../../server/screening/findings.js";
 import { range, zero } from "./invented.js";
 import { inventedDosed } from "./inventedDosed.js";
@@ -10,7 +9,11 @@ function course(start: number, end: number, constant: number, away: number | nul
     const calm = end - (end - start) * Math.exp(-time_s / constant);
     const temperature_K =
       away === null || time_s < 0.5 * away ? calm : calm + 40 / Math.max(0.02, 1 - time_s / away) - 80;
-    return { time_s, temperature_K: Math.min(600, Math.max(calm, temperature_K)), jacket_K: calm - 5 };
+    return {
+      time_s,
+      temperature_K: Math.min(600, Math.max(calm, temperature_K)),
+      jacket_K: calm - 5,
+    };
   });
 }
 
@@ -53,14 +56,8 @@ function passing(trace: FailureFindings["trace"]): number {
 const runningOn = course(35 + zero, 70 + zero, 5e3, 9e3);
 const slow = course(35 + zero, 62 + zero, 2e4, 7e4);
 
-interface WithMoments {
-  readonly vulnerable?: readonly VulnerableMoment[];
-}
-
 /** The dosed case with everything: failures, a measured run and the feed lever. */
-export const inventedWhole: Omit<Findings, "failures"> & {
-  readonly failures: readonly (FailureFindings & WithMoments)[];
-} = {
+export const inventedWhole: Findings = {
   ...inventedDosed,
   accumulation: {
     maximumFraction: 0.14,

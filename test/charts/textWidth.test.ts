@@ -45,6 +45,13 @@ describe("breaking and cutting text", () => {
     for (const line of lines) expect(textWidth(line, 11)).toBeLessThanOrEqual(150);
   });
 
+  test("never parts a number from its unit", () => {
+    for (let width = 20; width < 200; width += 5) {
+      const lines = wrapText("limits of the study, 0.0 to 80.0 °C, held for 3 min or 4 h", 11, width);
+      for (const line of lines) expect(line).not.toMatch(/^(°C|min|h)( |,|$)/);
+    }
+  });
+
   test("leaves a word that is too long alone on its line", () => {
     expect(wrapText("a incomprehensibilities b", 11, 40)).toEqual(["a", "incomprehensibilities", "b"]);
   });
