@@ -55,7 +55,11 @@ function writeMetadata(pdf: PDFKit.PDFDocument, facts: DocumentFacts): void {
   pdf.appendXML = () => {};
 }
 
-const entities: Readonly<Record<string, string>> = { "&": "&amp;", "<": "&lt;", ">": "&gt;" };
+const entities: Readonly<Record<string, string>> = {
+  "&": "&amp;",
+  "<": "&lt;",
+  ">": "&gt;",
+};
 
 /** Text for XML 1.0: what it cannot hold at all becomes the replacement character. */
 export function escapeXml(text: string): string {

@@ -6,11 +6,14 @@ import { type Cursor, childElement, paragraph, readable, styles, subheading } fr
 
 /** Draws a figure in one piece with its title and its sentence. */
 export function drawFigure(cursor: Cursor, figure: Figure): void {
-  const { pdf, width } = cursor;
-  const sentence = wrap(pdf, figure.sentence, width, styles.small).length * lineHeight(styles.small);
+  const { width } = cursor;
+  const sentence = wrap(figure.sentence, width, styles.small).length * lineHeight(styles.small);
   subheading(cursor, figure.title, pdfHeight(figure, width) + sentence + 10);
   drawMarks(cursor, figure, width);
-  paragraph(cursor, figure.sentence, styles.small, { tag: "Caption", after: 6 });
+  paragraph(cursor, figure.sentence, styles.small, {
+    tag: "Caption",
+    after: 6,
+  });
 }
 
 /** Below this part of the full width a figure's words would be too small to read on paper. */
@@ -24,7 +27,9 @@ export function drawPicture(cursor: Cursor, figure: Figure, room: number): void 
 
 /** What the figure shows is read aloud in its place. */
 function drawMarks(cursor: Cursor, figure: Figure, width: number): void {
-  const element = childElement(cursor, "Figure", { alt: `${figure.title}. ${figure.sentence}` });
+  const element = childElement(cursor, "Figure", {
+    alt: `${figure.title}. ${figure.sentence}`,
+  });
   readable(cursor, element, "Figure", () => {
     const x = cursor.left + (cursor.width - width) / 2;
     cursor.y += drawPdf(cursor.pdf, figure, { x, y: cursor.y, width }, chartFonts()) + 2;
@@ -39,5 +44,10 @@ function chartFonts(): PdfFonts {
     const point = character.codePointAt(0) ?? 0;
     return regular?.covers.has(point) === true && bold?.covers.has(point) === true;
   };
-  return { regular: regular?.name ?? "", bold: bold?.name ?? "", fallback: fallback?.name ?? "", covers };
+  return {
+    regular: regular?.name ?? "",
+    bold: bold?.name ?? "",
+    fallback: fallback?.name ?? "",
+    covers,
+  };
 }

@@ -25,10 +25,10 @@ export function writeRunning(cursor: Cursor, running: Running): void {
 function head(cursor: Cursor, running: Running): void {
   const { pdf, left, width } = cursor;
   const style = styles.label;
-  const record = shorten(pdf, `Batch record: ${running.record ?? "not given"}`, 0.35 * width, style);
-  const recordWidth = widthOf(pdf, record, style);
+  const record = shorten(`Batch record: ${running.record ?? "not given"}`, 0.35 * width, style);
+  const recordWidth = widthOf(record, style);
   const y = cursor.top - 28;
-  drawLine(pdf, shorten(pdf, running.title, width - recordWidth - 16, style), left, y, style);
+  drawLine(pdf, shorten(running.title, width - recordWidth - 16, style), left, y, style);
   drawLine(pdf, record, left + width - recordWidth, y, style);
   rule(cursor, y + lineHeight(style) + 3, 0.5, ink.rule);
 }
@@ -37,8 +37,11 @@ function foot(cursor: Cursor, running: Running, pages: string): void {
   const { pdf, left, width } = cursor;
   const y = cursor.bottom + 12;
   rule(cursor, y, 0.5, ink.rule);
-  drawLine(pdf, noticeFirstSentence, left, y + 4, { ...styles.small, weight: "strong" });
+  drawLine(pdf, noticeFirstSentence, left, y + 4, {
+    ...styles.small,
+    weight: "strong",
+  });
   const below = y + 4 + lineHeight(styles.small);
   drawLine(pdf, `${running.program} · case ${running.digest.slice(0, 12)}`, left, below, styles.label);
-  drawLine(pdf, pages, left + width - widthOf(pdf, pages, styles.label), below, styles.label);
+  drawLine(pdf, pages, left + width - widthOf(pages, styles.label), below, styles.label);
 }

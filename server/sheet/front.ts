@@ -56,9 +56,9 @@ function roomForPicture(cursor: Cursor): number {
 function writeTitle(cursor: Cursor, block: TitleBlock, findings: Findings): void {
   const { pdf } = cursor;
   pdf.outline.addItem("Summary");
-  const lines = wrap(pdf, block.title, cursor.width, styles.title);
+  const lines = wrap(block.title, cursor.width, styles.title);
   const shown = lines.slice(0, 2);
-  if (lines.length > 2) shown[1] = shorten(pdf, lines.slice(1).join(" "), cursor.width, styles.title);
+  if (lines.length > 2) shown[1] = shorten(lines.slice(1).join(" "), cursor.width, styles.title);
   const element = childElement(cursor, "H1");
   readable(cursor, element, "H1", () => {
     for (const line of shown) {
@@ -75,9 +75,18 @@ function writeTitle(cursor: Cursor, block: TitleBlock, findings: Findings): void
       { label: "Batch record", value: batch.record ?? "not given" },
       { label: "Step", value: batch.step ?? "not given" },
       { label: "Vessel", value: batch.vessel ?? "not given" },
-      { label: "Prepared by (as typed, not verified)", value: batch.preparedBy ?? "not given" },
-      { label: "Program", value: `${findings.program.name} ${findings.program.version}` },
-      { label: "Digest of the case, SHA-256, first 12 of 64", value: findings.digest.slice(0, 12) },
+      {
+        label: "Prepared by (as typed, not verified)",
+        value: batch.preparedBy ?? "not given",
+      },
+      {
+        label: "Program",
+        value: `${findings.program.name} ${findings.program.version}`,
+      },
+      {
+        label: "Digest of the case, SHA-256, first 12 of 64",
+        value: findings.digest.slice(0, 12),
+      },
     ],
     3,
   );
@@ -95,7 +104,7 @@ function facts(cursor: Cursor, cells: readonly Fact[], columns: number): void {
   const width = (cursor.width + 12) / columns;
   for (let first = 0; first < cells.length; first += columns) {
     const row = cells.slice(first, first + columns);
-    const details = row.map((cell) => wrap(pdf, cell.detail ?? "", width - 12, styles.label).slice(0, 2));
+    const details = row.map((cell) => wrap(cell.detail ?? "", width - 12, styles.label).slice(0, 2));
     const detailLines = Math.max(
       ...row.map((cell, index) => (cell.detail ? (details[index]?.length ?? 0) : 0)),
     );
@@ -103,9 +112,9 @@ function facts(cursor: Cursor, cells: readonly Fact[], columns: number): void {
       const x = left + index * width;
       const element = childElement(cursor, "P");
       readable(cursor, element, "P", () => {
-        drawLine(pdf, shorten(pdf, cell.label, width - 12, styles.label), x, cursor.y, styles.label);
+        drawLine(pdf, shorten(cell.label, width - 12, styles.label), x, cursor.y, styles.label);
         const y = cursor.y + lineHeight(styles.label);
-        drawLine(pdf, shorten(pdf, cell.value, width - 12, styles.strong), x, y, styles.strong);
+        drawLine(pdf, shorten(cell.value, width - 12, styles.strong), x, y, styles.strong);
         details[index]?.forEach((line, number) => {
           const below = y + lineHeight(styles.strong) + number * lineHeight(styles.label);
           drawLine(pdf, line, x, below, styles.label);
@@ -120,7 +129,7 @@ function facts(cursor: Cursor, cells: readonly Fact[], columns: number): void {
 
 function noticeBox(cursor: Cursor, notice: string): void {
   const style: TextStyle = styles.strong;
-  const lines = wrap(cursor.pdf, notice, cursor.width - 16, style);
+  const lines = wrap(notice, cursor.width - 16, style);
   const height = lines.length * lineHeight(style) + 8;
   ornament(cursor, () => {
     cursor.pdf.rect(cursor.left, cursor.y, cursor.width, height).fill(ink.fill);
@@ -147,9 +156,7 @@ function stopBox(cursor: Cursor, findings: Findings): void {
     `${stopSentence(findings)} The result must not be used as it is.`,
     ...stops.map((stop) => stop.text),
   ];
-  const blocks = texts.map((text, index) =>
-    wrap(pdf, text, inner, index === 0 ? styles.strong : styles.body),
-  );
+  const blocks = texts.map((text, index) => wrap(text, inner, index === 0 ? styles.strong : styles.body));
   const height = blocks.reduce((sum, lines) => sum + lines.length * lineHeight(styles.body) + 2, 8);
   ornament(cursor, () => {
     pdf.rect(left, cursor.y, wordWidth, height).fill("#000000");
@@ -188,7 +195,10 @@ function keyFacts(findings: Findings): Fact[] {
   const high = uncertainty?.mtsr_K?.p95 ?? null;
   const low = uncertainty?.td24_K?.p05 ?? null;
   return [
-    { label: "Process temperature", value: temperatureText(temperatures.process_K) },
+    {
+      label: "Process temperature",
+      value: temperatureText(temperatures.process_K),
+    },
     {
       label: "MTSR",
       value: optional(temperatures.mtsr_K, (kelvin) => temperatureText(kelvin, "up")),
@@ -210,7 +220,10 @@ function keyFacts(findings: Findings): Fact[] {
       value: optional(heat.decompositionRise_K, (kelvin) => differenceText(kelvin, "up")),
       detail: severityText(heat.decompositionSeverity),
     },
-    { label: "TMRad from process temperature", value: tmradText(tmrad, "atProcess_s") },
+    {
+      label: "TMRad from process temperature",
+      value: tmradText(tmrad, "atProcess_s"),
+    },
     {
       label: "TMRad from MTSR",
       value: tmradText(tmrad, "atMtsr_s"),
@@ -246,8 +259,7 @@ function writeWarnings(cursor: Cursor, warnings: readonly Caution[]): void {
   let written = 0;
   for (const warning of warnings) {
     const text = `${warning.code}: ${warning.text}`;
-    const height =
-      wrap(cursor.pdf, text, cursor.width - 8, styles.small).length * lineHeight(styles.small) + 2;
+    const height = wrap(text, cursor.width - 8, styles.small).length * lineHeight(styles.small) + 2;
     if (cursor.y + height > cursor.bottom - roomForCodes) break;
     paragraph(cursor, text, styles.small, { indent: 8, after: 2 });
     written++;

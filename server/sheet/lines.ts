@@ -1,5 +1,6 @@
 import { paperTones } from "../charts/palette.js";
 import type { Weight } from "./fonts.js";
+import { textWidth } from "./ruler.js";
 import { type Run, runsOf } from "./runs.js";
 
 export interface TextStyle {
@@ -33,17 +34,21 @@ function piecesOf(line: string, { size, weight, formula = false }: TextStyle): r
     const [, mark, inner] = marked.exec(part) ?? [];
     if (inner === undefined) return runsOf(part, weight).map((run) => ({ ...run, size, lowered: 0 }));
     const lowered = size * (mark === "_" ? script.lowered : -script.raised);
-    return runsOf(inner, weight).map((run) => ({ ...run, size: script.size * size, lowered }));
+    return runsOf(inner, weight).map((run) => ({
+      ...run,
+      size: script.size * size,
+      lowered,
+    }));
   });
 }
 
 /** Width of one line, pt. */
-export function widthOf(pdf: PDFKit.PDFDocument, line: string, style: TextStyle): number {
-  return piecesOf(line, style).reduce((sum, piece) => sum + pieceWidth(pdf, piece), 0);
+export function widthOf(line: string, style: TextStyle): number {
+  return piecesOf(line, style).reduce((sum, piece) => sum + pieceWidth(piece), 0);
 }
 
-function pieceWidth(pdf: PDFKit.PDFDocument, piece: Piece): number {
-  return pdf.font(piece.face).fontSize(piece.size).widthOfString(piece.text);
+function pieceWidth({ face, size, text }: Piece): number {
+  return size * textWidth(face, text);
 }
 
 /**
@@ -62,9 +67,12 @@ export function drawLine(
   let at = x;
   pdf.fillColor(style.colour ?? paperTones.ink);
   for (const piece of piecesOf(line, style)) {
-    const width = pieceWidth(pdf, piece);
+    const width = pieceWidth(piece);
     const baseline = y + 1.02 * style.size + piece.lowered;
-    pdf.text(piece.text, at, baseline, { lineBreak: false, baseline: "alphabetic" });
+    pdf.font(piece.face).fontSize(piece.size).text(piece.text, at, baseline, {
+      lineBreak: false,
+      baseline: "alphabetic",
+    });
     at += width;
   }
 }
@@ -80,26 +88,26 @@ const openUnit = /\/\([^()]{1,12}$/u;
  *
  * @param width pt
  */
-export function wrap(pdf: PDFKit.PDFDocument, text: string, width: number, style: TextStyle): string[] {
-  return text.split(/\r\n|[\n\r\u2028\u2029]/u).flatMap((part) => wrapPart(pdf, part, width, style));
+export function wrap(text: string, width: number, style: TextStyle): string[] {
+  return text.split(/\r\n|[\n\r\u2028\u2029]/u).flatMap((part) => wrapPart(part, width, style));
 }
 
-function wrapPart(pdf: PDFKit.PDFDocument, text: string, width: number, style: TextStyle): string[] {
+function wrapPart(text: string, width: number, style: TextStyle): string[] {
   const lines: string[] = [];
-  const space = widthOf(pdf, " ", style);
+  const space = widthOf(" ", style);
   let line: string | null = null;
   let used = 0;
   for (const word of wordsOf(text)) {
-    const more = widthOf(pdf, word, style);
+    const more = widthOf(word, style);
     if (line !== null && used + space + more <= width) {
       line = `${line} ${word}`;
       used += space + more;
       continue;
     }
     if (line !== null) lines.push(line);
-    const pieces: string[] = more <= width ? [word] : breakWord(pdf, word, width, style);
+    const pieces: string[] = more <= width ? [word] : breakWord(word, width, style);
     line = pieces.pop() ?? "";
-    used = widthOf(pdf, line, style);
+    used = widthOf(line, style);
     lines.push(...pieces);
   }
   return [...lines, line ?? ""];
@@ -116,12 +124,12 @@ function wordsOf(text: string): string[] {
   return words;
 }
 
-function breakWord(pdf: PDFKit.PDFDocument, word: string, width: number, style: TextStyle): string[] {
+function breakWord(word: string, width: number, style: TextStyle): string[] {
   const pieces: string[] = [];
   let piece = "";
   let used = 0;
   for (const character of word) {
-    const more = widthOf(pdf, character, style);
+    const more = widthOf(character, style);
     if (piece !== "" && used + more > width) {
       pieces.push(piece);
       piece = "";
@@ -135,10 +143,10 @@ function breakWord(pdf: PDFKit.PDFDocument, word: string, width: number, style: 
 }
 
 /** One line that fits, with an ellipsis where something was left out. */
-export function shorten(pdf: PDFKit.PDFDocument, text: string, width: number, style: TextStyle): string {
-  const [first = "", ...rest] = wrap(pdf, text.slice(0, 400), width, style);
+export function shorten(text: string, width: number, style: TextStyle): string {
+  const [first = "", ...rest] = wrap(text.slice(0, 400), width, style);
   if (rest.length === 0 && text.length <= 400) return first;
   const characters = [...first];
-  while (characters.length > 0 && widthOf(pdf, `${characters.join("")}…`, style) > width) characters.pop();
+  while (characters.length > 0 && widthOf(`${characters.join("")}…`, style) > width) characters.pop();
   return `${characters.join("").trimEnd()}…`;
 }

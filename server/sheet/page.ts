@@ -111,7 +111,7 @@ export function paragraph(
   options: ParagraphOptions = {},
 ): void {
   const { tag = "P", indent = 0, after = 4 } = options;
-  const lines = wrap(cursor.pdf, text, cursor.width - indent, style);
+  const lines = wrap(text, cursor.width - indent, style);
   const element = childElement(cursor, tag);
   const height = lineHeight(style);
   ensure(cursor, Math.min(lines.length, 2) * height);

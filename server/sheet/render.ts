@@ -49,7 +49,12 @@ export async function renderSheet({ document, model, findings, paper }: SheetInp
   writeCautions(cursor, findings.cautions, findings);
   writeSignatures(cursor, document.batch?.preparedBy ?? null, findings.digest);
   cursor.parent.end();
-  writeRunning(cursor, { title: document.title, record, program, digest: findings.digest });
+  writeRunning(cursor, {
+    title: document.title,
+    record,
+    program,
+    digest: findings.digest,
+  });
   attachRecord(pdf, recordBytes(document, findings));
   return closeDocument(pdf);
 }

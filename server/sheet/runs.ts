@@ -14,18 +14,22 @@ const scripts = /[⁰¹²³⁴-⁹⁺⁻⁼⁽⁾ⁿ]+|[₀-₉₊₋₌₍₎�
 /** What has no shape of its own; as a code it cannot hide or reorder text on a record. */
 const shapeless = /[\p{Cc}\p{Cf}\p{Co}\p{Cn}\p{Cs}]/u;
 
-/** Most lines; the first font holds these characters. */
-const plain = /^[ -~]*$/;
-
 /**
  * Splits one line of text into runs by font. A character that no font holds is written as its code,
  * such as [U+4E2D]: nothing that was typed disappears or turns into an empty box.
  */
 export function runsOf(line: string, weight: Weight): readonly Run[] {
   const faces = facesOf(weight);
-  if (plain.test(line)) return line === "" ? [] : [{ face: faces[0]?.name ?? "", text: line }];
+  const [preferred] = faces;
+  const text = line.normalize("NFC").replace(/\s/gu, plainSpace);
+  if (text === "") return [];
+  if (preferred !== undefined && holds(preferred, text)) return [{ face: preferred.name, text }];
+  return mixedRuns(text, faces);
+}
+
+function mixedRuns(line: string, faces: readonly Face[]): readonly Run[] {
   const runs: { face: string; text: string }[] = [];
-  for (const cluster of clustersOf(line.normalize("NFC").replace(/\s/gu, plainSpace))) {
+  for (const cluster of clustersOf(line)) {
     const face = faceFor(cluster, faces);
     const text = face === undefined ? codesOf(cluster) : cluster;
     const name = (face ?? faces[0])?.name ?? "";
@@ -51,9 +55,13 @@ function* clustersOf(line: string): Generator<string> {
 }
 
 function faceFor(cluster: string, faces: readonly Face[]): Face | undefined {
-  if (shapeless.test(cluster)) return undefined;
-  const points = [...cluster].map((character) => character.codePointAt(0) ?? 0);
-  return faces.find((face) => points.every((point) => face.covers.has(point)));
+  return faces.find((face) => holds(face, cluster));
+}
+
+function holds(face: Face, text: string): boolean {
+  if (shapeless.test(text)) return false;
+  for (const character of text) if (!face.covers.has(character.codePointAt(0) ?? 0)) return false;
+  return true;
 }
 
 function codesOf(cluster: string): string {

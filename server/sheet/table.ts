@@ -48,14 +48,13 @@ export function table(
   const shares = columns.reduce((sum, column) => sum + column.share, 0);
   const widths = columns.map((column) => (column.share / shares) * (cursor.width + gap) - gap);
   const head = layRow(
-    cursor,
     widths,
     columns.map((column) => column.heading),
     headStyle,
   );
   const highest = cursor.bottom - cursor.top - head.height;
   const laid = rows.flatMap((row, index) =>
-    partRow(layRow(cursor, widths, row, options.strong?.(index) === true ? headStyle : cellStyle), highest),
+    partRow(layRow(widths, row, options.strong?.(index) === true ? headStyle : cellStyle), highest),
   );
   const element = childElement(cursor, "Table");
   const draw = (row: Row, parent: Element | null, tagOf: (column: number) => string) =>
@@ -99,11 +98,11 @@ function rowsThatFit(cursor: Cursor, headHeight: number, rows: readonly Row[], f
 }
 
 /** Text whose cell has nothing to its right may use the room that is left there. */
-function layRow(cursor: Cursor, widths: readonly number[], texts: readonly string[], style: TextStyle): Row {
+function layRow(widths: readonly number[], texts: readonly string[], style: TextStyle): Row {
   const last = texts.findLastIndex((text) => text !== "");
   const room = widths.slice(last).reduce((sum, width) => sum + width + gap, -gap);
   const cells = widths.map((width, column) =>
-    wrap(cursor.pdf, texts[column] ?? "", column === last ? room : width, style),
+    wrap(texts[column] ?? "", column === last ? room : width, style),
   );
   return { cells, style, height: rowHeight(cells, style) };
 }
@@ -119,7 +118,11 @@ function partRow(row: Row, highest: number): Row[] {
   const longest = Math.max(...row.cells.map((lines) => lines.length));
   for (let from = 0; from < longest; from += most) {
     const cells = row.cells.map((lines) => lines.slice(from, from + most));
-    parts.push({ cells, style: row.style, height: rowHeight(cells, row.style) });
+    parts.push({
+      cells,
+      style: row.style,
+      height: rowHeight(cells, row.style),
+    });
   }
   return parts;
 }
@@ -178,7 +181,7 @@ function drawCell(
 ): void {
   const shown = absent.test(lines.join(" ")) ? { ...style, colour: ink.quiet } : style;
   lines.forEach((line, index) => {
-    const indent = align === "right" ? width - widthOf(cursor.pdf, line, style) : 0;
+    const indent = align === "right" ? width - widthOf(line, style) : 0;
     drawLine(cursor.pdf, line, x + indent, cursor.y + padding + index * lineHeight(style), shown);
   });
 }

@@ -46,7 +46,10 @@ export interface TypedInputs {
 }
 
 interface OpenList extends TypedList {
-  readonly entries: { readonly fields: TypedField[]; readonly inner: TypedField[][] }[];
+  readonly entries: {
+    readonly fields: TypedField[];
+    readonly inner: TypedField[][];
+  }[];
 }
 
 /** Everything that stands in a case document, in the order of its schema and in its author's own words. */
@@ -66,7 +69,10 @@ export function typedInputs(document: unknown): TypedInputs {
     const pointer = pointerOf(path.slice(0, depth));
     const list = lists.get(pointer) ?? openList(pointer, groups[depth]);
     lists.set(pointer, list);
-    const entry = at(list.entries, path[depth], () => ({ fields: [], inner: [] }));
+    const entry = at(list.entries, path[depth], () => ({
+      fields: [],
+      inner: [],
+    }));
     const innerDepth = groups.findIndex((place, index) => index > depth && place.kind === "list");
     if (innerDepth < 0) entry.fields.push(field);
     else at<TypedField[]>(entry.inner, path[innerDepth], () => []).push(field);
@@ -96,12 +102,27 @@ function choicesAbove(
     const pointer = pointerOf([...path.slice(0, depth), place.teller]);
     if (option?.kind !== "group" || told.has(pointer)) return [];
     told.add(pointer);
-    return [{ ...unmeasured(pointer, labelOf(place.teller, path, groups)), text: option.about.title }];
+    return [
+      {
+        ...unmeasured(
+          pointer,
+          labelOf({ kind: "text", label: place.about.choosing ?? place.teller }, path, groups),
+        ),
+        text: option.about.title,
+      },
+    ];
   });
 }
 
 function unmeasured(pointer: string, label: string): Omit<TypedInput, "text"> {
-  return { pointer, label, standardError: null, basis: null, source: null, measurable: false };
+  return {
+    pointer,
+    label,
+    standardError: null,
+    basis: null,
+    source: null,
+    measurable: false,
+  };
 }
 
 function inputOf(
@@ -114,7 +135,10 @@ function inputOf(
   const pointer = pointerOf(path);
   const note = notes.get(pointer);
   if (note === undefined) {
-    return { ...unmeasured(pointer, labelOf(leaf.label, path, groups)), text: plainText(leaf, value) };
+    return {
+      ...unmeasured(pointer, labelOf(leaf, path, groups)),
+      text: plainText(leaf, value),
+    };
   }
   const ownWords = leaf.kind === "quantity" && leaf.freeBasis === true ? memberOf(value, "basis") : undefined;
   return {
@@ -159,5 +183,11 @@ function plainText(leaf: Leaf, value: unknown): string {
 function openList(pointer: string, place: Place | undefined): OpenList {
   const about =
     place?.kind === "list" ? place.about : { title: pointer, entry: "Entry", layout: "groups" as const };
-  return { pointer, title: about.title, entry: about.entry, layout: about.layout, entries: [] };
+  return {
+    pointer,
+    title: about.title,
+    entry: about.entry,
+    layout: about.layout,
+    entries: [],
+  };
 }

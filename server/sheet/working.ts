@@ -40,7 +40,7 @@ export function writeWorking(cursor: Cursor, model: CaseModel, findings: Finding
 
 function writeMethod(cursor: Cursor, method: Method): void {
   const lines = [method.equation, method.numbers].flatMap((text) =>
-    wrap(cursor.pdf, text, cursor.width - indent, styles.formula),
+    wrap(text, cursor.width - indent, styles.formula),
   );
   ensure(cursor, (lines.length + 3) * lineHeight(styles.body));
   within(cursor, "Sect", () => {

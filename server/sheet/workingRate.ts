@@ -37,10 +37,18 @@ function rateMethod(title: string, rate: DecompositionRate, found: RateFindings)
   const k =
     atProcess.k === null ? "beyond the range of numbers" : `${numberText(atProcess.k)} ${atProcess.unit}`;
   const at = `T = ${numberText(atProcess.temperature_K, 5)} K`;
-  return { title, equation, numbers: `${parametersText(rate, found)}; ${at}: k = ${k}`, reference: source };
+  return {
+    title,
+    equation,
+    numbers: `${parametersText(rate, found)}; ${at}: k = ${k}`,
+    reference: source,
+  };
 }
 
-function sourceOf(rate: DecompositionRate): { equation: string; reference: string } {
+function sourceOf(rate: DecompositionRate): {
+  equation: string;
+  reference: string;
+} {
   switch (rate.form) {
     case "eyring":
       return eyring;

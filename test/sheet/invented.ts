@@ -39,31 +39,59 @@ export const inventedDocument = {
       temperature: "20 °C",
       duration: "3 h",
     },
-    heat: { value: "−118 kJ·mol⁻¹", standardError: "4 kJ/mol", source: "Heat flow run 7" },
+    heat: {
+      value: "−118 kJ·mol⁻¹",
+      standardError: "4 kJ/mol",
+      source: "Heat flow run 7",
+    },
     rateConstant: {
       form: "table",
       fitAs: "eyring",
       rows: [
         { temperature: "5 °C", rateConstant: "2.1e-4 L/(mol s)" },
         { temperature: "15 °C", rateConstant: "5.4e-4 L/(mol s)" },
-        { temperature: "25 °C", rateConstant: "1.18e-3 L/(mol s)", relativeError: 0.05 },
-        { temperature: "30 °C", rateConstant: "9e-3 L/(mol s)", leftOut: "stirrer stood still" },
+        {
+          temperature: "25 °C",
+          rateConstant: "1.18e-3 L/(mol s)",
+          relativeError: 0.05,
+        },
+        {
+          temperature: "30 °C",
+          rateConstant: "9e-3 L/(mol s)",
+          leftOut: "stirrer stood still",
+        },
       ],
     },
   },
   decomposition: {
     heat: { value: "420 J/g", standardError: "25 J/g" },
     rateLaw: { model: "order", order: 1 },
-    rateConstant: { form: "arrhenius", preExponential: "4.0e11 s^-1", activationEnergy: "128 kJ/mol" },
+    rateConstant: {
+      form: "arrhenius",
+      preExponential: "4.0e11 s^-1",
+      activationEnergy: "128 kJ/mol",
+    },
   },
   vessel: {
-    heatTransferCoefficient: { value: "320 W/(m² K)", basis: "estimated", source: "Cooling curve" },
+    heatTransferCoefficient: {
+      value: "320 W/(m² K)",
+      basis: "estimated",
+      source: "Cooling curve",
+    },
     heatTransferArea: "5.6 m²",
     agitatorPower: "2 kW",
-    coolant: { temperature: "5 °C", flow: "4.5 kg/s", heatCapacity: "3.6 kJ/(kg K)", holdup: "180 kg" },
+    coolant: {
+      temperature: "5 °C",
+      flow: "4.5 kg/s",
+      heatCapacity: "3.6 kJ/(kg K)",
+      holdup: "180 kg",
+    },
   },
   limits: {
-    maximumTechnicalTemperature: { value: "78 °C", basis: "boiling point at 1 atm" },
+    maximumTechnicalTemperature: {
+      value: "78 °C",
+      basis: "boiling point at 1 atm",
+    },
     lowestTemperature: "0 °C",
     highestTemperature: "80 °C",
     availableTime: "8 h",
@@ -77,7 +105,12 @@ export const inventedDocument = {
         { after: "0 min", coolantFlow: 0, feed: "continue" },
         {
           after: "30 min",
-          quench: { mass: "300 kg", heatCapacity: "2 kJ/(kg K)", density: "0.87 kg/L", temperature: "15 °C" },
+          quench: {
+            mass: "300 kg",
+            heatCapacity: "2 kJ/(kg K)",
+            density: "0.87 kg/L",
+            temperature: "15 °C",
+          },
         },
       ],
     },
@@ -101,7 +134,13 @@ const rate: RateFindings = {
   },
   table: [278.15, 288.15, 298.15, 308.15, 318.15].map((temperature_K) => {
     const k = 2.167e-6 * Math.exp(7765 * (1 / 308.15 - 1 / temperature_K));
-    return { temperature_K, k, low95: 0.84 * k, high95: 1.19 * k, extrapolated: temperature_K > 303.15 };
+    return {
+      temperature_K,
+      k,
+      low95: 0.84 * k,
+      high95: 1.19 * k,
+      extrapolated: temperature_K > 303.15,
+    };
   }),
   eyring: {
     activationEnthalpy_J_mol: 62000,
@@ -158,7 +197,12 @@ const cautions: readonly Caution[] = [
     text: "“Coolant pump stops, feed runs on” lets the feed run on: MTSR does not cover it.",
     about: "/failures/0",
   },
-  { code: "PRESSURE", level: "note", text: "Gas, vapour pressure and relief are not assessed.", about: "" },
+  {
+    code: "PRESSURE",
+    level: "note",
+    text: "Gas, vapour pressure and relief are not assessed.",
+    about: "",
+  },
 ];
 
 export const inventedStop: Caution = {
@@ -182,7 +226,13 @@ export const inventedFindings: Findings = {
     decompositionRise_K: 219.17,
     decompositionSeverity: "high",
   },
-  accumulation: { maximumFraction: 0.13646, at_s: 10268.9, curve: [], measured: null, usedFor: "kinetics" },
+  accumulation: {
+    maximumFraction: 0.13646,
+    at_s: 10268.9,
+    curve: [],
+    measured: null,
+    usedFor: "kinetics",
+  },
   temperatures: {
     process_K: 308.15,
     mtsr_K: 321.31782,
@@ -309,6 +359,9 @@ export const inventedFindings: Findings = {
     td24_K: { p05: 370.1, p50: 374, p95: 378.2 },
     mtsr_K: { p05: 318, p50: 321.3, p95: 325.01 },
     upper_K: { p05: 344.8, p50: 348, p95: 350.9 },
+    timeToMaximumRateAtProcess_s: null,
+    timeToMaximumRateAtMtsr_s: null,
+    coolingUse: null,
     timeToAct_s: { p05: 4100, p50: 4748, p95: 5300 },
     drivers: null,
     nextMeasurement: null,
@@ -317,4 +370,7 @@ export const inventedFindings: Findings = {
 };
 
 /** The same case with a stop. */
-export const stoppedFindings: Findings = { ...inventedFindings, cautions: [inventedStop, ...cautions] };
+export const stoppedFindings: Findings = {
+  ...inventedFindings,
+  cautions: [inventedStop, ...cautions],
+};
