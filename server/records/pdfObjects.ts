@@ -15,39 +15,42 @@ const mostObjects = 100_000;
 const entryLength = 20;
 
 /**
- * Reads the objects of a PDF in the form in which this program writes one: one cross-reference table, no
- * object streams. That is all that is needed to get a record back or to compare two sheets, and a file
- * that was made to be hard to read cannot take more time or memory than its own size.
+ * Reads the objects of a PDF in the form in which this program writes one: header, objects, one
+ * cross-reference table, trailer, and not a byte between them. That is all that is needed to get a record
+ * back or to compare two sheets, and a file that was made to be hard to read takes no more time or memory
+ * than its own size.
  *
  * @see ISO 32000-1, 7.5 (file structure)
  */
 export function readPdfObjects(pdf: Buffer): PdfObjects {
-  if (pdf.toString("latin1", 0, 5) !== "%PDF-") return refused("This is not a PDF.");
-  const tail = /startxref\n(\d{1,10})\n%%EOF\n?$/u.exec(pdf.toString("latin1", pdf.length - longestTail));
-  if (tail === null) return refused("The end of the PDF is missing, or another program has written it.");
-  const start = Number(tail[1]);
-  const head = /^xref\n0 (\d{1,6})\n/u.exec(pdf.toString("latin1", start, start + 24));
+  if (textAt(pdf, 0, 5) !== "%PDF-") return refused("This is not a PDF.");
+  const tail = /startxref\n(\d{1,10})\n%%EOF\n$/u.exec(textAt(pdf, pdf.length - longestTail, longestTail));
+  if (tail === null) {
+    return refused(
+      "The end of the PDF is missing, or something was added to it, or another program wrote it.",
+    );
+  }
+  const table = Number(tail[1]);
+  const head = /^xref\n0 (\d{1,6})\n0000000000 65535 f \n/u.exec(textAt(pdf, table, 48));
   const count = Number(head?.[1] ?? 0);
   if (head === null || count < 2 || count > mostObjects) return rewritten();
-  const first = start + head[0].length;
-  const trailer = pdf.toString("latin1", first + count * entryLength, pdf.length);
-  if (!trailer.startsWith("trailer\n")) return rewritten();
+  const first = table + head[0].length;
+  const trailer = textAt(pdf, first + (count - 1) * entryLength, pdf.length);
   if (trailer.includes("/Encrypt")) return refused("The PDF is encrypted.");
-  if (trailer.includes("/Prev")) return refused("Something was added to the PDF after it was written.");
+  const offsets = offsetsIn(textAt(pdf, first, (count - 1) * entryLength), count);
+  if (offsets === null || !trailer.startsWith("trailer\n")) return rewritten();
+  const sorted = [...offsets.entries()].sort(([, one], [, other]) => one - other);
+  if (textAt(pdf, 0, sorted[0]?.[1] ?? 0) !== header) return rewritten();
   const objects = new Map<number, PdfObject>();
-  let used = 0;
-  for (let id = 1; id < count; id++) {
-    const entry = pdf.toString("latin1", first + id * entryLength, first + (id + 1) * entryLength);
-    const offset = /^(\d{10}) 00000 n /u.exec(entry)?.[1];
-    const object = offset === undefined ? null : readObject(pdf, id, Number(offset));
+  for (const [index, [id, offset]] of sorted.entries()) {
+    const object = readObject(pdf.subarray(offset, sorted[index + 1]?.[1] ?? table), id);
     if (object === null) return rewritten();
-    // Objects that overlap could be made to be read over and over.
-    used += object.end - Number(offset);
-    if (used > pdf.length) return rewritten();
     objects.set(id, object);
   }
   return { ok: true, objects, trailer };
 }
+
+const header = "%PDF-1.7\n%\xff\xff\xff\xff\n";
 
 function refused(fault: string): PdfObjects {
   return { ok: false, fault };
@@ -57,29 +60,47 @@ function rewritten(): PdfObjects {
   return refused("The PDF is damaged, or another program has written it.");
 }
 
-const streamMark = "\nstream\n";
-const streamEnd = "\nendstream\nendobj";
-const objectEnd = "\nendobj";
-
-/** @returns null where the object is not written as this program writes one */
-function readObject(pdf: Buffer, id: number, offset: number): (PdfObject & { readonly end: number }) | null {
-  const opening = `${id} 0 obj\n`;
-  if (textAt(pdf, offset, opening.length) !== opening) return null;
-  const from = offset + opening.length;
-  const end = pdf.indexOf(objectEnd, from, "latin1");
-  if (end < 0) return null;
-  const plain = pdf.subarray(from, end);
-  const streamAt = plain.indexOf(streamMark, 0, "latin1");
-  if (streamAt < 0) return { dictionary: plain.toString("latin1"), stream: null, end };
-  const dictionary = plain.toString("latin1", 0, streamAt);
-  const length = Number(/\/Length (\d{1,10})\n/u.exec(dictionary)?.[1]);
-  const body = from + streamAt + streamMark.length;
-  if (textAt(pdf, body + length, streamEnd.length) !== streamEnd) return null;
-  return { dictionary, stream: pdf.subarray(body, body + length), end: body + length };
+/** Where each object begins, by its number; null where an entry has another form. */
+function offsetsIn(table: string, count: number): ReadonlyMap<number, number> | null {
+  const offsets = new Map<number, number>();
+  for (let id = 1; id < count; id++) {
+    const entry = table.slice((id - 1) * entryLength, id * entryLength);
+    const offset = /^(\d{10}) 00000 n \n$/u.exec(entry)?.[1];
+    if (offset === undefined) return null;
+    offsets.set(id, Number(offset));
+  }
+  return offsets;
 }
 
-function textAt(pdf: Buffer, offset: number, length: number): string {
-  return pdf.toString("latin1", offset, offset + length);
+const streamMark = "\nstream\n";
+const streamEnd = "\nendstream";
+const objectEnd = "\nendobj\n";
+
+/**
+ * @param bytes from the object's beginning to that of the next one
+ * @returns null where it is not written as this program writes one
+ */
+function readObject(bytes: Buffer, id: number): PdfObject | null {
+  const opening = `${id} 0 obj\n`;
+  const end = bytes.length - objectEnd.length;
+  if (textAt(bytes, 0, opening.length) !== opening || textAt(bytes, end, objectEnd.length) !== objectEnd)
+    return null;
+  const streamAt = bytes.indexOf(streamMark, 0, "latin1");
+  if (streamAt < 0) return { dictionary: bytes.toString("latin1", opening.length, end), stream: null };
+  const dictionary = bytes.toString("latin1", opening.length, streamAt);
+  const length = Number(/\/Length (\d{1,10})\n/u.exec(dictionary)?.[1]);
+  const body = streamAt + streamMark.length;
+  if (
+    body + length + streamEnd.length !== end ||
+    textAt(bytes, body + length, streamEnd.length) !== streamEnd
+  ) {
+    return null;
+  }
+  return { dictionary, stream: bytes.subarray(body, body + length) };
+}
+
+function textAt(bytes: Buffer, offset: number, length: number): string {
+  return offset < 0 ? "" : bytes.toString("latin1", offset, Math.min(offset + length, bytes.length));
 }
 
 /**
