@@ -10,6 +10,7 @@ import type {
 import { inputNotes } from "./inputs.js";
 import { decompositionRateOf, rateConstantOf } from "./rateConstantModel.js";
 import type { CaseDocument, CaseFigures } from "./schema.js";
+import { workingsModel } from "./workingInputs.js";
 
 /**
  * The parsed case: SI only, every default filled in.
@@ -25,6 +26,7 @@ export function modelOf(figures: CaseFigures, document: CaseDocument): CaseModel
     decomposition: figures.decomposition === undefined ? null : decompositionOf(figures.decomposition),
     vessel: vesselOf(figures.vessel),
     limits: limitsOf(figures.limits, document.limits.controlBand !== undefined),
+    workings: workingsModel(figures),
     failures: (figures.failures ?? []).map(failureOf),
     inputs: inputNotes(document),
   };

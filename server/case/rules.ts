@@ -6,6 +6,7 @@ import { helperRules } from "./ruleHelpers.js";
 import { rateFaults } from "./ruleRates.js";
 import { figureTyped } from "./typed.js";
 import { isGroup } from "./typedParts.js";
+import { workingRules } from "./workings.js";
 
 /** Reports a fault of the field at a path. */
 export type ReportAt = (path: readonly PropertyKey[], message: string) => void;
@@ -24,6 +25,7 @@ export function crossFaults(document: unknown): Fault[] {
   rateFaults(document, report);
   failureRules(document, report);
   helperRules(document, report);
+  workingRules(document, report);
   return faults;
 }
 

@@ -5,6 +5,9 @@ import { choice, estimatedNumber, limit, plain, quantity } from "./leaves.js";
 const level = {
   innerDiameter: quantity("length", "Inner diameter"),
   fillVolume: quantity("volume", "Fill volume"),
+  vesselVolume: quantity("volume", "Volume of the vessel", {
+    hint: "Up to the flange; the fill volume is held against it",
+  }).optional(),
   jacketLower: quantity("length", "Lower edge of the jacket", {
     sign: "notNegative",
     hint: "Height above the lowest point of the bottom",

@@ -1,3 +1,5 @@
+import type { Working } from "./workingsOutline.js";
+
 /** The document that a screening gives: SI, full precision, every number finite or null. */
 export interface Findings {
   readonly format: "thermal-window/findings-1";
@@ -32,6 +34,8 @@ export interface Findings {
   readonly window: WindowFindings | null;
   readonly failures: readonly FailureFindings[] | null;
   readonly uncertainty: UncertaintyFindings | null;
+  /** how fields were worked out from other figures */
+  readonly workings: readonly Working[];
   readonly cautions: readonly Caution[];
 }
 

@@ -1,5 +1,6 @@
 import type { DecompositionRate, RateConstant } from "../kinetics/parameters.js";
 import type { Estimate } from "../numeric/estimate.js";
+import type { WorkingsModel } from "./workingsModel.js";
 
 /**
  * A parsed case: SI numbers only, every default filled in, nothing left to check.
@@ -18,6 +19,7 @@ export interface CaseModel {
   readonly decomposition: DecompositionModel | null;
   readonly vessel: VesselModel;
   readonly limits: LimitsModel;
+  readonly workings: WorkingsModel;
   readonly failures: readonly FailureModel[];
   /** what the reviewer must know about each typed input */
   readonly inputs: readonly InputNote[];

@@ -29,6 +29,7 @@ import {
 } from "./thermalFindings.js";
 import { usedRates } from "./usedRates.js";
 import { windowFindings } from "./windowFindings.js";
+import { workingsOf } from "./workings.js";
 
 export interface ScreenOptions {
   /** sha256 of the case in canonical JSON */
@@ -72,6 +73,7 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
     probability: drawn?.criticalityProbability ?? null,
   };
   const judged = { temperatures, criticality, cooling, window, timeToMaximumRate };
+  const workings = workingsOf(model);
   const cautions: Caution[] = [
     ...verdictCautions(judged, {
       coolant_K: step.vessel.coolantTemperature,
@@ -83,6 +85,7 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
     ...usedRates(model, known, step, temperatures).flatMap((used) => kineticsCautions(used, process)),
     ...measuredCautions(model, step, dosing),
     ...(failed?.cautions ?? []),
+    ...workings.flatMap((working) => working.cautions),
     ...inputCautions(model),
     ...notBuilt(options.depth, model),
   ];
@@ -101,6 +104,7 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
     window,
     failures: failed?.failures ?? null,
     uncertainty: drawn?.uncertainty ?? null,
+    workings,
     cautions: byLevel(cautions),
   };
 }

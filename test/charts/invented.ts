@@ -151,6 +151,7 @@ export const inventedBatch: Findings = {
     drivers: null,
     nextMeasurement: null,
   },
+  workings: [],
   cautions: [],
 };
 
