@@ -40,7 +40,7 @@ export function drawLaneMark(mark: LaneMark, box: Box, x: Scale): Primitive[] {
   const primitives: Primitive[] = [];
   if (mark.interval !== null) primitives.push(...whisker(mark.interval, middle, mark, box, x));
   const at = Math.min(box.right, Math.max(box.left, x(mark.value)));
-  if (at === x(mark.value)) primitives.push(shapeAt([at, middle], mark.shape, mark.tone, 5));
+  if (at === x(mark.value)) primitives.push(shapeAt([at, middle], mark.shape, mark.tone, 4.5));
   else primitives.push(arrowAt(at, middle, at === box.left ? -1 : 1, mark));
   const [from, to] = reach(mark, box.left, box.right, x);
   const style = { size: "normal", bold: true, tone: mark.tone } as const;
@@ -91,8 +91,8 @@ function whisker(
           [at + 5 * inward, y + 4],
         ]
       : [
-          [at, y - 4.5],
-          [at, y + 4.5],
+          [at, y - 7],
+          [at, y + 7],
         ];
   return [
     strokeAlong(

@@ -26,7 +26,7 @@ function worstOf(moments: readonly VulnerableMoment[]): VulnerableMoment | null 
  *
  * @param name of the failure
  * @param number that tells it from the others on the page
- * @returns null with fewer than two moments
+ * @returns null with fewer than two moments, and where it holds by itself whenever it begins
  */
 export function vulnerable(
   name: string,
@@ -34,7 +34,7 @@ export function vulnerable(
   moments: readonly VulnerableMoment[],
 ): Figure | null {
   const worst = worstOf(moments);
-  if (worst === null || moments.length < 2) return null;
+  if (worst === null || worst.verdict === "holds" || moments.length < 2) return null;
   const sorted = [...moments].sort((a, b) => a.startedAt_s - b.startedAt_s);
   const last = Math.max(60, ...sorted.map((moment) => moment.startedAt_s));
   const unit = timeUnit(last);
@@ -43,7 +43,7 @@ export function vulnerable(
   );
   const axis = durationAxis(acts, "Time to act (logarithmic)");
   const [low, high] = axis.domain;
-  const room = (high / low) ** 0.1 * 1.3;
+  const room = Math.max(2, (high / low) ** 0.12);
   const yAxis = { ...axis, domain: [low / room, high * room] as const };
   const at = (moment: VulnerableMoment, height: number) =>
     [moment.startedAt_s / unit.seconds, height] as const;
@@ -88,13 +88,11 @@ export function vulnerable(
     });
   const begins = durationText(worst.startedAt_s, "nearest");
   const verdict =
-    worst.verdict === "holds"
-      ? "holds by itself whenever it begins"
-      : `is worst when it begins at ${begins}: ${worst.verdict === "lost" ? "lost, no delay is short enough" : `act within ${verdictWords(worst)}`}`;
+    worst.verdict === "lost" ? "lost, no delay is short enough" : `act within ${verdictWords(worst)}`;
   return {
     id: `vulnerable-${number}`,
     title: `When the batch is most vulnerable: ${name}`,
-    sentence: `Of ${moments.length} moments tried, “${name}” ${verdict}.`,
+    sentence: `Of ${moments.length} moments tried, “${name}” is worst when it begins at ${begins}: ${verdict}.`,
     panels: [
       {
         type: "plot",
