@@ -34,7 +34,7 @@ export function labelOf(leaf: Leaf, path: readonly string[], groups: readonly Pl
   const entries = groups.flatMap((place, depth) =>
     place.kind === "list" ? [`${lowered(place.about.entry)} ${Number(path[depth]) + 1}`] : [],
   );
-  const name = leaf.alone ?? `${lowered(leaf.label)}${suffix}`;
+  const name = leaf.alone ?? `${leaf.short ?? lowered(leaf.label)}${suffix}`;
   return entries.length === 0 ? name : `${name}, ${entries.join(", ")}`;
 }
 

@@ -18,8 +18,10 @@ import {
 /** More about a field than its label. */
 interface About {
   readonly hint?: string;
-  /** its name where it stands alone, without its group: "heat of reaction" */
+  /** its name where it stands alone, its group included: "heat of reaction" */
   readonly alone?: string;
+  /** its name where it stands alone, before that of its group: "lowest fitted temperature" */
+  readonly short?: string;
   /** what a choice that was not made means: "As it was" */
   readonly blank?: string;
 }

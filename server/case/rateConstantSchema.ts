@@ -5,10 +5,10 @@ import { choice, estimatedNumber, plain, quantity, rate, rateUnit, text } from "
 const fittedRange = z
   .tuple([
     quantity("temperature", "Fitted from", {
-      alone: "lowest temperature of the fit",
+      short: "lowest fitted temperature",
     }),
     quantity("temperature", "Fitted up to", {
-      alone: "highest temperature of the fit",
+      short: "highest fitted temperature",
     }),
   ])
   .optional();
@@ -19,14 +19,14 @@ const fitted = {
     { above: -1, below: 1 },
     {
       hint: "As the fit printed it, between −1 and 1",
-      alone: "correlation of the fit",
+      short: "correlation of the fit",
     },
   ).optional(),
   fittedRange,
   points: plain(
     "Number of rate constants fitted",
     { atLeast: 3, whole: true },
-    { hint: "Sets the width of the interval" },
+    { short: "number of fitted rate constants", hint: "Sets the width of the interval" },
   ).optional(),
   viscosity: quantity("viscosity", "Viscosity of the medium", {
     hint: "For the diffusion limit; that of water where empty",
@@ -48,7 +48,7 @@ const eyring = group(
       sign: "any",
     }),
     standardConcentration: quantity("concentration", "Standard concentration of the entropy", {
-      alone: "standard concentration",
+      short: "standard concentration",
     }).prefault("1 mol/L"),
     transmissionCoefficient: plain("Transmission coefficient", {
       above: 0,
@@ -87,7 +87,7 @@ const reference = group(
     form: z.literal("reference"),
     rateConstant: rate("Rate constant"),
     at: quantity("temperature", "At the temperature", {
-      alone: "reference temperature",
+      short: "reference temperature",
     }),
     activationEnergy,
     fittedRange,
@@ -140,7 +140,7 @@ const heatRate = group(
       hint: "Initial rate of an order law, largest isothermal rate of an autocatalytic one",
     }),
     at: quantity("temperature", "At the temperature", {
-      alone: "reference temperature",
+      short: "reference temperature",
     }),
     activationEnergy,
   },
