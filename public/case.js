@@ -55,10 +55,12 @@ function showFaults() {
   }
 }
 
-async function refresh() {
-  markStale(true);
+/** Asks for findings of what stands in the form; the full ones take seconds, and say so meanwhile. */
+async function refresh(parts) {
+  clearTimeout(timer);
+  markStale(parts === "quick");
   try {
-    const fresh = await send("/findings", body());
+    const fresh = await send(`/findings?parts=${parts}`, body());
     take(fresh, "outcome");
     const found = fresh.querySelector("#findings > *") !== null;
     if (found) take(fresh, "findings");
@@ -71,8 +73,17 @@ async function refresh() {
 
 function refreshSoon() {
   clearTimeout(timer);
-  timer = setTimeout(refresh, pause_ms);
+  timer = setTimeout(refresh, pause_ms, "quick");
   state.textContent = state.dataset.changed;
+}
+
+/** Has the failures and the draws computed where the page came without them. */
+function complete() {
+  const pending = document.getElementById("pending");
+  if (pending === null) return;
+  pending.textContent = pending.dataset.working;
+  pending.setAttribute("role", "status");
+  refresh("full");
 }
 
 /** Lets the server draw the form anew, after a choice or a button that adds or removes fields. */
@@ -108,10 +119,19 @@ form.addEventListener("click", (event) => {
   reshape(button.value).catch(() => form.requestSubmit(button));
 });
 
+// Not when the button says so alone: pressing Enter in a field screens as well.
+form.addEventListener("submit", (event) => {
+  const pending = document.getElementById("pending");
+  if (event.submitter?.value !== "screen" || pending === null) return;
+  event.preventDefault();
+  complete();
+});
+
 // Going back restores what was typed after the page was drawn: the findings must follow it.
 addEventListener("pageshow", () => {
   const typed = [...form.elements].some(
     (each) => "defaultValue" in each && each.type !== "hidden" && each.value !== each.defaultValue,
   );
   if (typed) refreshSoon();
+  else complete();
 });

@@ -1,7 +1,7 @@
 import { Router, text } from "express";
 import { caseJsonSchema } from "../case/jsonSchema.js";
 import { largestCase, type ReadCase, readCaseText } from "../case/read.js";
-import { renderSheet } from "../sheet/render.js";
+import { abandoned } from "./abandoned.js";
 import { notJson, type Problem, refuse, refusedCase, tooLarge, wrongType } from "./problems.js";
 import type { Services } from "./services.js";
 
@@ -16,7 +16,8 @@ export function jsonInterface({ screener }: Services): Router {
     const read = readBody(request.body);
     if (!read?.ok) return refuse(request, response, problemOf(read));
     const depth = parts === "quick" ? "quick" : "full";
-    response.json(await screener.screen({ model: read.model, digest: read.digest, depth }));
+    const order = { model: read.model, digest: read.digest, depth } as const;
+    response.json(await screener.screen(order, abandoned(response)));
   });
 
   router.post("/sheet", body, async (request, response) => {
@@ -25,8 +26,10 @@ export function jsonInterface({ screener }: Services): Router {
     const read = readBody(request.body);
     if (!read?.ok) return refuse(request, response, problemOf(read));
     const { document, model, digest } = read;
-    const findings = await screener.screen({ model, digest, depth: "full" });
-    response.type("application/pdf").send(await renderSheet({ document, model, findings, paper }));
+    const signal = abandoned(response);
+    const findings = await screener.screen({ model, digest, depth: "full" }, signal);
+    const sheet = await screener.sheet({ document, model, findings, paper }, signal);
+    response.type("application/pdf").send(sheet);
   });
 
   router.get("/case-schema", (_request, response) => {

@@ -3,6 +3,7 @@ import { formOf } from "../case/form.js";
 import { type Fault, readCase } from "../case/read.js";
 import { type SavedCase, titleOf } from "../files/cases.js";
 import type { DemoCase } from "../files/demos.js";
+import { abandoned } from "./abandoned.js";
 import { differences } from "./differences.js";
 import { type FindingsView, findingsView } from "./findingsView.js";
 import { type ListedFault, listFaults, type Places, placeAt, placesOf } from "./places.js";
@@ -21,6 +22,8 @@ export interface CaseToShow {
   readonly origin: Origin;
   /** false while fields are still being added: an empty one is no fault yet */
   readonly faultsShown?: boolean;
+  /** waits for failures and draws; otherwise the page comes with what is known at once */
+  readonly full?: boolean;
   /** what was typed differs from what `origin` holds */
   readonly changed?: boolean;
   /** the newer copy that stood in the way of a save */
@@ -35,10 +38,15 @@ export interface Outcome {
   readonly findings: FindingsView | null;
 }
 
+interface Screened {
+  readonly faults: readonly Fault[];
+  readonly findings: FindingsView | null;
+}
+
 /** Screens a document and answers with the page of its case. */
 export async function renderCase(services: Services, response: Response, shown: CaseToShow): Promise<void> {
-  const { document, origin, faultsShown = true } = shown;
-  const screened = await outcomeOf(services, document, "full");
+  const { document, origin, faultsShown = true, full = false } = shown;
+  const screened = await screenDocument(services, response, document, full);
   const faults = faultsShown ? screened.faults : [];
   const sections = formOf(document, faults);
   const places = placesOf(sections);
@@ -64,22 +72,27 @@ export async function renderOutcome(
   services: Services,
   response: Response,
   document: unknown,
+  full: boolean,
 ): Promise<void> {
-  const { faults, findings } = await outcomeOf(services, document, "quick");
+  const { faults, findings } = await screenDocument(services, response, document, full);
   const places = placesOf(formOf(document, faults));
   const outcome: Outcome = { live: true, faults: listFaults(faults, places), findings };
   response.render("fragment", { outcome, targetOf: targets(places) });
 }
 
-async function outcomeOf(
+async function screenDocument(
   { screener }: Services,
+  response: Response,
   document: unknown,
-  depth: "quick" | "full",
-): Promise<{ faults: readonly Fault[]; findings: FindingsView | null }> {
+  full: boolean,
+): Promise<Screened> {
   const read = readCase(document);
   if (!read.ok) return { faults: read.faults, findings: null };
   const { model, digest } = read;
-  return { faults: [], findings: findingsView(await screener.screen({ model, digest, depth })) };
+  const depth = full ? "full" : "quick";
+  const findings =
+    screener.known(digest) ?? (await screener.screen({ model, digest, depth }, abandoned(response)));
+  return { faults: [], findings: findingsView(findings) };
 }
 
 /** For links from a caution to the input it is about. */

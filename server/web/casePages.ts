@@ -3,7 +3,7 @@ import { canonicalJson } from "../case/canonical.js";
 import { blankCase, documentFromForm, editForm } from "../case/form.js";
 import { readCase } from "../case/read.js";
 import { titleOf } from "../files/cases.js";
-import { renderSheet } from "../sheet/render.js";
+import { abandoned } from "./abandoned.js";
 import { type Origin, renderCase, renderOutcome } from "./casePage.js";
 import { fileName } from "./fileName.js";
 import { refuse } from "./problems.js";
@@ -44,7 +44,7 @@ export function casePages(services: Services): Router {
   });
 
   router.post("/findings", form, (request, response) =>
-    renderOutcome(services, response, documentFromForm(request.body ?? {})),
+    renderOutcome(services, response, documentFromForm(request.body ?? {}), request.query.parts !== "quick"),
   );
 
   for (const [action, archived] of [
@@ -87,7 +87,12 @@ export function casePages(services: Services): Router {
       });
     }
     if (!readCase(document).ok) response.status(422);
-    return renderCase(services, response, { document, origin, changed: isChanged(document, origin) });
+    return renderCase(services, response, {
+      document,
+      origin,
+      changed: isChanged(document, origin),
+      full: true,
+    });
   }
 
   async function save(response: Response, document: unknown, origin: Origin, over: number): Promise<void> {
@@ -112,18 +117,17 @@ export function casePages(services: Services): Router {
     const read = readCase(document);
     if (!read.ok) return false;
     const { model, digest } = read;
-    const findings = await services.screener.screen({ model, digest, depth: "full" });
+    const signal = abandoned(response);
+    const findings = await services.screener.screen({ model, digest, depth: "full" }, signal);
     const name = fileName(titleOf(document));
     if (what === "findings") {
       response.attachment(`${name} findings.json`).json(findings);
       return true;
     }
-    const sheet = await renderSheet({
-      document: read.document,
-      model,
-      findings,
-      paper: paper === "Letter" ? "Letter" : "A4",
-    });
+    const sheet = await services.screener.sheet(
+      { document: read.document, model, findings, paper: paper === "Letter" ? "Letter" : "A4" },
+      signal,
+    );
     response.attachment(`${name}.pdf`).type("application/pdf").send(sheet);
     return true;
   }

@@ -16,6 +16,8 @@ import { type KeyFigureGroup, keyFigures } from "./keyFigures.js";
 export interface FindingsView {
   readonly notice: string;
   readonly digest: string;
+  /** false: failures and draws are still to be computed */
+  readonly full: boolean;
   readonly verdict: {
     readonly level: CautionLevel;
     readonly sentence: string;
@@ -50,6 +52,7 @@ export function findingsView(findings: Findings): FindingsView {
   return {
     notice: findings.notice,
     digest: findings.digest,
+    full: findings.uncertainty !== null,
     verdict: {
       level: cautions[0]?.level ?? "note",
       sentence: stopSentence(findings),

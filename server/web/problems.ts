@@ -48,8 +48,10 @@ function withPointer(status: number, title: string, detail: string): Problem {
 export function answerErrors(log: Logger): ErrorRequestHandler {
   return (error: unknown, request, response, next) => {
     if (response.headersSent) return next(error);
+    if (response.closed) return;
     const problem = problemOf(error);
-    if (problem.status >= 500) log.error({ err: error, method: request.method, path: request.originalUrl.split("?")[0] });
+    if (problem.status >= 500)
+      log.error({ err: error, method: request.method, path: request.originalUrl.split("?")[0] });
     refuse(request, response, problem);
   };
 }
@@ -61,6 +63,14 @@ function problemOf(error: unknown): Problem {
   if (status === 415) return wrongType;
   if (typeof status === "number" && status >= 400 && status < 500) {
     return withPointer(400, "Bad Request", "The request could not be read.");
+  }
+  if (status === 503) {
+    return {
+      status: 503,
+      title: "Service Unavailable",
+      detail: "Too many screenings are under way. Try again in a minute.",
+      faults: [],
+    };
   }
   return {
     status: 500,

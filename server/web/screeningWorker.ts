@@ -1,8 +1,15 @@
 import type { Findings } from "../screening/findings.js";
 import { screen } from "../screening/screen.js";
+import type { SheetInput } from "../sheet/render.js";
 import type { ScreeningOrder } from "./screener.js";
 
 /** What a worker thread runs: one screening, from numbers to numbers. */
-export default function work({ model, digest, depth }: ScreeningOrder): Findings {
+export function screenCase({ model, digest, depth }: ScreeningOrder): Findings {
   return screen(model, { digest, depth });
+}
+
+/** Or one sheet. The PDF writer and its fonts are loaded with the first one. */
+export async function drawSheet(input: SheetInput): Promise<Uint8Array> {
+  const { renderSheet } = await import("../sheet/render.js");
+  return renderSheet(input);
 }

@@ -5,7 +5,7 @@ import { readDemos } from "../../server/files/demos.js";
 import { folderStorage } from "../../server/files/storage.js";
 import { projectRoot } from "../../server/settings.js";
 import { createApp } from "../../server/web/app.js";
-import { directScreener } from "../../server/web/screener.js";
+import { directScreener, type Screener } from "../../server/web/screener.js";
 import { memoryStorage } from "../files/memoryStorage.js";
 
 const settings = { port: 0, host: "127.0.0.1", dataFolder: "" };
@@ -19,10 +19,13 @@ export function demoDocument(name = "ring-closure"): Record<string, unknown> {
   return structuredClone(demo.document) as Record<string, unknown>;
 }
 
-/** The application over cases in memory, screening in this thread. */
-export function testApp(cases: CaseStore = caseStore(memoryStorage())) {
+/** The application over cases in memory, screening in this thread unless said. */
+export function testApp(
+  cases: CaseStore = caseStore(memoryStorage()),
+  screener: Screener = directScreener(),
+) {
   const logged: string[] = [];
   const log = pino({ level: "info" }, { write: (line: string) => logged.push(line) });
-  const app = createApp(settings, { cases, demos, screener: directScreener, log });
+  const app = createApp(settings, { cases, demos, screener, log });
   return { app, cases, logged };
 }
