@@ -33,14 +33,4 @@ function areaRules(area: unknown, report: ReportAt): void {
   if (lower !== null && upper !== null && lower >= upper) {
     report([...path, "jacketLower"], "is not below jacketUpper; expected heights from low to high");
   }
-  const diameter = length("innerDiameter");
-  if (diameter === null) return;
-  const dish = length("dishRadius");
-  if (dish !== null && dish < diameter / 2) {
-    report([...path, "dishRadius"], "is less than half the inner diameter, which no dish can be");
-  }
-  const knuckle = length("knuckleRadius");
-  if (knuckle !== null && knuckle > diameter / 2) {
-    report([...path, "knuckleRadius"], "is more than half the inner diameter, which no knuckle can be");
-  }
 }

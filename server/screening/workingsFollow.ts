@@ -2,9 +2,15 @@ import { caution } from "./cautions/catalogue.js";
 import type { Caution } from "./findings.js";
 import { valueText } from "./workingsOutline.js";
 
-/** Whether the figure in a field agrees with its working; a field that cannot be read does not. */
+/**
+ * Whether the figure in a field agrees with its working as a person rounds it: to the careful side, down, twice as
+ * far as up.
+ *
+ * @param field SI; null where it cannot be read, which agrees with nothing
+ * @param tolerance upwards, SI
+ */
 export function within(field: number | null, result: number, tolerance: number): boolean {
-  return field !== null && Math.abs(field - result) <= tolerance;
+  return field !== null && field <= result + tolerance && field >= result - 2 * tolerance;
 }
 
 /** INPUT_MOVED, where a field holds another figure than its working gives. */
