@@ -1,0 +1,69 @@
+import { spawn } from "node:child_process";
+import { once } from "node:events";
+import { mkdtemp, readFile, rm } from "node:fs/promises";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import { afterAll, describe, expect, test } from "vitest";
+import { projectRoot } from "../server/settings.js";
+import { built } from "./build.js";
+
+const program = built("server/main.ts");
+const folder = await mkdtemp(join(tmpdir(), "served-"));
+afterAll(() => rm(folder, { recursive: true }));
+
+function start(environment: Readonly<Record<string, string>>) {
+  const child = spawn(process.execPath, [program], {
+    env: { ...process.env, DATA_DIR: folder, PORT: "0", ...environment },
+  });
+  const ended = once(child, "exit");
+  return { child, ended };
+}
+
+describe("the server as a process", () => {
+  test("says its address, serves, and ends within 5 s of SIGTERM though a screening is under way", async () => {
+    const { child, ended } = start({});
+    const [line] = await once(child.stdout, "data");
+    const address = /http:\/\/127\.0\.0\.1:\d+/.exec(String(line))?.[0] ?? "";
+    expect((await fetch(address)).status).toBe(200);
+    const case_ = await readFile(join(projectRoot, "scenarios/acylation.json"), "utf8");
+    const screening = fetch(`${address}/api/screen`, {
+      method: "POST",
+      headers: { "content-type": "application/json" },
+      body: case_,
+    }).then(
+      () => "answered",
+      () => "cut off",
+    );
+    await new Promise((resolve) => setTimeout(resolve, 300));
+    const before = Date.now();
+    child.kill("SIGTERM");
+    expect((await ended)[0]).toBe(0);
+    expect(Date.now() - before).toBeLessThan(5000);
+    expect(["answered", "cut off"]).toContain(await screening);
+  });
+
+  test("refuses a port that is none, and says what would do", async () => {
+    const { child, ended } = start({ PORT: "web" });
+    let said = "";
+    child.stderr.on("data", (text) => {
+      said += text;
+    });
+    expect((await ended)[0]).toBe(2);
+    expect(said).toContain('PORT is "web"');
+  });
+
+  test("says so where another program has the port", async () => {
+    const first = start({});
+    const [line] = await once(first.child.stdout, "data");
+    const port = /:(\d+)\s/.exec(String(line))?.[1] ?? "";
+    const second = start({ PORT: port });
+    let said = "";
+    second.child.stderr.on("data", (text) => {
+      said += text;
+    });
+    expect((await second.ended)[0]).toBe(1);
+    expect(said).toContain(`cannot listen on 127.0.0.1:${port}`);
+    first.child.kill("SIGTERM");
+    await first.ended;
+  });
+});
