@@ -16,10 +16,10 @@ export interface Judgement {
 }
 
 /** For a figure or a draw: within a hundredth of the time itself. */
-export const quickSearch: Search = { scan: 5, width: 1, part: 0.005, relativeTolerance: 1e-5 };
+export const quickSearch: Search = { scan: 6, width: 1, part: 0.002, relativeTolerance: 1e-5 };
 
 /** For what is reported: within half a second. */
-export const fullSearch: Search = { scan: 24, width: 0.5, part: 0, relativeTolerance: 1e-6 };
+export const fullSearch: Search = { scan: 32, width: 0.5, part: 0, relativeTolerance: 1e-7 };
 
 /**
  * Assumptions on mixing that a failure has to be run with.
