@@ -22,12 +22,16 @@ export interface TimeToMaximum {
   readonly accelerates: boolean;
 }
 
-/** exp(-45) is 3e-20: what lies beyond adds nothing to the integral. */
-const negligible = 45;
-
-/** Points per panel: to the last digits, and to 1e-7 for the many evaluations of the draws. */
-const pointsFor = { full: 14, draws: 5 } as const;
-export type Accuracy = keyof typeof pointsFor;
+/**
+ * Points per panel, and the s from which exp(-s) adds nothing to the integral: to the last digits, and to 1e-6 for
+ * the many evaluations of the draws.
+ */
+const rules = {
+  full: { points: 14, negligible: 45 },
+  draws: { points: 5, negligible: 20 },
+} as const;
+export type Accuracy = keyof typeof rules;
+type Rule = (typeof rules)[Accuracy];
 
 /**
  * Adiabatic time to maximum rate, TMRad = integral from alpha0 to alpha* of d alpha/(k f).
@@ -54,8 +58,8 @@ export function timeToMaximumRate(
   const { law, rate } = runaway;
   const scaled =
     !law.autocatalytic && rate.activationEnergy > gasConstant * start
-      ? orderIntegral(runaway, start, alpha0, alphaAtMaximum, pointsFor[accuracy])
-      : progressIntegral(runaway, start, alpha0, alphaAtMaximum, pointsFor[accuracy]);
+      ? orderIntegral(runaway, start, alpha0, alphaAtMaximum, rules[accuracy])
+      : progressIntegral(runaway, start, alpha0, alphaAtMaximum, rules[accuracy]);
   return { time: scaled * Math.exp(-lnRateConstant(rate, start)), alphaAtMaximum, accelerates: true };
 }
 
@@ -68,7 +72,7 @@ function orderIntegral(
   start: number,
   alpha0: number,
   alphaEnd: number,
-  points: number,
+  { points, negligible }: Rule,
 ): number {
   const { law, rate, rise } = runaway;
   const { nodes, weights } = gaussLegendre(points);
@@ -105,7 +109,7 @@ function progressIntegral(
   start: number,
   alpha0: number,
   alphaEnd: number,
-  points: number,
+  { points, negligible }: Rule,
 ): number {
   const { law, rate, rise } = runaway;
   const { nodes, weights } = gaussLegendre(points);

@@ -14,17 +14,19 @@ export const td24Range: readonly [number, number] = [180, 800];
  *
  * @param runaway decomposition kinetics and rise
  * @param guess K, where the search begins
+ * @param accuracy "full" is good to the last digits, "draws" to 0.001 K
  * @returns K, or null where it lies outside 180 to 800 K
  * @see Stoessel 2008, Thermal Safety of Chemical Processes
  */
 export function td24(runaway: Runaway, guess = 400, accuracy: Accuracy = "full"): number | null {
   const lnDays = (inverse: number): number =>
     Math.log(timeToMaximumRate(runaway, 1 / inverse, 0, accuracy).time / day);
-  const tolerance = accuracy === "full" ? 1e-13 : 1e-9;
+  // A secant's next step is smaller by three orders at least: past 1e-5 of T it is not worth an evaluation.
+  const tolerance = accuracy === "full" ? 1e-13 : 1e-5;
   return secantInInverse(runaway, lnDays, guess, tolerance) ?? bracketed(lnDays);
 }
 
-/** ln TMRad is nearly straight in 1/T: a secant from the guess needs four or five evaluations. */
+/** ln TMRad is nearly straight in 1/T: a secant from the guess needs three or four evaluations. */
 function secantInInverse(
   runaway: Runaway,
   lnDays: (inverse: number) => number,
@@ -38,8 +40,9 @@ function secantInInverse(
     if (!(Number.isFinite(y) && slope > 0)) return null;
     const next = x - y / slope;
     if (!(next > 1 / td24Range[1] && next < 1 / td24Range[0])) return null;
+    if (Math.abs(next - x) <= tolerance * next) return 1 / next;
     const nextY = lnDays(next);
-    if (Math.abs(next - x) <= tolerance * next || nextY === 0) return 1 / next;
+    if (nextY === 0) return 1 / next;
     slope = (nextY - y) / (next - x);
     x = next;
     y = nextY;

@@ -1,245 +1,181 @@
-import { fromArrhenius, lnRateConstant } from "../kinetics/rateConstant.js";
-import { timeToConversion } from "../thermal/completion.js";
-import { courseOf, type Dosing, doseAt, largestRise, type RateCourse } from "../thermal/dosing.js";
-import { stoichiometricTime } from "../thermal/isothermal.js";
+import { lnRateConstant } from "../kinetics/rateConstant.js";
 import type { Step } from "../thermal/step.js";
 import { type Isothermal, integrated } from "../window/study.js";
+import { courseBetween } from "./dosingCourse.js";
+import {
+  createDosingPoints,
+  type DosingPoints,
+  heatRatio,
+  quantities,
+  ratioSpacing,
+} from "./dosingPoints.js";
 
-/** Distance of the table's points in ln k, and in the logarithm of the ratio of heat capacities. */
-const spacing = 0.04;
-const ratioSpacing = 0.05;
+/** Distances of the table's points in ln k: the first one whose cell errs little enough is used. */
+const spacings = [8, 2] as const;
 
 /** A cell is used only where its interpolation errs by less than this part of the largest value. */
 const allowedError = 1e-6;
 
-/** Samples of the rate over the feed: up to the stoichiometric point, and from there to the end. */
-const samplesBefore = 32;
-const samplesAfter = 12;
+/** Points of a cell's polynomial: three on either side. */
+const stencil = 6;
 
-/** One integration of the recipe. Times are parts of the feed's duration, rates parts of the largest one. */
-interface Point {
-  readonly dosing: Dosing;
-  readonly lnFastest: number;
-  readonly fastestAt: number;
-  readonly endRate: number;
-  readonly lnCompletion: number;
-  /** rise at the estimates' heat, K, by the index of the ratio of heat capacities */
-  readonly rises: Map<number, number>;
-  course: Float64Array | null;
-}
-
-/** Four neighbours, of which the two inner ones hold the cell. */
+/** Part of the table between two points, with what its polynomial goes through. */
 interface Cell {
-  readonly points: readonly [Point, Point, Point, Point];
+  /** indices of the six points */
+  readonly points: readonly number[];
+  readonly spacing: number;
+  /** six values of each of the quantities, one after the other */
+  readonly values: Float64Array;
+  /** by the index of the ratio of heat capacities: four rises of each point */
+  readonly rises: Map<number, Float64Array>;
   readonly completionHolds: boolean;
 }
 
 /**
- * The isothermal step of a semibatch as a function of ln k, tabulated where it is asked for and read by cubic
- * interpolation: for draws that differ in rate constant, heats and heat capacities but not in the recipe. The
+ * The isothermal step of a semibatch as a function of ln k, tabulated where it is asked for and read by polynomials
+ * of the fifth degree: for draws that differ in rate constant, heats and heat capacities but not in the recipe. The
  * largest rise depends besides on the ratio of the fed heat capacity to the charged one, and is tabulated over its
- * logarithm too.
+ * logarithm too (cubic).
  *
- * Before a cell is used its neighbourhood is held against itself: interpolation over points twice as far apart must
- * reproduce both of the cell's own points to 1e-6, which leaves a sixteenth of that within the cell. Where it does
- * not (a kink, or no integration), the step is integrated.
+ * Each cell is tested before it is used: in its middle it must agree with an integration to 1e-6. Where a wide cell
+ * does not (near a kink), narrow ones are made and tested alike; where those do not, the step is integrated.
  *
  * @param nominal the step at its estimates, a semibatch with a rate constant
  * @returns isothermal step of a draw with the same recipe
  */
 export function dosingTable(nominal: Step): (step: Step) => Isothermal {
-  const points = new Map<number, Point | null>();
-  const cells = new Map<number, Cell | null>();
-  const { limits, reaction } = nominal;
+  const points = createDosingPoints(nominal);
+  const cells = spacings.map(() => new Map<number, Cell | null>());
   const nominalRatio = heatRatio(nominal);
+  const weights = new Float64Array(stencil);
 
-  function pointAt(index: number): Point | null {
-    const before = points.get(index);
-    if (before !== undefined) return before;
-    const point = integratedPoint(index);
-    points.set(index, point);
-    return point;
-  }
-
-  function integratedPoint(index: number): Point | null {
-    const dosing = doseAt(nominal, fromArrhenius(spacing * index, 0), reaction.temperature);
-    if (dosing === null || !(dosing.fastest.value > 0)) return null;
-    const { fastest, balance, endRate } = dosing;
-    return {
-      dosing,
-      lnFastest: Math.log(fastest.value),
-      fastestAt: fastest.at / balance.feedEnd,
-      endRate: endRate / fastest.value,
-      lnCompletion: Math.log(timeToConversion(dosing, limits.targetConversion)),
-      rises: new Map(),
-      course: null,
-    };
-  }
-
-  function cellAt(index: number): Cell | null {
-    const before = cells.get(index);
-    if (before !== undefined) return before;
-    const cell = testedCell(index);
-    cells.set(index, cell);
-    return cell;
-  }
-
-  function testedCell(index: number): Cell | null {
-    const around: Point[] = [];
-    for (let i = -3; i <= 4; i += 1) {
-      const point = pointAt(index + i);
-      if (point === null) return null;
-      around.push(point);
+  /** Narrowest cell needed about a place, its weights left in `weights`; null where the table does not hold. */
+  function locate(lnK: number): Cell | null {
+    const place = lnK / points.unit;
+    for (let level = 0; level < spacings.length; level += 1) {
+      const index = Math.floor(place / spacings[level]);
+      let cell = cells[level].get(index);
+      if (cell === undefined) {
+        cell = testedCell(points, index * spacings[level], spacings[level]);
+        cells[level].set(index, cell);
+      }
+      if (cell !== null) {
+        fillWeights(weights, place / spacings[level] - index);
+        return cell;
+      }
     }
-    const errorOf = (value: (point: Point) => number): number => {
-      const v = around.map(value);
-      const error = (at: number): number =>
-        Math.abs(v[at] - (9 * (v[at - 1] + v[at + 1]) - v[at - 3] - v[at + 3]) / 16);
-      // A value that is not finite makes the error NaN, which never passes.
-      return Math.max(error(3), error(4));
-    };
-    const scale = Math.max(...around.map((point) => riseOf(point, 0)));
-    const good =
-      errorOf((point) => point.lnFastest) <= allowedError &&
-      errorOf((point) => point.endRate) <= allowedError &&
-      errorOf((point) => riseOf(point, 0)) <= allowedError * scale;
-    if (!good) return null;
-    return {
-      points: [around[2], around[3], around[4], around[5]],
-      completionHolds: errorOf((point) => point.lnCompletion) <= allowedError,
-    };
-  }
-
-  function riseOf(point: Point, index: number): number {
-    const before = point.rises.get(index);
-    if (before !== undefined) return before;
-    const rise = riseAtRatio(point.dosing, nominal, Math.exp(ratioSpacing * index));
-    point.rises.set(index, rise);
-    return rise;
+    return null;
   }
 
   return (step) => {
-    const { rate } = step.reaction;
+    const { rate, heat, measuredExcess } = step.reaction;
     const direct = integrated(step);
     if (rate === null) return direct;
     const lnRatio = Math.log(heatRatio(step) / nominalRatio) / ratioSpacing;
     const ratioIndex = Math.floor(lnRatio);
-    const ratioWeights = weightsAt(lnRatio - ratioIndex);
+    const ratioWeights = cubicWeights(lnRatio - ratioIndex);
     const riseFactor =
-      ((step.reaction.heat / reaction.heat) * nominal.mixture.heatCapacity) / step.mixture.heatCapacity;
-    const riseIn = (point: Point): number => {
-      let rise = 0;
-      for (let j = 0; j < 4; j += 1) {
-        if (ratioWeights[j] !== 0) rise += ratioWeights[j] * riseOf(point, ratioIndex + j - 1);
-      }
-      return rise;
-    };
-    const locate = (temperature: number) => {
-      const place = lnRateConstant(rate, temperature) / spacing;
-      const index = Math.floor(place);
-      const cell = cellAt(index);
-      return cell === null ? null : { cell, weights: weightsAt(place - index) };
-    };
+      ((heat / nominal.reaction.heat) * nominal.mixture.heatCapacity) / step.mixture.heatCapacity;
     return {
       figuresAt(temperature) {
-        const found = locate(temperature);
-        if (found === null) return direct.figuresAt(temperature);
-        const { points: near } = found.cell;
-        const [a, b, c, d] = found.weights;
-        const read = (value: (point: Point) => number): number =>
-          a * value(near[0]) + b * value(near[1]) + c * value(near[2]) + d * value(near[3]);
-        const fastest = Math.exp(read((point) => point.lnFastest));
-        const at = read((point) => point.fastestAt);
+        const cell = locate(lnRateConstant(rate, temperature));
+        if (cell === null) return direct.figuresAt(temperature);
+        const fastest = Math.exp(read(cell, weights, quantities.lnFastest));
+        const at = Math.min(Math.max(read(cell, weights, quantities.fastestAt), 0), 1) * points.feedEnd;
+        const rise = readRise(points, cell, weights, ratioIndex, ratioWeights);
         return {
-          rise: riseFactor * read(riseIn) + step.reaction.measuredExcess,
-          fastest: { value: fastest, at: Math.min(Math.max(at, 0), 1) * near[1].dosing.balance.feedEnd },
-          endRate: fastest * read((point) => point.endRate),
+          rise: riseFactor * rise + measuredExcess,
+          fastest: { value: fastest, at },
+          endRate: fastest * read(cell, weights, quantities.endRate),
         };
       },
       completionAt(temperature) {
-        const found = locate(temperature);
-        if (found === null || !found.cell.completionHolds) return direct.completionAt(temperature);
-        const { points: near } = found.cell;
-        const [a, b, c, d] = found.weights;
-        return Math.exp(
-          a * near[0].lnCompletion +
-            b * near[1].lnCompletion +
-            c * near[2].lnCompletion +
-            d * near[3].lnCompletion,
-        );
+        const cell = locate(lnRateConstant(rate, temperature));
+        if (cell === null || !cell.completionHolds) return direct.completionAt(temperature);
+        return Math.exp(read(cell, weights, quantities.lnCompletion));
       },
       courseAt(temperature) {
-        const found = locate(temperature);
-        return found === null ? direct.courseAt(temperature) : courseBetween(found.cell, found.weights);
+        const cell = locate(lnRateConstant(rate, temperature));
+        if (cell === null) return direct.courseAt(temperature);
+        const fastest = Math.exp(read(cell, weights, quantities.lnFastest));
+        return courseBetween(points, cell.points, weights, fastest);
       },
     };
   };
 }
 
-type Weights = readonly [number, number, number, number];
-
-/** Weights of the cubic through four points at -1, 0, 1 and 2, at u from 0 to 1. */
-function weightsAt(u: number): Weights {
-  const [before, after, beyond] = [u + 1, 1 - u, 2 - u];
-  return [
-    (-u * after * beyond) / 6,
-    (before * after * beyond) / 2,
-    (before * u * beyond) / 2,
-    (-before * u * after) / 6,
-  ];
-}
-
-/** Heat capacity of the whole feed over that of the contents before it. */
-function heatRatio({ mixture, reaction }: Step): number {
-  const feed = reaction.feed;
-  return feed === null ? 0 : (feed.mass * feed.heatCapacity) / (mixture.mass * mixture.heatCapacity);
-}
-
-/** Rise of a run, its feed's heat capacity multiplied, with all else at the estimates. */
-function riseAtRatio({ balance, run }: Dosing, nominal: Step, factor: number): number {
-  const { feed } = nominal.reaction;
-  if (run === null || feed === null) return Number.NaN;
-  const warmer = { ...feed, heatCapacity: feed.heatCapacity * factor };
-  return largestRise({ ...nominal, reaction: { ...nominal.reaction, feed: warmer } }, balance, run).value;
-}
-
-/** Times at which a course is sampled, s. */
-function sampleTimes({ balance }: Dosing): number[] {
-  const turn = stoichiometricTime(balance);
-  const times = Array.from({ length: samplesBefore + 1 }, (_, i) => (turn * i) / samplesBefore);
-  if (turn < balance.feedEnd) {
-    for (let i = 1; i <= samplesAfter; i += 1) {
-      times.push(turn + ((balance.feedEnd - turn) * i) / samplesAfter);
+function testedCell(points: DosingPoints, start: number, spacing: number): Cell | null {
+  const indices = [-2, -1, 0, 1, 2, 3].map((offset) => start + offset * spacing);
+  const middle = start + spacing / 2;
+  if (!points.exist([...indices, middle])) return null;
+  const count = Object.keys(quantities).length;
+  const values = new Float64Array(count * stencil);
+  indices.forEach((index, i) => {
+    for (let quantity = 0; quantity < count; quantity += 1) {
+      values[quantity * stencil + i] = points.value(index, quantity);
     }
-  }
-  return times;
-}
-
-function courseBetween({ points }: Cell, weights: Weights): RateCourse {
-  const times = sampleTimes(points[1].dosing);
-  const lnFastest = points.reduce((sum, point, j) => sum + weights[j] * point.lnFastest, 0);
-  const rates = new Float64Array(times.length);
-  points.forEach((point, j) => {
-    point.course ??= sampledCourse(point, times);
-    for (let i = 0; i < rates.length; i += 1) rates[i] += weights[j] * point.course[i];
   });
-  const fastest = Math.exp(lnFastest);
-  const last = times.length - 1;
-  return {
-    times,
-    rateAt(time) {
-      // Straight between samples: their own values are what a search for the largest heat compares.
-      let i = 0;
-      while (i < last - 1 && times[i + 1] < time) i += 1;
-      const part = (time - times[i]) / (times[i + 1] - times[i]);
-      return fastest * (rates[i] + part * (rates[i + 1] - rates[i]));
-    },
-  };
+  const weights = new Float64Array(stencil);
+  fillWeights(weights, 0.5);
+  const cell = { points: indices, spacing, values, rises: new Map<number, Float64Array>() };
+  const misses = (quantity: number): boolean =>
+    // A value that is not finite makes the error NaN, which never passes.
+    !(Math.abs(read(cell, weights, quantity) - points.value(middle, quantity)) <= allowedError);
+  const risesThere = indices.map((index) => points.rise(index, 0));
+  const risen = risesThere.reduce((sum, rise, i) => sum + weights[i] * rise, 0);
+  const riseError = Math.abs(risen - points.rise(middle, 0));
+  if (misses(quantities.lnFastest) || misses(quantities.endRate)) return null;
+  if (!(riseError <= allowedError * Math.max(...risesThere))) return null;
+  return { ...cell, completionHolds: !misses(quantities.lnCompletion) };
 }
 
-function sampledCourse({ dosing }: Point, times: readonly number[]): Float64Array {
-  const course = courseOf(dosing);
-  return Float64Array.from(times, (time) =>
-    course === null ? Number.NaN : course.rateAt(time) / dosing.fastest.value,
-  );
+function read(cell: Pick<Cell, "values">, weights: Float64Array, quantity: number): number {
+  const { values } = cell;
+  const from = quantity * stencil;
+  let sum = 0;
+  for (let i = 0; i < stencil; i += 1) sum += weights[i] * values[from + i];
+  return sum;
+}
+
+function readRise(
+  points: DosingPoints,
+  cell: Cell,
+  weights: Float64Array,
+  ratioIndex: number,
+  ratioWeights: Float64Array,
+): number {
+  let rises = cell.rises.get(ratioIndex);
+  if (rises === undefined) {
+    rises = new Float64Array(4 * stencil);
+    for (let j = 0; j < 4; j += 1) {
+      for (let i = 0; i < stencil; i += 1) {
+        rises[j * stencil + i] = points.rise(cell.points[i], ratioIndex + j - 1);
+      }
+    }
+    cell.rises.set(ratioIndex, rises);
+  }
+  let sum = 0;
+  for (let j = 0; j < 4; j += 1) {
+    let column = 0;
+    for (let i = 0; i < stencil; i += 1) column += weights[i] * rises[j * stencil + i];
+    sum += ratioWeights[j] * column;
+  }
+  return sum;
+}
+
+/** Weights of the polynomial through six points at -2 to 3, at u from 0 to 1 (Lagrange). */
+function fillWeights(weights: Float64Array, u: number): void {
+  const [a, b, c, d, e, f] = [u + 2, u + 1, u, u - 1, u - 2, u - 3];
+  weights[0] = (-b * c * d * e * f) / 120;
+  weights[1] = (a * c * d * e * f) / 24;
+  weights[2] = (-a * b * d * e * f) / 12;
+  weights[3] = (a * b * c * e * f) / 12;
+  weights[4] = (-a * b * c * d * f) / 24;
+  weights[5] = (a * b * c * d * e) / 120;
+}
+
+/** Weights of the cubic through four points at -1 to 2, at u from 0 to 1 (Lagrange). */
+function cubicWeights(u: number): Float64Array {
+  const [a, b, c, d] = [u + 1, u, u - 1, u - 2];
+  return Float64Array.of((-b * c * d) / 6, (a * c * d) / 2, (-a * b * d) / 2, (a * b * c) / 6);
 }
