@@ -1,5 +1,5 @@
 import type { Findings } from "../screening/findings.js";
-import { drawLine, lineHeight, type TextStyle, wrap } from "./lines.js";
+import { clip, drawLine, lineHeight, type TextStyle, wrap } from "./lines.js";
 import { type Cursor, childElement, ink, ornament, readable, styles } from "./page.js";
 import { stopSentence } from "./sentences.js";
 
@@ -39,7 +39,7 @@ export function writeStop(cursor: Cursor, findings: Findings): void {
     ...stops.slice(0, mostStops).map((stop) => stop.text),
     ...more,
   ];
-  const blocks = texts.map((text, index) => wrap(text, inner, index === 0 ? styles.strong : styles.body));
+  const blocks = texts.map((text, index) => clip(text, inner, index === 0 ? styles.strong : styles.body, 4));
   const height = blocks.reduce((sum, lines) => sum + lines.length * lineHeight(styles.body) + 2, 8);
   ornament(cursor, () => {
     pdf.rect(left, cursor.y, wordWidth, height).fill("#000000");

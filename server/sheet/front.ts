@@ -4,7 +4,7 @@ import { differenceText, durationText, temperatureText } from "../words/numbers.
 import { writeNotice, writeStop } from "./boxes.js";
 import { drawPicture } from "./figures.js";
 import { writeFrontCautions } from "./frontCautions.js";
-import { drawLine, lineHeight, shorten, wrap } from "./lines.js";
+import { clip, drawLine, lineHeight, shorten, wrap } from "./lines.js";
 import { type Cursor, childElement, paragraph, readable, styles } from "./page.js";
 import { actSentence, classSentence, severityText, windowSentence } from "./sentences.js";
 
@@ -33,12 +33,16 @@ export function writeFront(
   writeStop(cursor, findings);
   if (picture !== null) drawPicture(cursor, picture, roomForPicture(cursor));
   for (const sentence of [windowSentence(findings), classSentence(findings), actSentence(findings)]) {
-    paragraph(cursor, sentence, styles.strong, { after: 2 });
+    const lines = clip(sentence, cursor.width, styles.strong, mostLines);
+    paragraph(cursor, lines.join(" "), styles.strong, { after: 2 });
   }
   cursor.y += 3;
   facts(cursor, keyFacts(findings), 4);
   writeFrontCautions(cursor, findings.cautions);
 }
+
+/** So long may a sentence be before it takes the room of another. */
+const mostLines = 4;
 
 /** What the sentences, the facts and the first cautions need below the picture, pt. */
 const belowPicture = 245;
@@ -50,9 +54,7 @@ function roomForPicture(cursor: Cursor): number {
 function writeTitle(cursor: Cursor, block: TitleBlock, findings: Findings): void {
   const { pdf } = cursor;
   pdf.outline.addItem("Summary");
-  const lines = wrap(block.title, cursor.width, styles.title);
-  const shown = lines.slice(0, 2);
-  if (lines.length > 2) shown[1] = shorten(lines.slice(1).join(" "), cursor.width, styles.title);
+  const shown = clip(block.title, cursor.width, styles.title, 2);
   const element = childElement(cursor, "H1");
   readable(cursor, element, "H1", () => {
     for (const line of shown) {

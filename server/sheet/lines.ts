@@ -142,6 +142,13 @@ function breakWord(word: string, width: number, style: TextStyle): string[] {
   return pieces;
 }
 
+/** At most so many lines that fit, with an ellipsis where something was left out. */
+export function clip(text: string, width: number, style: TextStyle, most: number): string[] {
+  const lines = wrap(text, width, style);
+  if (lines.length <= most) return lines;
+  return [...lines.slice(0, most - 1), shorten(lines.slice(most - 1).join(" "), width, style)];
+}
+
 /** One line that fits, with an ellipsis where something was left out. */
 export function shorten(text: string, width: number, style: TextStyle): string {
   const [first = "", ...rest] = wrap(text.slice(0, 400), width, style);

@@ -9,6 +9,7 @@ import { drawFigure } from "./figures.js";
 import { writeRunning } from "./foot.js";
 import { type TitleBlock, writeFront } from "./front.js";
 import { writeInputs } from "./inputs.js";
+import { writeInputWorkings } from "./inputWorkings.js";
 import { heading, newPage, startPages } from "./page.js";
 import { writeResults } from "./results.js";
 import { writeWorking } from "./working.js";
@@ -41,6 +42,7 @@ export async function renderSheet({ document, model, findings, paper }: SheetInp
   writeFront(cursor, document, findings, picture);
   newPage(cursor);
   writeInputs(cursor, document, model.inputs);
+  writeInputWorkings(cursor, findings.workings);
   writeResults(cursor, findings);
   const others = figures.filter((figure) => figure !== picture);
   if (others.length > 0) heading(cursor, "Figures", 200);

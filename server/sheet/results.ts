@@ -60,7 +60,7 @@ function temperatures(cursor: Cursor, findings: Findings): void {
     [
       "Largest accumulation",
       shown(accumulation?.maximumFraction, (part) => percentText(part, "up")),
-      accumulation === null ? "" : `${durationText(accumulation.at_s)} after the start`,
+      accumulation === null ? "" : `${durationText(accumulation.at_s, "nearest")} after the start`,
     ],
     [
       "TMRad from the process temperature",

@@ -1,7 +1,7 @@
 import { pointerOf } from "../case/faults.js";
 import { inputNotes, labelOf } from "../case/inputs.js";
 import type { Leaf } from "../case/leaves.js";
-import { memberOf, type Place, valueAt } from "../case/outline.js";
+import { type Place, valueAt } from "../case/outline.js";
 import { visitLeaves } from "../case/typed.js";
 import type { InputNote } from "../screening/model.js";
 
@@ -102,15 +102,10 @@ function choicesAbove(
     const pointer = pointerOf([...path.slice(0, depth), place.teller]);
     if (option?.kind !== "group" || told.has(pointer)) return [];
     told.add(pointer);
-    return [
-      {
-        ...unmeasured(
-          pointer,
-          labelOf({ kind: "text", label: place.about.choosing ?? place.teller }, path, groups),
-        ),
-        text: option.about.title,
-      },
-    ];
+    const name = lowered(
+      `${place.about.title} ${(place.about.choosing ?? place.teller).toLowerCase()}`.trim(),
+    );
+    return [{ ...unmeasured(pointer, name), text: option.about.title }];
   });
 }
 
@@ -140,13 +135,12 @@ function inputOf(
       text: plainText(leaf, value),
     };
   }
-  const ownWords = leaf.kind === "quantity" && leaf.freeBasis === true ? memberOf(value, "basis") : undefined;
   return {
     pointer,
     label: note.label,
     text: note.text,
     standardError: note.standardErrorText,
-    basis: typeof ownWords === "string" ? ownWords : note.basis,
+    basis: note.basis,
     source: note.source,
     measurable: true,
   };
@@ -177,7 +171,12 @@ function fieldOf(
 
 function plainText(leaf: Leaf, value: unknown): string {
   const word = String(value);
-  return leaf.kind === "choice" ? (leaf.choices[word] ?? word).toLowerCase() : word;
+  return leaf.kind === "choice" ? lowered(leaf.choices[word] ?? word) : word;
+}
+
+/** A choice inside a sentence: "Runs on" as "runs on", but B as B. */
+function lowered(text: string): string {
+  return /^[A-Z][a-z]/.test(text) ? text.charAt(0).toLowerCase() + text.slice(1) : text;
 }
 
 function openList(pointer: string, place: Place | undefined): OpenList {

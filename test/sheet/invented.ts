@@ -366,6 +366,7 @@ export const inventedFindings: Findings = {
     drivers: null,
     nextMeasurement: null,
   },
+  workings: [],
   cautions,
 };
 

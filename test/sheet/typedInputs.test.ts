@@ -25,7 +25,7 @@ describe("what was typed", () => {
 
   test("includes names, choices and the words on which a limit rests", () => {
     expect(at("/batch/vessel")).toMatchObject({ text: "V-000", measurable: false });
-    expect(at("/limits/maximumTechnicalTemperature")?.basis).toBe("boiling point at 1 atm");
+    expect(at("/limits/maximumTechnicalTemperature")?.source).toBe("boiling point at 1 atm");
     expect(at("/reaction/rateConstant/form")?.text).toMatch(/measured/i);
   });
 
