@@ -92,12 +92,18 @@ function orderIntegral(
       const s = middle + half * nodes[i];
       const temperature = 1 / (inverseStart - perKelvin * s);
       const alpha = alpha0 + (temperature - start) / rise;
-      const power = rate.temperaturePower === 0 ? 1 : (start / temperature) ** rate.temperaturePower;
+      const power = coolness(start / temperature, rate.temperaturePower);
       sum += (weights[i] * half * power * temperature * temperature * Math.exp(-s)) / lawValue(law, alpha);
     }
     low += length;
   }
   return (sum * perKelvin) / rise;
+}
+
+/** (T0/T)^b. Nearly every rate constant has b = 0 (Arrhenius) or 1 (Eyring), which need no power. */
+function coolness(ratio: number, power: number): number {
+  if (power === 0) return 1;
+  return power === 1 ? ratio : ratio ** power;
 }
 
 /**
@@ -127,7 +133,7 @@ function progressIntegral(
       const progress = middle + half * nodes[i];
       const temperature = start + rise * progress;
       const s = barrier * (1 / start - 1 / temperature);
-      const power = rate.temperaturePower === 0 ? 1 : (start / temperature) ** rate.temperaturePower;
+      const power = coolness(start / temperature, rate.temperaturePower);
       sum += (weights[i] * half * power * Math.exp(-s)) / lawValue(law, alpha0 + progress);
     }
     low += length;
