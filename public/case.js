@@ -33,7 +33,14 @@ function take(source, id) {
 
 /** Old findings stay in sight, but marked, until the fields are all understood again. */
 function markStale(stale) {
-  document.getElementById("findings").classList.toggle("stale", stale);
+  const findings = document.getElementById("findings");
+  findings.classList.toggle("stale", stale && findings.childElementCount > 0);
+}
+
+/** Says in words that the findings in sight are older than the fields; not for the moment that an answer takes. */
+function noteStale(stale) {
+  const empty = document.getElementById("findings").childElementCount === 0;
+  document.getElementById("stale-note").hidden = !stale || empty;
 }
 
 /** Puts each fault beside its field, where the field was touched, and takes away those that are gone. */
@@ -62,12 +69,14 @@ async function refresh(parts) {
   try {
     const fresh = await send(`/findings?parts=${parts}`, body());
     take(fresh, "outcome");
+    for (const working of form.querySelectorAll("[data-working]")) take(fresh, working.id);
     const found = fresh.querySelector("#findings > *") !== null;
     if (found) take(fresh, "findings");
     markStale(!found);
+    noteStale(!found);
     showFaults();
   } catch (error) {
-    if (error.name !== "AbortError") markStale(true);
+    if (error.name !== "AbortError") noteStale(true);
   }
 }
 
@@ -102,8 +111,23 @@ async function reshape(action) {
   refreshSoon();
 }
 
+/** The folded line under a quantity: how well it is known, as far as it was said. */
+function tellKnown(details) {
+  const [error, basis, source] = details.querySelectorAll("input, select");
+  const parts = [
+    error.value === "" ? "" : `± ${error.value}`,
+    basis.value === "" ? "" : (basis.selectedOptions?.[0].textContent ?? basis.value),
+    source.value,
+  ].filter((part) => part !== "");
+  const told = details.querySelector(".told");
+  details.classList.toggle("is-told", parts.length > 0);
+  told.textContent = parts.length > 0 ? parts.join(" · ") : told.dataset.empty;
+}
+
 form.addEventListener("input", (event) => {
   event.target.dataset.touched = "";
+  const known = event.target.closest(".known");
+  if (known !== null) tellKnown(known);
   refreshSoon();
 });
 
@@ -114,7 +138,7 @@ form.addEventListener("change", (event) => {
 
 form.addEventListener("click", (event) => {
   const button = event.target.closest("button[name=do]");
-  if (button === null || !/^(add|remove):/.test(button.value)) return;
+  if (button === null || !/^(add|remove|work|undo):/.test(button.value)) return;
   event.preventDefault();
   reshape(button.value).catch(() => form.requestSubmit(button));
 });

@@ -1,5 +1,5 @@
 import type { Response } from "express";
-import { formOf } from "../case/form.js";
+import { type Before, formOf, workingsShown } from "../case/form.js";
 import { type Fault, readCase } from "../case/read.js";
 import { type SavedCase, titleOf } from "../files/cases.js";
 import type { DemoCase } from "../files/demos.js";
@@ -22,6 +22,10 @@ export interface CaseToShow {
   readonly origin: Origin;
   /** false while fields are still being added: an empty one is no fault yet */
   readonly faultsShown?: boolean;
+  /** pointer below which alone faults are shown */
+  readonly faultsUnder?: string;
+  /** what fields held before they were worked out */
+  readonly before?: Before;
   /** waits for failures and draws; otherwise the page comes with what is known at once */
   readonly full?: boolean;
   /** what was typed differs from what `origin` holds */
@@ -45,10 +49,10 @@ interface Screened {
 
 /** Screens a document and answers with the page of its case. */
 export async function renderCase(services: Services, response: Response, shown: CaseToShow): Promise<void> {
-  const { document, origin, faultsShown = true, full = false } = shown;
+  const { document, origin, faultsShown = true, faultsUnder = "", before = {}, full = false } = shown;
   const screened = await screenDocument(services, response, document, full);
-  const faults = faultsShown ? screened.faults : [];
-  const sections = formOf(document, faults);
+  const faults = screened.faults.filter(({ pointer }) => faultsShown && pointer.startsWith(faultsUnder));
+  const sections = formOf(document, faults, before);
   const places = placesOf(sections);
   const saved = origin.kind === "saved" ? origin.saved : null;
   response.render("case", {
@@ -75,9 +79,10 @@ export async function renderOutcome(
   full: boolean,
 ): Promise<void> {
   const { faults, findings } = await screenDocument(services, response, document, full);
-  const places = placesOf(formOf(document, faults));
+  const sections = formOf(document, faults);
+  const places = placesOf(sections);
   const outcome: Outcome = { live: true, faults: listFaults(faults, places), findings };
-  response.render("fragment", { outcome, targetOf: targets(places) });
+  response.render("fragment", { outcome, workings: workingsShown(sections), targetOf: targets(places) });
 }
 
 async function screenDocument(

@@ -1,6 +1,6 @@
 import { type Request, type Response, Router, urlencoded } from "express";
 import { canonicalJson } from "../case/canonical.js";
-import { blankCase, documentFromForm, editForm } from "../case/form.js";
+import { beforeOf, blankCase, documentFromForm, editForm, isWorking, workField } from "../case/form.js";
 import { readCase } from "../case/read.js";
 import { titleOf } from "../files/cases.js";
 import { abandoned } from "./abandoned.js";
@@ -64,6 +64,7 @@ export function casePages(services: Services): Router {
     const body: Record<string, unknown> = request.body ?? {};
     const action = typeof body.do === "string" ? body.do : "screen";
     const document = documentFromForm(body);
+    const before = beforeOf(body);
     if (action === "save") return save(response, document, origin, Number(body.revision));
     if (action === "copy") {
       const made = await cases.create(withTitle(document, `${titleOf(document)}, copy`));
@@ -83,13 +84,19 @@ export function casePages(services: Services): Router {
         document: edited,
         origin,
         faultsShown: false,
+        before,
         changed: true,
       });
+    }
+    if (isWorking(action)) {
+      const { group: faultsUnder, ...worked } = workField(document, action, before);
+      return renderCase(services, response, { ...worked, origin, faultsUnder, changed: true });
     }
     if (!readCase(document).ok) response.status(422);
     return renderCase(services, response, {
       document,
       origin,
+      before,
       changed: isChanged(document, origin),
       full: true,
     });

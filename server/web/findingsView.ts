@@ -29,6 +29,8 @@ export interface FindingsView {
     readonly svg: string;
   })[];
   readonly cautions: readonly CautionGroup[];
+  /** how many there are: "2 warnings, 3 notes" */
+  readonly counted: string;
 }
 
 export interface CautionGroup {
@@ -68,7 +70,13 @@ export function findingsView(findings: Findings): FindingsView {
       svg: drawSvg(figure),
     })),
     cautions,
+    counted: cautions.map((group) => count(group.cautions.length, group.name)).join(", "),
   };
+}
+
+/** "1 stop", "2 warnings" */
+function count(number: number, name: string): string {
+  return `${number} ${name.toLowerCase()}${number === 1 ? "" : "s"}`;
 }
 
 /** The answers in words; that nothing is left of the window is already said where it is a stop. */
