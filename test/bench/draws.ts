@@ -1,0 +1,47 @@
+import { drawnFindings } from "../../server/screening/drawn.js";
+import { knownRates } from "../../server/screening/known.js";
+import { estimates, realise } from "../../server/screening/realise.js";
+import { td24 } from "../../server/thermal/td24.js";
+import { studyOf } from "../../server/window/study.js";
+import { temperatureWindow } from "../../server/window/window.js";
+import { demo } from "./cases.js";
+import { type Bench, type Line, ms, ratio, type Timing, time } from "./measure.js";
+
+/** A fixed piece of arithmetic, to tell a slow program from a busy machine. */
+function reference(): number {
+  let sum = 0;
+  for (let i = 1; i <= 4_000_000; i += 1) sum += Math.exp(-1 / i) / (i + sum);
+  return sum;
+}
+
+function drawing(name: string): Timing {
+  const { model } = demo(name);
+  const known = knownRates(model);
+  const study = studyOf(realise(model, known, estimates), "draws");
+  const window = temperatureWindow(study);
+  const limit = study.runaway === null ? null : td24(study.runaway);
+  return time(() => drawnFindings(model, known, { study, window, td24: limit }), 3);
+}
+
+/** The least of several runs counts: others at work on the machine only ever add to it. */
+function within(what: string, timing: Timing, loop: Timing, bound: number): Line {
+  return {
+    what,
+    figure: `${ms(timing.least)}, ${ratio(timing.least, loop.least)} the reference loop`,
+    bound: { text: `below ${ms(bound)}`, met: timing.least < bound },
+  };
+}
+
+/** 2,000 draws of everything but failures, on one core. */
+export const drawsBench: Bench = {
+  title: "2,000 draws of everything but failures (least of several runs)",
+  run() {
+    const loop = time(reference);
+    return [
+      { what: "reference loop of four million exponentials", figure: ms(loop.least) },
+      within("batch (hydrolysis)", drawing("hydrolysis"), loop, 100),
+      within("batch with an autocatalytic decomposition (ring closure)", drawing("ring-closure"), loop, 100),
+      within("dosed (acylation)", drawing("acylation"), loop, 200),
+    ];
+  },
+};
