@@ -8,7 +8,7 @@ import type { Vessel } from "./vessel.js";
 import { isWorse, worstStart } from "./worstStart.js";
 
 /** What stopping the feed, and nothing else, would do. */
-export interface StopFeedOnly {
+interface StopFeedOnly {
   readonly suffices: boolean;
   /** s; null where it does not suffice */
   readonly timeToAct: number | null;

@@ -25,7 +25,7 @@ export function quenched(charge: Charge, quench: Quench): Charge {
  *
  * @returns kg/s; 0 for a batch
  */
-export function feedMassRate(step: Step): number {
+function feedMassRate(step: Step): number {
   const { feed } = step.reaction;
   return feed === null ? 0 : feed.mass / feed.duration;
 }
@@ -48,4 +48,67 @@ export function afterFeeding(step: Step, charge: Charge, time: number): Charge {
   const { feed } = step.reaction;
   if (feed === null || time === 0) return charge;
   return { ...charge, fed: Math.min(feed.mass, charge.fed + feedMassRate(step) * time) };
+}
+
+/** What is in the vessel, and by how much it grows in a second. */
+export interface Inventory {
+  /** kg of first charge and feed; a quench does not decompose */
+  readonly mass: number;
+  readonly massRate: number;
+  /** J/K, walls and quenches included */
+  readonly heatCapacity: number;
+  readonly heatCapacityRate: number;
+  /** m^3 */
+  readonly volume: number;
+  readonly volumeRate: number;
+  /** mol charged and fed, before anything reacted */
+  readonly amountA: number;
+  readonly rateA: number;
+  readonly amountB: number;
+  readonly rateB: number;
+}
+
+/**
+ * Inventory of the vessel: C' = C(t) + (phi - 1) m0 cp0 + quenches, V(t), m(t) and both amounts.
+ *
+ * @param step SI numbers
+ * @param charge at a moment
+ * @param feeding whether the feed runs then
+ */
+export function inventoryOf(step: Step, charge: Charge, feeding: boolean): Inventory {
+  const { mixture, reaction } = step;
+  const { feed } = reaction;
+  const amountB = reaction.b?.amount ?? 0;
+  const own = mixture.thermalInertia * mixture.mass * mixture.heatCapacity + charge.quenchCapacity;
+  const volume = mixture.mass / mixture.density + charge.quenchVolume;
+  if (feed === null) {
+    return {
+      mass: mixture.mass,
+      massRate: 0,
+      heatCapacity: own,
+      heatCapacityRate: 0,
+      volume,
+      volumeRate: 0,
+      amountA: reaction.amountA,
+      rateA: 0,
+      amountB,
+      rateB: 0,
+    };
+  }
+  const massRate = feeding ? feedMassRate(step) : 0;
+  const part = charge.fed / feed.mass;
+  const partRate = massRate / feed.mass;
+  const feedsA = feed.reactant === "A";
+  return {
+    mass: mixture.mass + charge.fed,
+    massRate,
+    heatCapacity: own + charge.fed * feed.heatCapacity,
+    heatCapacityRate: massRate * feed.heatCapacity,
+    volume: volume + charge.fed / feed.density,
+    volumeRate: massRate / feed.density,
+    amountA: reaction.amountA * (feedsA ? part : 1),
+    rateA: feedsA ? reaction.amountA * partRate : 0,
+    amountB: amountB * (feedsA ? 1 : part),
+    rateB: feedsA ? 0 : amountB * partRate,
+  };
 }

@@ -10,12 +10,12 @@ import {
   volumePower,
 } from "../thermal/reactionRate.js";
 import type { Step } from "../thermal/step.js";
-import { type Charge, feedMassRate } from "./charge.js";
+import { type Charge, inventoryOf } from "./charge.js";
 import type { Conditions } from "./conditions.js";
 import { continuedLaw, continuedLawSlope } from "./progressRate.js";
 
 /** Where the unknowns of a state stand. */
-export interface Places {
+interface Places {
   /** temperature of the contents less the reference, K */
   readonly temperature: 0;
   /** extent of the desired reaction, part of the limiting amount */
@@ -68,7 +68,7 @@ export interface Contents {
  * Engineering (mixed semibatch)
  */
 export function createContents(step: Step, rate: ModifiedArrhenius, reference: number): Contents {
-  const { mixture, reaction, decomposition, vessel } = step;
+  const { reaction, decomposition, vessel } = step;
   const { b, feed, orderA, amountA: totalA } = reaction;
   const { flowing, gain } = vessel;
   const law = decomposition?.law;
@@ -83,8 +83,6 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
   const totalB = b?.amount ?? 0;
   const orderB = b?.order ?? 1;
   const perA = b?.perA ?? 0;
-  const feedsA = feed?.reactant === "A";
-  const feedsB = feed?.reactant === "B";
   const volumeOrder = 1 - overallOrder(reaction);
   const jacketCapacity = flowing === null ? 1 : flowing.holdup * flowing.heatCapacity;
   const coolantCapacityRate = flowing === null ? 0 : flowing.flow * flowing.heatCapacity;
@@ -92,23 +90,14 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
   const ambient = gain === null ? 0 : gain.ambient - reference;
   const feedTemperature = feed === null ? 0 : feed.temperature - reference;
 
-  // What `enter` sets: constants of the leg, and values at its origin with their rates.
+  // What `enter` sets: constants of the leg, and what is in the vessel at its origin.
   let origin = 0;
   let mixing = 1;
   let exchange = 0;
   let coolantExchange = 0;
   let coolant = 0;
   let power = 0;
-  let capacity0 = 1;
-  let capacityRate = 0;
-  let volume0 = 1;
-  let volumeRate = 0;
-  let mass0 = 0;
-  let massRate = 0;
-  let chargedA = 0;
-  let rateA = 0;
-  let chargedB = 0;
-  let rateB = 0;
+  let inside = inventoryOf(step, { fed: 0, quenchCapacity: 0, quenchVolume: 0 }, false);
   let blurredA = totalA;
   let blurredB = totalB;
   let blurredProgress = 1;
@@ -134,16 +123,16 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
     const above = y[0];
     const extent = y[1];
     temperature = reference + above;
-    capacity = capacity0 + capacityRate * elapsed;
+    capacity = inside.heatCapacity + inside.heatCapacityRate * elapsed;
     reacting = 0;
     if (mixing > 0) {
-      volume = volume0 + volumeRate * elapsed;
-      amountA = chargedA + rateA * elapsed - extent * limiting;
+      volume = inside.volume + inside.volumeRate * elapsed;
+      amountA = inside.amountA + inside.rateA * elapsed - extent * limiting;
       ofA = amountPower(amountA, orderA, blurredA);
       sign = 1;
       if (b === null) ofB = 1;
       else {
-        amountB = chargedB + rateB * elapsed - perA * extent * limiting;
+        amountB = inside.amountB + inside.rateB * elapsed - perA * extent * limiting;
         ofB = amountPower(amountB, orderB, blurredB);
         // Both used up: odd times odd must not come out positive.
         if (amountA < 0 && amountB < 0) sign = -1;
@@ -154,12 +143,12 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
         Math.exp(lnRateConstant(rate, temperature));
       reacting = factor * ofA * ofB;
     }
-    input = heatPerExtent * reacting + capacityRate * (feedTemperature - above) + power;
+    input = heatPerExtent * reacting + inside.heatCapacityRate * (feedTemperature - above) + power;
     if (above < ambient) input += gainCoefficient * (ambient - above);
     if (law !== undefined && decay !== undefined && progressAt !== null) {
       decayConstant = Math.exp(lnRateConstant(decay, temperature));
       decaying = decayConstant * continuedLaw(law, y[progressAt], blurredProgress);
-      decayHeat = (mass0 + massRate * elapsed) * heatPerMass;
+      decayHeat = (inside.mass + inside.massRate * elapsed) * heatPerMass;
       input += decayHeat * decaying;
     }
   };
@@ -185,7 +174,7 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
     prepare(time, y);
     out.fill(0);
     const gaining = y[0] < ambient ? gainCoefficient : 0;
-    let heatPerKelvin = -capacityRate - gaining - exchange;
+    let heatPerKelvin = -inside.heatCapacityRate - gaining - exchange;
     if (mixing > 0) {
       const perKelvin = reacting * steepness(rate);
       const slopeA = amountPowerSlope(amountA, orderA, blurredA);
@@ -214,17 +203,17 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
 
   const timeDerivative = (time: number, y: Float64Array, out: Float64Array): void => {
     out.fill(0);
-    if (massRate === 0) return;
+    if (inside.massRate === 0) return;
     prepare(time, y);
     const slope = (input - removal(y)) / capacity;
-    let heat = massRate * heatPerMass * decaying;
+    let heat = inside.massRate * heatPerMass * decaying;
     if (mixing > 0) {
-      const fromA = rateA === 0 ? 0 : rateA * amountPowerSlope(amountA, orderA, blurredA) * ofB;
-      const fromB = rateB === 0 ? 0 : rateB * ofA * amountPowerSlope(amountB, orderB, blurredB);
-      out[1] = (reacting * volumeOrder * volumeRate) / volume + factor * (fromA + fromB);
+      const fromA = inside.rateA === 0 ? 0 : inside.rateA * amountPowerSlope(amountA, orderA, blurredA) * ofB;
+      const fromB = inside.rateB === 0 ? 0 : inside.rateB * ofA * amountPowerSlope(amountB, orderB, blurredB);
+      out[1] = (reacting * volumeOrder * inside.volumeRate) / volume + factor * (fromA + fromB);
       heat += heatPerExtent * out[1];
     }
-    out[0] = (heat - capacityRate * slope) / capacity;
+    out[0] = (heat - inside.heatCapacityRate * slope) / capacity;
   };
 
   return {
@@ -237,33 +226,15 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
       blurredA = scale * totalA;
       blurredB = scale * totalB;
       blurredProgress = scale;
-      const feeding = conditions.feeding && feed !== null;
-      const partFed = feed === null ? 0 : charge.fed / feed.mass;
-      const partRate = feeding ? 1 / feed.duration : 0;
       origin = time;
       mixing = mixed;
       coolant = conditions.coolantTemperature - reference;
       exchange = conditions.heatTransfer * vessel.ua * (flowing === null ? conditions.coolantFlow : 1);
       coolantExchange = conditions.coolantFlow * coolantCapacityRate;
       power = conditions.agitating ? vessel.agitatorPower : 0;
-      massRate = feeding ? feedMassRate(step) : 0;
-      mass0 = mixture.mass + charge.fed;
-      capacityRate = feed === null ? 0 : massRate * feed.heatCapacity;
-      capacity0 =
-        mixture.thermalInertia * mixture.mass * mixture.heatCapacity +
-        (feed === null ? 0 : charge.fed * feed.heatCapacity) +
-        charge.quenchCapacity;
-      volumeRate = feed === null ? 0 : massRate / feed.density;
-      volume0 =
-        mixture.mass / mixture.density +
-        (feed === null ? 0 : charge.fed / feed.density) +
-        charge.quenchVolume;
-      chargedA = feedsA ? totalA * partFed : totalA;
-      rateA = feedsA ? totalA * partRate : 0;
-      chargedB = feedsB ? totalB * partFed : totalB;
-      rateB = feedsB ? totalB * partRate : 0;
+      inside = inventoryOf(step, charge, conditions.feeding);
     },
-    heatCapacity: (time) => capacity0 + capacityRate * (time - origin),
+    heatCapacity: (time) => inside.heatCapacity + inside.heatCapacityRate * (time - origin),
     heatToRemove(time, state) {
       prepare(time, state);
       return input;

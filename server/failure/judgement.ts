@@ -6,7 +6,7 @@ import { type Search, timeToAct } from "./timeToAct.js";
 import type { Vessel } from "./vessel.js";
 
 /** holds: not lost by itself. act: saved by acting in time. lost: no delay is short enough. */
-export type Verdict = "holds" | "act" | "lost";
+type Verdict = "holds" | "act" | "lost";
 
 /** What is to be known of a failure at one moment. */
 export interface Judgement {
@@ -16,7 +16,7 @@ export interface Judgement {
 }
 
 /** For a figure or a draw: within a hundredth of the time itself. */
-export const quickSearch: Search = { scan: 6, width: 1, part: 0.002, relativeTolerance: 1e-5 };
+const quickSearch: Search = { scan: 6, width: 1, part: 0.002, relativeTolerance: 1e-5 };
 
 /** For what is reported: within half a second. */
 export const fullSearch: Search = { scan: 32, width: 0.5, part: 0, relativeTolerance: 1e-7 };

@@ -1,7 +1,7 @@
 import { zeroCelsius } from "../numeric/constants.js";
 
 /** A failure as a case document states it, text with units: something to begin with, to be edited. */
-export interface FailureText {
+interface FailureText {
   readonly name: string;
   readonly at: string;
   readonly startTemperature?: string;
