@@ -1,8 +1,18 @@
 import type { Figure } from "../charts/figure.js";
+import { figuresOf } from "../charts/figures.js";
 import { drawPdf, type PdfFonts, pdfHeight } from "../charts/pdf.js";
+import type { Findings } from "../screening/findings.js";
 import { facesOf } from "./fonts.js";
 import { lineHeight, wrap } from "./lines.js";
 import { type Cursor, childElement, paragraph, readable, styles, subheading } from "./page.js";
+import { drawable } from "./runs.js";
+
+/** The figures of some findings, with names as the sheet's fonts can draw them. */
+export function drawableFigures(findings: Findings): Figure[] {
+  const failures =
+    findings.failures?.map((failure) => ({ ...failure, name: drawable(failure.name) })) ?? null;
+  return figuresOf({ ...findings, failures });
+}
 
 /** Draws a figure in one piece with its title and its sentence. */
 export function drawFigure(cursor: Cursor, figure: Figure): void {

@@ -31,7 +31,7 @@ export function writeFront(
   writeTitle(cursor, block, findings);
   writeNotice(cursor, findings.notice);
   writeStop(cursor, findings);
-  if (picture !== null) drawPicture(cursor, picture, roomForPicture(cursor));
+  if (picture !== null) drawPicture(cursor, picture, roomForPicture(cursor, findings));
   for (const sentence of [windowSentence(findings), classSentence(findings), actSentence(findings)]) {
     const lines = clip(sentence, cursor.width, styles.strong, mostLines);
     paragraph(cursor, lines.join(" "), styles.strong, { after: 2 });
@@ -44,11 +44,13 @@ export function writeFront(
 /** So long may a sentence be before it takes the room of another. */
 const mostLines = 4;
 
-/** What the sentences, the facts and the first cautions need below the picture, pt. */
-const belowPicture = 245;
+/** What sentences, facts and the headings of the cautions need below the picture, and a line for a warning, pt. */
+const belowPicture = { words: 208, warning: 12.2, mostWarnings: 8 };
 
-function roomForPicture(cursor: Cursor): number {
-  return cursor.bottom - cursor.y - belowPicture;
+function roomForPicture(cursor: Cursor, findings: Findings): number {
+  const warnings = findings.cautions.filter((caution) => caution.level === "warn").length;
+  const lines = Math.min(warnings, belowPicture.mostWarnings);
+  return cursor.bottom - cursor.y - belowPicture.words - lines * belowPicture.warning;
 }
 
 function writeTitle(cursor: Cursor, block: TitleBlock, findings: Findings): void {

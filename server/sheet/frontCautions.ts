@@ -32,7 +32,7 @@ function writeWarnings(cursor: Cursor, warnings: readonly Caution[], bottom: num
   const texts = fits ? whole : whole.map((text) => shorten(text, width, styles.small));
   const room = Math.floor((bottom - cursor.y) / (lineHeight(styles.small) + after));
   // The last lines are kept for the codes of what has no line of its own.
-  const count = fits || texts.length <= room ? texts.length : Math.max(0, room - 3);
+  const count = fits || texts.length <= room ? texts.length : Math.max(0, room - 2);
   for (const text of texts.slice(0, count)) paragraph(cursor, text, styles.small, { indent, after });
   const rest = warnings.slice(count);
   if (rest.length === 0) return;

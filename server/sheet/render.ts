@@ -1,11 +1,10 @@
 import type { Figure } from "../charts/figure.js";
-import { figuresOf } from "../charts/figures.js";
 import { attachRecord, recordBytes } from "../records/attach.js";
 import type { Findings } from "../screening/findings.js";
 import type { CaseModel } from "../screening/model.js";
 import { writeCautions, writeSignatures } from "./closing.js";
 import { closeDocument, openDocument, type Paper } from "./document.js";
-import { drawFigure } from "./figures.js";
+import { drawableFigures, drawFigure } from "./figures.js";
 import { writeRunning } from "./foot.js";
 import { type TitleBlock, writeFront } from "./front.js";
 import { writeInputs } from "./inputs.js";
@@ -36,7 +35,7 @@ export async function renderSheet({ document, model, findings, paper }: SheetInp
     producer: program,
     keywords: `case ${findings.digest}`,
   });
-  const figures = figuresOf(findings);
+  const figures = drawableFigures(findings);
   const picture = pictureOf(figures);
   const cursor = startPages(pdf);
   writeFront(cursor, document, findings, picture);

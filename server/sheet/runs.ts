@@ -27,6 +27,13 @@ export function runsOf(line: string, weight: Weight): readonly Run[] {
   return mixedRuns(text, faces);
 }
 
+/** The same text with codes in place of what no font holds, for those who draw it by themselves. */
+export function drawable(text: string): string {
+  return runsOf(text, "regular")
+    .map((run) => run.text)
+    .join("");
+}
+
 function mixedRuns(line: string, faces: readonly Face[]): readonly Run[] {
   const runs: { face: string; text: string }[] = [];
   for (const cluster of clustersOf(line)) {

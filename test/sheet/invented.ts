@@ -181,7 +181,10 @@ const failure: FailureFindings = {
   timeToAct_s: 4748.07,
   margin_s: 3548.07,
   alarm_K: 318,
-  trace: [],
+  trace: [0, 1200, 2400, 3600, 4752, 6000].map((time_s) => {
+    const temperature_K = 308.15 + 43 * (time_s / 4752) ** 2;
+    return { time_s, temperature_K, jacket_K: temperature_K - 5 };
+  }),
 };
 
 const cautions: readonly Caution[] = [

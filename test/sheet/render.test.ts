@@ -177,6 +177,11 @@ test("anything that can be typed can be printed", async () => {
   const texts = await pageTexts(await renderSheet({ ...input, document: talkative }));
   expect(texts.length).toBeGreaterThan(20);
   expect(texts[0]).toContain("[U+202E]");
-  const { missing } = await missingGlyphs(await renderSheet({ ...input, document: strange }));
+  const failures = (inventedFindings.failures ?? []).map((failure) => ({
+    ...failure,
+    name: `泵停 \u202e ${failure.name}`,
+  }));
+  const findings = { ...inventedFindings, failures };
+  const { missing } = await missingGlyphs(await renderSheet({ ...input, document: strange, findings }));
   expect(missing).toBe(0);
 });
