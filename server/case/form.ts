@@ -4,6 +4,7 @@ import { insideOf, listOf, unusedGroup } from "./formBlocks.js";
 import { type FormContext, fieldOf, optional } from "./formFields.js";
 import type { FormBlock, FormGroup, FormSection } from "./formShape.js";
 import { unusedOf } from "./formUnused.js";
+import { type Before, formWorkings } from "./formWorkings.js";
 import { memberOf, outline, type Place } from "./outline.js";
 import { caseFormat } from "./schema.js";
 import { overallOrder } from "./typed.js";
@@ -11,6 +12,7 @@ import { overallOrder } from "./typed.js";
 export { documentFromForm } from "./formDocument.js";
 export { editForm } from "./formEdit.js";
 export * from "./formShape.js";
+export { type Before, beforeOf, isWorking, workField } from "./formWorkings.js";
 
 /** What the form starts from: nothing typed, the first choices made. */
 export function blankCase(): unknown {
@@ -26,11 +28,13 @@ export function blankCase(): unknown {
  * not, and each fault beside its field.
  *
  * @param document as typed so far
+ * @param before what fields held before they were worked out, to be given back
  */
-export function formOf(document: unknown, faults: readonly Fault[] = []): FormSection[] {
+export function formOf(document: unknown, faults: readonly Fault[] = [], before: Before = {}): FormSection[] {
   const context: FormContext = {
     faults: faultBook(faults),
     order: overallOrder(document),
+    workings: formWorkings(document, before),
   };
   const unused = unusedOf(document);
   const unusedIn = (section: string) =>

@@ -62,6 +62,7 @@ function groupOf(
     blocks,
     faults: context.faults.takeBelow(pointer),
     ...optional("button", button),
+    ...optional("working", isThere ? context.workings.get(pointer) : undefined),
   };
 }
 

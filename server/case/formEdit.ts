@@ -43,7 +43,7 @@ function placeAt(document: unknown, path: readonly string[]): Place | undefined 
 }
 
 /** The document with another value at the end of a path. */
-function replaced(document: unknown, [key, ...rest]: readonly string[], value: unknown): unknown {
+export function replaced(document: unknown, [key, ...rest]: readonly string[], value: unknown): unknown {
   if (key === undefined) return value;
   const below = replaced(memberOf(document, key), rest, value);
   if (Array.isArray(document)) return document.map((entry, i) => (String(i) === key ? below : entry));
@@ -51,7 +51,7 @@ function replaced(document: unknown, [key, ...rest]: readonly string[], value: u
 }
 
 /** The document without what stands at the end of a path. */
-function without(document: unknown, [key, ...rest]: readonly string[]): unknown {
+export function without(document: unknown, [key, ...rest]: readonly string[]): unknown {
   if (key === undefined || memberOf(document, key) === undefined) return document;
   if (rest.length > 0) return replaced(document, [key], without(memberOf(document, key), rest));
   if (Array.isArray(document)) return document.filter((_, i) => String(i) !== key);

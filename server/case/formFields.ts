@@ -1,7 +1,7 @@
 import { rateConstantDimension } from "./dimensions.js";
 import type { FaultBook } from "./faultBook.js";
 import { pointerOf } from "./faults.js";
-import type { FormChoice, FormControl, FormField } from "./formShape.js";
+import type { FormChoice, FormControl, FormField, FormWorking } from "./formShape.js";
 import type { Leaf } from "./leaves.js";
 import { memberOf, type Place } from "./outline.js";
 import { bases, isGroup } from "./typedParts.js";
@@ -11,6 +11,8 @@ export interface FormContext {
   readonly faults: FaultBook;
   /** overall order of the reaction, where it can be read */
   readonly order: number | null;
+  /** workings by the pointer of the group that holds what they are given */
+  readonly workings: ReadonlyMap<string, FormWorking>;
 }
 
 /** The field of a leaf. */

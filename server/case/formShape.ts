@@ -48,6 +48,21 @@ export interface FormButton {
   readonly label: string;
 }
 
+/** The working of a field, below what it is given. */
+export interface FormWorking {
+  /** JSON pointer of the field that it fills */
+  readonly field: string;
+  readonly title: string;
+  /** what was worked out on the way, and the result last; empty until everything needed is there */
+  readonly rows: readonly { readonly label: string; readonly equation: string; readonly text: string }[];
+  /** whether the field follows, and how plausible the result is */
+  readonly notes: readonly string[];
+  /** fills the field */
+  readonly button: FormButton;
+  /** gives the field back what it held before it was filled; kept in a hidden control */
+  readonly undo?: { readonly button: FormButton; readonly name: string; readonly value: string };
+}
+
 /** Fields that belong together. */
 export interface FormGroup {
   readonly type: "group";
@@ -59,6 +74,8 @@ export interface FormGroup {
   readonly faults: readonly string[];
   /** adds the group, or removes it */
   readonly button?: FormButton;
+  /** what the fields are given for */
+  readonly working?: FormWorking;
 }
 
 /** Entries of one kind, as rows of a table or one group below the other. */
@@ -95,11 +112,24 @@ export function fieldsOf(blocks: readonly (FormBlock | FormSection)[]): FormFiel
   });
 }
 
+/** Every working of a form, in order. */
+export function workingsShown(blocks: readonly (FormBlock | FormSection)[]): FormWorking[] {
+  return blocks.flatMap((block): FormWorking[] => {
+    if (!("blocks" in block)) return block.type === "list" ? workingsShown(block.entries) : [];
+    const own = "working" in block && block.working !== undefined ? [block.working] : [];
+    return [...own, ...workingsShown(block.blocks)];
+  });
+}
+
 /** Name and value of every control of a form, as a browser would send them. */
 export function formValues(sections: readonly FormSection[]): [string, string][] {
-  return fieldsOf(sections).flatMap((field): [string, string][] => {
+  const kept = workingsShown(sections).flatMap(({ undo }): [string, string][] =>
+    undo === undefined ? [] : [[undo.name, undo.value]],
+  );
+  const fields = fieldsOf(sections).flatMap((field): [string, string][] => {
     const details =
       field.detail === undefined ? [] : [field.detail.standardError, field.detail.basis, field.detail.source];
     return [[field.name, field.value], ...details.map(({ name, value }): [string, string] => [name, value])];
   });
+  return [...fields, ...kept];
 }

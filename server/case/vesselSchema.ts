@@ -19,7 +19,7 @@ const area = variants(
   {
     title: "Working of the heat transfer area",
     of: "of the vessel",
-    adding: "Work the area out",
+    adding: "Work it out from the vessel's dimensions",
     choosing: "Bottom",
   },
   "bottom",
@@ -58,7 +58,7 @@ const coefficient = group(
   {
     title: "Working of the heat transfer coefficient, resistances in series",
     of: "of the wall",
-    adding: "Work the coefficient out",
+    adding: "Work it out from films, wall and fouling",
   },
   {
     insideFilm: quantity("heatTransferCoefficient", "Film coefficient inside"),
@@ -96,7 +96,7 @@ const boiling = variants(
   {
     title: "Working of the maximum technical temperature, as a boiling point",
     of: "of the boiling point",
-    adding: "Work a boiling point out",
+    adding: "Work it out as a boiling point",
     choosing: "Method",
   },
   "method",

@@ -31,6 +31,8 @@ const about = {
   group,
   title: "Heat transfer area from the vessel's dimensions",
   unit: "m^2",
+  basis: "estimated",
+  source: "worked out from the vessel's dimensions",
   typical: null,
   reference:
     "Exact geometry of the inside; DIN 28011 and DIN 28013 give both radii as parts of the outer diameter. Level at rest, without vortex, internals or the flat disc of a flat bottom",

@@ -38,6 +38,11 @@ const references: Readonly<Record<BoilingInputs["method"], string>> = {
   antoine: `Antoine 1888, C. R. Acad. Sci. 107:681. ${pureLiquid}`,
 };
 
+const sources: Readonly<Record<BoilingInputs["method"], string>> = {
+  "clausius-clapeyron": "worked out from the normal boiling point",
+  antoine: "worked out from Antoine constants",
+};
+
 /** Beyond this factor from 1 atm a constant heat of vaporisation is no longer good to a kelvin; common practice. */
 const farFromAtmosphere = 10;
 
@@ -48,7 +53,13 @@ const farFromAtmosphere = 10;
  * @param field the limit that the case holds, K; null where it holds none that can be read
  */
 export function boilingWorking(inputs: BoilingInputs, field: number | null): Working {
-  const stated = { ...about, given: givenOf(inputs), reference: references[inputs.method] };
+  const stated = {
+    ...about,
+    given: givenOf(inputs),
+    basis: `boiling point at ${barText(inputs.pressure)}`,
+    source: sources[inputs.method],
+    reference: references[inputs.method],
+  };
   const result = boilingPointOf(inputs);
   if (!Number.isFinite(result)) {
     return refusedWorking(stated, [

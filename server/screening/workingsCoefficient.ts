@@ -23,6 +23,8 @@ const about = {
   group: "/vessel/heatTransferCoefficientFrom",
   title: "Heat transfer coefficient from resistances in series",
   unit,
+  basis: "estimated",
+  source: "worked out from resistances in series",
   reference:
     "1/U = Σ R, all on one area (common practice). Typical range: Perry's Chemical Engineers' Handbook, Table 11-7, a mark of what is plausible only",
 } as const;

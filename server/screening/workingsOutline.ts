@@ -37,6 +37,9 @@ export interface Working {
   readonly unit: string;
   /** as one would type it into the field, rounded to the careful side: down */
   readonly resultText: string | null;
+  /** how the field is known once it holds the result */
+  readonly basis: string;
+  readonly source: string;
   /** the field agrees with the result within rounding */
   readonly follows: boolean;
   /** the handbook's typical range of the result, SI; a mark of what is plausible, no more */
@@ -91,7 +94,10 @@ export function roundedDown(value: number, significant = 3): string {
 
 /** A working that cannot be done. */
 export function refusedWorking(
-  about: Pick<Working, "field" | "group" | "title" | "given" | "unit" | "typical" | "reference">,
+  about: Pick<
+    Working,
+    "field" | "group" | "title" | "given" | "unit" | "basis" | "source" | "typical" | "reference"
+  >,
   faults: readonly WorkingFault[],
 ): Working {
   return { ...about, steps: [], result: null, resultText: null, follows: false, faults, cautions: [] };

@@ -30,6 +30,8 @@ export interface CaseToShow {
   readonly full?: boolean;
   /** what was typed differs from what `origin` holds */
   readonly changed?: boolean;
+  /** of the sheet, as chosen in the form */
+  readonly paper?: unknown;
   /** the newer copy that stood in the way of a save */
   readonly conflict?: SavedCase;
 }
@@ -64,6 +66,7 @@ export async function renderCase(services: Services, response: Response, shown: 
       action: saved === null ? "/cases/new" : `/cases/${saved.id}`,
       revision: shown.conflict?.revision ?? saved?.revision ?? null,
       sections,
+      paper: shown.paper,
       outcome: { live: false, faults: listFaults(faults, places), findings: screened.findings },
       conflict: shown.conflict === undefined ? null : conflictOf(document, shown.conflict),
     },

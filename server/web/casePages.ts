@@ -99,6 +99,7 @@ export function casePages(services: Services): Router {
       before,
       changed: isChanged(document, origin),
       full: true,
+      paper: body.paper,
     });
   }
 
