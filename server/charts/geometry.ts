@@ -44,8 +44,13 @@ export function clipSegment([x0, y0]: Point, [x1, y1]: Point, box: Box): readonl
     else leave = Math.min(leave, room / step);
   }
   if (enter > leave) return null;
-  const at = (part: number): Point => [x0 + part * dx, y0 + part * dy];
-  return [enter === 0 ? [x0, y0] : at(enter), leave === 1 ? [x1, y1] : at(leave)];
+  // ends are held to the box: far outside, the product loses all its digits
+  const held = (x: number, y: number): Point => [
+    Math.min(box.right, Math.max(box.left, x)),
+    Math.min(box.bottom, Math.max(box.top, y)),
+  ];
+  const at = (part: number) => held(x0 + part * dx, y0 + part * dy);
+  return [at(enter), leave === 1 ? held(x1, y1) : at(leave)];
 }
 
 /** A polyline cut to a box: as many pieces as it takes. A null or a number that is not finite interrupts it. */

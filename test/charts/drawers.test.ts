@@ -154,7 +154,7 @@ test("drawing on a sheet gives the height it said and leaves the document where 
 
 test("page and sheet agree on colours, dashes, weights and sizes", () => {
   const css = readFileSync(new URL("../../public/figures.css", import.meta.url), "utf8");
-  const light = css.slice(0, css.indexOf("@media"));
+  const light = css.slice(0, css.indexOf("@container"));
   const dark = css.slice(css.indexOf("prefers-color-scheme: dark"));
   for (const [tone, colour] of Object.entries(paperTones)) {
     expect(light).toContain(`--${tone}: ${colour};`);
