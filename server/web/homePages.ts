@@ -2,6 +2,7 @@ import { type Response, Router, raw } from "express";
 import { readCaseText } from "../case/read.js";
 import { renderCase } from "./casePage.js";
 import { refuse, tooLarge } from "./problems.js";
+import { type Sample, sampleOf } from "./sample.js";
 import type { Services } from "./services.js";
 import { timeText } from "./timeText.js";
 import { readUpload } from "./upload.js";
@@ -9,11 +10,14 @@ import { readUpload } from "./upload.js";
 /** The first page: what this is, cases to start from, cases that were saved, a file to open. */
 export function homePages(services: Services): Router {
   const router = Router();
+  let sample: Promise<Sample | null> | null = null;
 
   async function renderHome(response: Response, opening: { pasted?: string; fault?: string } = {}) {
     const entries = (await services.cases.list()).map((each) => ({ ...each, saved: timeText(each.savedAt) }));
+    sample ??= sampleOf(services.demos, services.screener);
     response.render("home", {
       page: {
+        sample: await sample,
         title: "Cases",
         demos: services.demos,
         cases: entries.filter((each) => !each.archived),
