@@ -10,6 +10,7 @@ import { program } from "../words/program.js";
 import { byLevel, caution } from "./cautions/catalogue.js";
 import { inputCautions } from "./cautions/inputs.js";
 import { kineticsCautions } from "./cautions/kinetics.js";
+import { cautiousSideCautions, errorCautions } from "./cautions/uncertainty.js";
 import { verdictCautions } from "./cautions/verdicts.js";
 import { drawnFindings, windowWithDraws } from "./drawn.js";
 import { failureFindings } from "./failureFindings.js";
@@ -82,11 +83,13 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
       noAcceleration: !accelerates(study, mtsr),
       historyRatio: historyRatio(study),
     }),
+    ...cautiousSideCautions(window, drawn?.uncertainty ?? null, process),
     ...usedRates(model, known, step, temperatures).flatMap((used) => kineticsCautions(used, process)),
     ...measuredCautions(model, step, dosing),
     ...(failed?.cautions ?? []),
     ...workings.flatMap((working) => working.cautions),
     ...inputCautions(model),
+    ...errorCautions(model, known),
     ...notBuilt(options.depth, model),
   ];
   return {
