@@ -1,7 +1,9 @@
 import { readFile } from "node:fs/promises";
 import type { Page } from "playwright-core";
 import { describe, expect, test } from "vitest";
+import { formOf, formValues } from "../../server/case/form.js";
 import { pageTexts } from "../sheet/readPdf.js";
+import { demoDocument } from "../web/testApp.js";
 import type { Visit } from "./visit.js";
 
 async function mtsr(page: Page): Promise<string> {
@@ -137,6 +139,27 @@ export function editing(visit: Visit): void {
       await page.locator('[name="/failures/1/name"]').waitFor({ state: "detached" });
       await page.context().close();
     });
+  });
+
+  test.each([true, false])("a case is typed into the blank form (script: %s)", async (javaScriptEnabled) => {
+    const page = await visit("/cases/new", { javaScriptEnabled });
+    await page.getByRole("button", { name: /^Add.*Failure/ }).click();
+    await page.locator('[name="/failures/0/name"]').waitFor();
+    const demo = formValues(formOf(demoDocument("hydrolysis")));
+    for (const [name, value] of demo.filter(([, text]) => text !== "")) {
+      const control = page.locator(`[name="${name}"], [name="${name.replace(/\/value$/, "")}"]`).first();
+      if ((await control.evaluate((each) => each.tagName)) === "SELECT") await control.selectOption(value);
+      else
+        await control.evaluate((each, text) => {
+          (each as HTMLInputElement).value = text;
+        }, value);
+    }
+    await page.getByRole("button", { name: "Screen" }).click();
+    await page.locator(".verdict").waitFor();
+    const there = await visit("/demos/hydrolysis", { javaScriptEnabled });
+    expect(await mtsr(page)).toBe(await mtsr(there));
+    await there.context().close();
+    await page.context().close();
   });
 
   test("the sheet is downloaded and holds the MTSR of the page", async () => {

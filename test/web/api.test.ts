@@ -36,6 +36,7 @@ describe("POST /api/screen", () => {
       expect.soft(answer.type).toBe("application/problem+json");
       expect.soft(answer.body).toMatchObject({ type: "about:blank", status: 422 });
       expect.soft(answer.body.faults.length).toBeGreaterThan(0);
+      expect.soft(answer.text, broken.name).not.toMatch(/\bNaN\b|\bundefined\b/);
       for (const fault of answer.body.faults) {
         expect.soft(fault.pointer).toMatch(/^(\/.*)?$/s);
         expect.soft(fault.message).not.toBe("");
