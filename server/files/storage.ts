@@ -11,6 +11,8 @@ import { dirname, join } from "node:path";
 export interface Storage {
   /** @returns null where there is no such file */
   read(path: string): Promise<string | null>;
+  /** The same for a file that is not text. */
+  readBytes(path: string): Promise<Buffer | null>;
   /** Names in a folder, sorted; none where the folder does not exist. Unfinished files are not listed. */
   list(folder: string): Promise<readonly string[]>;
   /** Writes a file, replacing the one of that name. */
@@ -21,6 +23,12 @@ export interface Storage {
    * @returns false where the name is taken; the file that has it is untouched
    */
   create(path: string, content: string | Uint8Array): Promise<boolean>;
+  /**
+   * Gives a file another name, in another folder or the same.
+   *
+   * @returns false where there is no such file
+   */
+  move(from: string, to: string): Promise<boolean>;
   /** Removes a file; one that is already gone is no error. */
   remove(path: string): Promise<void>;
   /** Removes what a killed process left unfinished in a folder, once it is an hour old. */
@@ -35,6 +43,10 @@ export function folderStorage(root: string): Storage {
   return {
     async read(path) {
       return unlessMissing(readFile(join(root, path), "utf8"), null);
+    },
+
+    async readBytes(path) {
+      return unlessMissing(readFile(join(root, path)), null);
     },
 
     async list(folder) {
@@ -59,6 +71,16 @@ export function folderStorage(root: string): Storage {
       return created;
     },
 
+    async move(from, to) {
+      const [source, target] = [join(root, from), join(root, to)];
+      await makeFolder(dirname(target));
+      const moved = rename(source, target).then(() => true);
+      if (!(await unlessMissing(moved, false))) return false;
+      await syncFolder(dirname(target));
+      await syncFolder(dirname(source));
+      return true;
+    },
+
     async remove(path) {
       const target = join(root, path);
       await unlessMissing(unlink(target), undefined);
@@ -80,7 +102,7 @@ export function folderStorage(root: string): Storage {
 
 /** Content on the disk for good, under a temporary name in the folder it is meant for. */
 async function writePart(folder: string, content: string | Uint8Array): Promise<string> {
-  await mkdir(folder, { recursive: true });
+  await makeFolder(folder);
   const part = join(folder, `.${randomBytes(8).toString("hex")}.part`);
   await settling(part, async () => {
     const file = await open(part, "wx");
@@ -102,6 +124,13 @@ async function settling<T>(part: string, step: () => Promise<T>): Promise<T> {
     await unlink(part).catch(() => undefined);
     throw error;
   }
+}
+
+/** Makes a folder where it is missing, on the disk for good: its name stands in the folder above it. */
+async function makeFolder(folder: string): Promise<void> {
+  const first = await mkdir(folder, { recursive: true });
+  if (first === undefined) return;
+  for (let made = folder; made.length >= first.length; made = dirname(made)) await syncFolder(dirname(made));
 }
 
 async function syncFolder(folder: string): Promise<void> {
