@@ -25,8 +25,14 @@ function lineOf(
   };
 }
 
-function fractionMarks(accumulation: AccumulationFindings, per: number): Mark[] {
-  const { curve, measured, maximumFraction, at_s } = accumulation;
+/** The measured run where it stands beside the kinetics; alone it is itself the course that is drawn. */
+function besideKinetics({ rate, accumulation }: Findings): AccumulationFindings["measured"] {
+  return rate === null ? null : (accumulation?.measured ?? null);
+}
+
+function fractionMarks(accumulation: AccumulationFindings, findings: Findings, per: number): Mark[] {
+  const { curve, maximumFraction, at_s } = accumulation;
+  const measured = besideKinetics(findings);
   const percent = (read: (point: CurvePoint) => number) => (point: CurvePoint) => 100 * read(point);
   return [
     lineOf(
@@ -80,14 +86,20 @@ function fractionMarks(accumulation: AccumulationFindings, per: number): Mark[] 
   ];
 }
 
-function mtsrMarks(accumulation: AccumulationFindings, { temperatures }: Findings, per: number): Mark[] {
-  const { curve, measured } = accumulation;
-  const read = (point: CurvePoint) => celsius(point.mtsr_K);
-  const peak = curve.reduce<CurvePoint | null>(
-    (highest, point) => (highest === null || point.mtsr_K > highest.mtsr_K ? point : highest),
+function highest(curve: readonly CurvePoint[]): CurvePoint | null {
+  return curve.reduce<CurvePoint | null>(
+    (most, point) => (most === null || point.mtsr_K > most.mtsr_K ? point : most),
     null,
   );
-  const mtsr = measured !== null && accumulation.usedFor === "measured" ? null : temperatures.mtsr_K;
+}
+
+function mtsrMarks(accumulation: AccumulationFindings, findings: Findings, per: number): Mark[] {
+  const { curve, usedFor } = accumulation;
+  const { temperatures } = findings;
+  const measured = besideKinetics(findings);
+  const read = (point: CurvePoint) => celsius(point.mtsr_K);
+  const peak = highest(measured !== null && usedFor === "measured" ? measured.curve : curve);
+  const mtsr = temperatures.mtsr_K ?? peak?.mtsr_K ?? null;
   return [
     {
       type: "rule",
@@ -111,23 +123,25 @@ function mtsrMarks(accumulation: AccumulationFindings, { temperatures }: Finding
       ? []
       : [lineOf(measured.curve, per, read, "by the measured run", "removal", "dotted", "strong")]),
     lineOf(curve, per, read, "if cooling fails now", "reaction", "solid", "strong"),
-    ...(peak === null
+    ...(peak === null || mtsr === null
       ? []
       : [
           {
             type: "note",
-            x: (mtsr === null ? peak.time_s : accumulation.at_s) / per,
-            y: celsius(mtsr ?? peak.mtsr_K),
+            x: peak.time_s / per,
+            y: celsius(mtsr),
             tone: "reaction",
             shape: "circle",
-            text: `${mtsr === null ? "at most" : "MTSR"} ${temperatureText(mtsr ?? peak.mtsr_K, "up")}`,
+            text: `MTSR ${temperatureText(mtsr, "up")}`,
           } as const,
         ]),
   ];
 }
 
-function sentenceOf(accumulation: AccumulationFindings, { temperatures }: Findings): string {
-  const { maximumFraction, at_s, measured, usedFor } = accumulation;
+function sentenceOf(accumulation: AccumulationFindings, findings: Findings): string {
+  const { maximumFraction, at_s, usedFor } = accumulation;
+  const { temperatures } = findings;
+  const measured = besideKinetics(findings);
   const parts = [
     `At most ${percentText(maximumFraction, "up")} of the limiting reactant lies unreacted in the vessel, ${durationText(at_s, "nearest")} after the start of the feed.`,
   ];
@@ -137,6 +151,7 @@ function sentenceOf(accumulation: AccumulationFindings, { temperatures }: Findin
     parts.push(
       `The measured run gives at most ${percentText(measured.maximumFraction, "up")} and MTSR ${temperatureText(measured.mtsr_K, "up")}; the ${usedFor === "measured" ? "measured run" : "kinetics"} gives the MTSR that is used.`,
     );
+  if (findings.rate === null) parts.push("That is by the measured run alone: there are no kinetics.");
   if (temperatures.allAtOnce_K !== null)
     parts.push(
       `With everything charged at once it would be ${temperatureText(temperatures.allAtOnce_K, "up")}: MTSR relies on the feed stopping.`,
@@ -153,7 +168,8 @@ function sentenceOf(accumulation: AccumulationFindings, { temperatures }: Findin
 export function dosing(findings: Findings): Figure | null {
   const { accumulation, temperatures } = findings;
   if (accumulation === null || accumulation.curve.length < 2) return null;
-  const { curve, measured } = accumulation;
+  const { curve } = accumulation;
+  const measured = besideKinetics(findings);
   const all = [...curve, ...(measured?.curve ?? [])];
   const last = Math.max(...all.map((point) => point.time_s));
   const unit = timeUnit(last);
@@ -177,7 +193,7 @@ export function dosing(findings: Findings): Figure | null {
           domain: [0, 1.06 * highest],
           label: "Share, %",
         },
-        marks: fractionMarks(accumulation, unit.seconds),
+        marks: fractionMarks(accumulation, findings, unit.seconds),
       },
       {
         type: "plot",

@@ -262,6 +262,18 @@ describe("dosing, heat and the feed lever", () => {
     expect(dosing.sentence).toContain("the measured run gives the MTSR that is used");
   });
 
+  test("a measured run without kinetics is drawn once and says that it stands alone", () => {
+    const accumulation = inventedWhole.accumulation as NonNullable<Findings["accumulation"]>;
+    const curve = accumulation.measured?.curve ?? [];
+    const alone = figure(
+      { ...inventedWhole, rate: null, accumulation: { ...accumulation, curve } },
+      "dosing",
+    );
+    const names = plot(alone).marks.flatMap((mark) => ("name" in mark ? [mark.name] : []));
+    expect(names).toEqual(["fed", "reacted", "accumulated"]);
+    expect(alone.sentence).toContain("by the measured run alone");
+  });
+
   test("heat names its crossings, and the tangent has the slope of the cooling line", () => {
     const heat = plot(figure(inventedWhole, "heat"));
     const notes = heat.marks.flatMap((mark) => (mark.type === "note" ? [mark.text] : []));
