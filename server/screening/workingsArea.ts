@@ -115,8 +115,8 @@ function bottomSteps(inputs: AreaInputs, bottom: Bottom, radii: Radii): WorkingS
   const volume = bottom.volumeBelow(bottom.height);
   if (radii === null) {
     return [
-      stepOf("Height of the bottom", "h = D/4", bottom.height, "m"),
-      stepOf("Volume of the bottom", "Vb = π D³/24", volume, "m^3"),
+      stepOf("Height of the bottom h", "D/4", bottom.height, "m"),
+      stepOf("Volume of the bottom Vb", "π D³/24", volume, "m^3"),
     ];
   }
   const form = "wallThickness" in inputs ? dinForms[inputs.bottom] : null;
@@ -124,11 +124,11 @@ function bottomSteps(inputs: AreaInputs, bottom: Bottom, radii: Radii): WorkingS
     ...(form === null
       ? []
       : [
-          stepOf("Dish radius", `R = ${form.dish} (D + 2 s)`, radii.dish, "m"),
-          stepOf("Knuckle radius", `r = ${form.knuckle} (D + 2 s)`, radii.knuckle, "m"),
+          stepOf("Dish radius R", form.dish === 1 ? "D + 2 s" : `${form.dish} (D + 2 s)`, radii.dish, "m"),
+          stepOf("Knuckle radius r", `${form.knuckle} (D + 2 s)`, radii.knuckle, "m"),
         ]),
-    stepOf("Height of the bottom", "h = R − √((R − r)² − (D/2 − r)²)", bottom.height, "m"),
-    stepOf("Volume of the bottom", "Vb: spherical cap and part of a torus", volume, "m^3"),
+    stepOf("Height of the bottom h", "R − √((R − r)² − (D/2 − r)²)", bottom.height, "m"),
+    stepOf("Volume of the bottom Vb", "spherical cap + part of a torus", volume, "m^3"),
   ];
 }
 
@@ -138,17 +138,26 @@ function wallSteps(inputs: AreaInputs, bottom: Bottom, level: number): WorkingSt
   const inShell = fillVolume >= bottom.volumeBelow(height);
   const levelBy = inShell
     ? bottom.height === 0
-      ? "z = V/(π D²/4)"
-      : "z = h + (V − Vb)/(π D²/4)"
-    : "z: the bottom holds V below it";
+      ? "V/(π D²/4)"
+      : "h + (V − Vb)/(π D²/4)"
+    : "height below which the bottom holds V";
   const upper = Math.min(level, jacketUpper);
   const split = Math.min(Math.max(height, jacketLower), upper);
   const ofBottom = wallBelow(bottom, split) - wallBelow(bottom, Math.min(jacketLower, split));
   const ofShell = Math.PI * diameter * (upper - split);
   return [
     stepOf("Level of the contents", levelBy, level, "m"),
-    stepOf("Wetted jacket ends at", "lower of level and upper edge", upper, "m"),
-    ...(ofBottom > 0 ? [stepOf("Wall of the bottom", "between both ends, exact", ofBottom, "m^2")] : []),
+    stepOf("Wetted jacket ends at", "the lower of level and upper edge", upper, "m"),
+    ...(ofBottom > 0
+      ? [
+          stepOf(
+            "Wall of the bottom",
+            "between the jacket's lower edge and the shell or the level",
+            ofBottom,
+            "m^2",
+          ),
+        ]
+      : []),
     ...(ofShell > 0
       ? [stepOf("Wall of the shell", `π D × ${valueText(upper - split, "m")}`, ofShell, "m^2")]
       : []),

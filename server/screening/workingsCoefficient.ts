@@ -122,8 +122,8 @@ function stepsOf(resistances: Resistances, result: number) {
       .filter((name) => resistances[name] > 0)
       .map((name) => {
         const [label, equation] = layers[name];
-        const share = percentText(resistances[name] / sum);
-        return stepOf(label, `${equation}, ${share} of the whole`, resistances[name], "m^2 K/W");
+        const step = stepOf(label, equation, resistances[name], "m^2 K/W");
+        return { ...step, text: `${step.text} (${percentText(resistances[name] / sum)})` };
       }),
     stepOf("All resistances", "1/U = Σ R", sum, "m^2 K/W"),
   ];

@@ -1,4 +1,4 @@
-import type { Working } from "../screening/workingsOutline.js";
+import { printedUnit, type Working } from "../screening/workingsOutline.js";
 import { lineHeight } from "./lines.js";
 import { type Cursor, ensure, paragraph, styles, subheading, within } from "./page.js";
 
@@ -29,6 +29,11 @@ function writeWorking(cursor: Cursor, working: Working): void {
         ? "the input agrees with it"
         : "the input does NOT agree with it, and the input counts";
       paragraph(cursor, `Result: ${working.resultText}; ${agreement}`, styles.body, { indent, after: 0 });
+    }
+    if (working.typical !== null) {
+      const [low, high] = working.typical;
+      const text = `Typical in the handbook: ${low} to ${high} ${printedUnit(working.unit)}`;
+      paragraph(cursor, text, styles.body, { indent, after: 0 });
     }
     paragraph(cursor, working.reference, styles.label, { indent, after: 6 });
   });

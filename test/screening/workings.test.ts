@@ -113,6 +113,33 @@ describe("every working", () => {
   });
 });
 
+describe("the area by hand", () => {
+  const flat = { bottom: "flat", innerDiameter: "1 m", jacketUpper: "2 m" };
+  const stepsOf = (given: object) => workingOf(withGroup("area", given));
+
+  test("0.5 m^3 in 1 m over a flat bottom stand 0.6366 m high; 0.5366 m of jacket are 1.686 m^2", () => {
+    const working = stepsOf({ ...flat, fillVolume: "500 L", jacketLower: "10 cm" });
+    expect(working.result).toBeCloseTo(Math.PI * (2 / Math.PI - 0.1), 12);
+    expect(working.resultText).toBe("1.68 m^2");
+    expect(working.steps.map(({ text }) => text)).toEqual(["0.6366 m", "0.6366 m", "1.686 m²"]);
+  });
+
+  test.each(["30 L", "0.2 m^3", "1 m^3", "3 m^3"])(
+    "%s: the walls of bottom and shell add up to the result, wherever the jacket begins",
+    (fillVolume) => {
+      for (const jacketLower of ["0 m", "5 cm", "0.3 m"]) {
+        const { vesselVolume: _volume, ...open } = area;
+        const document = withGroup("area", { ...open, fillVolume, jacketLower });
+        if (!readCase(document).ok) continue;
+        const { steps, result } = workingOf(document);
+        const walls = steps.filter(({ label }) => label.startsWith("Wall of")).map(({ value }) => value ?? 0);
+        expect(walls.length).toBeGreaterThan(0);
+        expect(walls.reduce((sum, wall) => sum + wall, 0)).toBeCloseTo(result ?? Number.NaN, 12);
+      }
+    },
+  );
+});
+
 describe("INPUT_MOVED", () => {
   test("is raised where an input of the working changed after the field was filled", () => {
     const text = workingOf(withGroup("area", area)).resultText;
