@@ -14,7 +14,7 @@ export interface Figure {
   readonly table: Table;
 }
 
-export interface Table {
+interface Table {
   readonly columns: readonly string[];
   readonly rows: readonly (readonly string[])[];
 }
@@ -56,7 +56,7 @@ export interface Axis {
   readonly ticks?: readonly Tick[];
 }
 
-export interface SecondAxis {
+interface SecondAxis {
   readonly label: string;
   /** `value` is on the scale of the axis it stands beside */
   readonly ticks: readonly Tick[];
@@ -133,7 +133,7 @@ export interface Area {
 }
 
 /** A mark at one place with words beside it. */
-export interface Note {
+interface Note {
   readonly type: "note";
   readonly x: number;
   readonly y: number;

@@ -29,7 +29,7 @@ export function reciprocalAxis(rate: RateFindings): Axis {
 }
 
 /** Round temperatures, degC, at their places on a reciprocal axis. */
-export function celsiusTicks(axis: Axis): Tick[] {
+function celsiusTicks(axis: Axis): Tick[] {
   const [low, high] = axis.domain;
   const [coldest, hottest] = [celsius(1000 / high), celsius(1000 / low)];
   const step = [2, 5, 10, 20, 50, 100].find((each) => (hottest - coldest) / each <= 9) ?? 200;

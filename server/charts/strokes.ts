@@ -44,7 +44,7 @@ export function rectangle(box: Box, tone: Tone, fill: Paint, outlined = false): 
 }
 
 /** Strokes at 45 degrees that fill a box, as one path: the same in every drawing, whatever knows patterns. */
-export function hatching(box: Box, tone: Tone): Path {
+function hatching(box: Box, tone: Tone): Path {
   const spacing = 7;
   const height = box.bottom - box.top;
   let d = "";

@@ -11,7 +11,7 @@ const entities: Readonly<Record<string, string>> = {
 };
 
 /** Text as it may stand in XML: marked-up characters as entities, those that XML forbids replaced. */
-export function escaped(text: string): string {
+function escaped(text: string): string {
   return text
     .replace(/[^\t\n\r\u0020-\uD7FF\uE000-\uFFFD\u{10000}-\u{10FFFF}]/gu, "\uFFFD")
     .replace(/[&<>"']/g, (character) => entities[character] ?? character);
