@@ -79,7 +79,7 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
     ...verdictCautions(judged, {
       coolant_K: step.vessel.coolantTemperature,
       decompositionKnown: runaway !== null,
-      rateKnown: step.reaction.rate !== null,
+      dosingFailed: rate !== null && dosing === null,
       noAcceleration: !accelerates(study, mtsr),
       historyRatio: historyRatio(study),
     }),

@@ -14,7 +14,8 @@ export type Judged = Pick<
 export interface JudgedWith {
   readonly coolant_K: number;
   readonly decompositionKnown: boolean;
-  readonly rateKnown: boolean;
+  /** a rate constant is there, but the isothermal balance could not be integrated */
+  readonly dosingFailed: boolean;
   /** the decomposition's rate falls from the start, at the process temperature or at MTSR */
   readonly noAcceleration: boolean;
   /** TMRad from the process temperature with the hold's history over the fresh one; null without one */
@@ -85,6 +86,15 @@ function limitCautions({ temperatures, criticality }: Judged, extra: JudgedWith)
 }
 
 function coolingCautions({ cooling, temperatures }: Judged, extra: JudgedWith): Caution[] {
+  if (extra.dosingFailed) {
+    return [
+      caution(
+        "NOT_COMPUTED",
+        "/reaction",
+        "The balance of the dosing could not be integrated with these kinetics: accumulation, MTSR, cooling and window are not given. Check orders, amounts and the rate constant.",
+      ),
+    ];
+  }
   if (cooling === null) return [];
   const cautions: Caution[] = [];
   if (extra.coolant_K > temperatures.process_K) {
