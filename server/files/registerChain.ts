@@ -1,0 +1,151 @@
+import {
+  digestOfFile,
+  noEntry,
+  places,
+  type ReadEntry,
+  type RegisterEntry,
+  readEntry,
+  type SheetEntry,
+} from "./registerEntry.js";
+import { entryNumbers } from "./registerStart.js";
+import type { Storage } from "./storage.js";
+
+/** Whether the register still hangs together. */
+export interface ChainCheck {
+  /** number of the last entry that was looked at; 0: there is none */
+  readonly upTo: number;
+  /** what is wrong, one plain sentence each; none: the chain is whole */
+  readonly faults: readonly string[];
+}
+
+interface Found {
+  readonly number: number;
+  readonly digest: string;
+  readonly read: ReadEntry;
+}
+
+/** Files read at once. */
+const together = 32;
+
+/**
+ * Follows the chain of entries from the first one, each of which carries the digest of the one before.
+ *
+ * @param options.upTo the entry whose standing matters, also against the one after it; all unless given
+ * @param options.sheets also reads the two files of every sheet and compares them with their digests
+ */
+export async function checkChain(
+  storage: Storage,
+  options: { readonly upTo?: number; readonly sheets?: boolean } = {},
+): Promise<ChainCheck> {
+  const numbers = await entryNumbers(storage);
+  const upTo = Math.min(options.upTo ?? Number.POSITIVE_INFINITY, numbers.at(-1) ?? 0);
+  const found = new Map<number, Found>();
+  await inGroups(
+    numbers.filter((number) => number <= upTo + 2),
+    async (number) => {
+      const content = await storage.readBytes(places.entry(number));
+      if (content === null) return;
+      const read = readEntry(content.toString("utf8"));
+      found.set(number, { number, digest: digestOfFile(content), read });
+    },
+  );
+  const faults = [...missing(found, upTo), ...wrongEntries(found, upTo), ...brokenLinks(found, upTo)];
+  if (options.sheets) {
+    const sheets = [...found.values()].flatMap((each) => (each.number > upTo ? [] : (sheetIn(each) ?? [])));
+    await inGroups(sheets, async (sheet) => {
+      faults.push(...(await sheetFaults(storage, sheet)));
+    });
+  }
+  return { upTo, faults };
+}
+
+/** Why the two files of a sheet are not what was filed, one sentence each; none: they are. */
+export async function sheetFaults(storage: Storage, sheet: SheetEntry): Promise<readonly string[]> {
+  const files = [
+    { name: "PDF", path: places.pdf(sheet), digest: sheet.digests.pdf },
+    { name: "record", path: places.record(sheet), digest: sheet.digests.record },
+  ];
+  const faults: string[] = [];
+  for (const { name, path, digest } of files) {
+    const content = await storage.readBytes(path);
+    if (content === null) faults.push(`The ${name} of sheet ${sheet.number} is missing: it was removed.`);
+    else if (digestOfFile(content) !== digest) {
+      faults.push(
+        `The ${name} of sheet ${sheet.number} was changed: its digest is not the one in entry ${sheet.number}.`,
+      );
+    }
+  }
+  return faults;
+}
+
+function missing(found: ReadonlyMap<number, Found>, upTo: number): string[] {
+  const faults: string[] = [];
+  for (let first = 1; first <= upTo; first += 1) {
+    if (found.has(first)) continue;
+    let last = first;
+    while (last < upTo && !found.has(last + 1)) last += 1;
+    faults.push(
+      first === last
+        ? `Entry ${first} is missing: it was removed.`
+        : `Entries ${first} to ${last} are missing: they were removed.`,
+    );
+    first = last;
+  }
+  return faults;
+}
+
+function wrongEntries(found: ReadonlyMap<number, Found>, upTo: number): string[] {
+  return [...found.values()].flatMap(({ number, read }) => {
+    if (number > upTo) return [];
+    if (read.state !== "whole") {
+      return [`Entry ${number} cannot be read: it was changed, or a later version of the program made it.`];
+    }
+    return read.entry.number === number
+      ? []
+      : [
+          `In the place of entry ${number} stands entry ${read.entry.number}: entries were swapped or renamed.`,
+        ];
+  });
+}
+
+function brokenLinks(found: ReadonlyMap<number, Found>, upTo: number): string[] {
+  const faults: string[] = [];
+  for (let number = 1; number <= upTo + 1; number += 1) {
+    if (followed(found, number) !== false) continue;
+    if (number === 1) faults.push("Entry 1 was changed: it names an entry before it, and there is none.");
+    // Where the entry after them follows from the later of the two, it vouches for that one.
+    else if (followed(found, number + 1) === true) {
+      faults.push(`Entry ${number - 1} was changed: its digest is not the one that entry ${number} carries.`);
+    } else {
+      faults.push(`Entry ${number} does not follow from entry ${number - 1}: one of the two was changed.`);
+    }
+  }
+  return faults;
+}
+
+/** Whether an entry carries the digest of the one before; null where one of the two cannot tell. */
+function followed(found: ReadonlyMap<number, Found>, number: number): boolean | null {
+  const entry = entryIn(found.get(number));
+  if (entry === null) return null;
+  if (number === 1) return entry.previous === noEntry;
+  const before = found.get(number - 1);
+  if (before === undefined || entryIn(before) === null) return null;
+  return entry.previous === before.digest;
+}
+
+/** The entry that belongs in its place; one that cannot be read or stands elsewhere is reported as such. */
+function entryIn(found: Found | undefined): RegisterEntry | null {
+  if (found?.read.state !== "whole" || found.read.entry.number !== found.number) return null;
+  return found.read.entry;
+}
+
+function sheetIn(found: Found): SheetEntry | null {
+  const entry = entryIn(found);
+  return entry?.kind === "sheet" ? entry : null;
+}
+
+async function inGroups<Item>(items: readonly Item[], work: (item: Item) => Promise<void>): Promise<void> {
+  for (let first = 0; first < items.length; first += together) {
+    await Promise.all(items.slice(first, first + together).map(work));
+  }
+}
