@@ -46,6 +46,9 @@ const bottomNames: Readonly<Record<AreaInputs["bottom"], string>> = {
   korbbogen: "torispherical, DIN 28013 (Korbbogen)",
 };
 
+/** Less than this, m^2, is none: a thousandth of a square millimetre. */
+const leastArea = 1e-9;
+
 /**
  * Wetted and jacketed wall of a vessel, step by step.
  *
@@ -202,7 +205,7 @@ function fillFaults(inputs: AreaInputs, level: number, area: number): WorkingFau
       message: `is ${valueText(fillVolume, "m^3")}, more than the ${valueText(vesselVolume, "m^3")} that the vessel holds; expected a fill volume up to that`,
     });
   }
-  if (!(area > 0)) {
+  if (!(area >= leastArea)) {
     faults.push({
       pointer: `${group}/jacketLower`,
       message: `is ${valueText(jacketLower, "m")}, but the contents stand only ${valueText(level, "m")} high: no jacketed wall is wetted and the area is 0; expected an edge below the level, or a larger fill volume`,

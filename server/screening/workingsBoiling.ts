@@ -5,7 +5,7 @@ import {
   pressureUnits,
   standardAtmosphere,
 } from "../thermal/boilingPoint.js";
-import { temperatureNumber, temperatureText } from "../words/numbers.js";
+import { temperatureNumber } from "../words/numbers.js";
 import { caution } from "./cautions/catalogue.js";
 import type { Caution } from "./findings.js";
 import { moved, within } from "./workingsFollow.js";
@@ -43,6 +43,10 @@ const sources: Readonly<Record<BoilingInputs["method"], string>> = {
   antoine: "worked out from Antoine constants",
 };
 
+/** From a very good vacuum to more than any vessel holds, Pa. */
+const leastPressure = 1e-3;
+const mostPressure = 1e9;
+
 /** Beyond this factor from 1 atm a constant heat of vaporisation is no longer good to a kelvin; common practice. */
 const farFromAtmosphere = 10;
 
@@ -60,6 +64,14 @@ export function boilingWorking(inputs: BoilingInputs, field: number | null): Wor
     source: sources[inputs.method],
     reference: references[inputs.method],
   };
+  if (!(inputs.pressure >= leastPressure && inputs.pressure <= mostPressure)) {
+    return refusedWorking(stated, [
+      {
+        pointer: `${group}/pressure`,
+        message: `is ${barText(inputs.pressure)}, which no vessel has; expected an absolute pressure, such as "1.5 bar"`,
+      },
+    ]);
+  }
   const result = boilingPointOf(inputs);
   if (!Number.isFinite(result)) {
     return refusedWorking(stated, [
@@ -166,11 +178,11 @@ function outsideRange(inputs: BoilingInputs, result: number): Caution[] {
   if (inputs.method === "antoine") {
     if (result >= inputs.lowest && result <= inputs.highest) return [];
     const side = result < inputs.lowest ? "below" : "above";
-    const text = `The boiling point worked out, ${temperatureText(result)}, lies ${side} the range of its Antoine constants, ${temperatureText(inputs.lowest)} to ${temperatureText(inputs.highest)}: take constants that hold there.`;
+    const text = `The boiling point worked out, ${valueText(result, "K")}, lies ${side} the range of its Antoine constants, ${valueText(inputs.lowest, "K")} to ${valueText(inputs.highest, "K")}: take constants that hold there.`;
     return [caution("OUTSIDE_HELPER_RANGE", group, text)];
   }
   const factor = inputs.pressure / standardAtmosphere;
   if (factor <= farFromAtmosphere && factor >= 1 / farFromAtmosphere) return [];
-  const text = `The boiling point worked out, ${temperatureText(result)}, is for ${barText(inputs.pressure)}, far from the 1 atm of the normal boiling point: a constant heat of vaporisation no longer holds there; take Antoine constants.`;
+  const text = `The boiling point worked out, ${valueText(result, "K")}, is for ${barText(inputs.pressure)}, far from the 1 atm of the normal boiling point: a constant heat of vaporisation no longer holds there; take Antoine constants.`;
   return [caution("OUTSIDE_HELPER_RANGE", group, text)];
 }

@@ -63,7 +63,7 @@ export function coefficientWorking(inputs: CoefficientInputs, field: number | nu
   const stated = { ...about, given: givenOf(inputs), typical };
   const resistances = resistancesOf({ ...inputs });
   const result = overallCoefficient(resistances);
-  if (!(Number.isFinite(result) && result > 0 && Number.isFinite(1 / result))) {
+  if (!(result >= 1e-9 && result <= 1e9)) {
     return refusedWorking(stated, [
       {
         pointer: about.group,

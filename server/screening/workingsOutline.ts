@@ -50,11 +50,14 @@ export interface Working {
   readonly reference: string;
 }
 
+/** Above it, K, a temperature is a slip of the keyboard, and its decimals are no matter. */
+const hottest = 1e6;
+
 /**
  * A number as a working shows it: temperatures in degC, everything else in the SI, without noughts at its end.
  */
 export function valueText(value: number, unit: string, significant = 4): string {
-  if (unit === "K") return temperatureText(value, "nearest", 2);
+  if (unit === "K" && value < hottest) return temperatureText(value, "nearest", 2);
   const [number = "", power] = numberText(value, significant).split("×");
   const short = number.includes(".") ? number.replace(/\.?0+$/, "") : number;
   return `${power === undefined ? short : `${short}×${power}`} ${printedUnit(unit)}`.trim();

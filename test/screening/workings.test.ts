@@ -284,7 +284,8 @@ describe("what a working cannot do is a fault of the case", () => {
   });
 
   test.each([
-    ["a pressure without a boiling point", { pressure: "1e9 bar" }, "pressure"],
+    ["a pressure without a boiling point", { a: 2, pressure: "2 bar" }, "pressure"],
+    ["a pressure that no vessel has", { pressure: "1e9 bar" }, "pressure"],
     ["constants that lead below absolute zero", { c: 900 }, "c"],
   ])("%s", (_name, changes, key) => {
     const faults = faultsOf(withGroup("limit", { ...antoine, ...changes }));
