@@ -57,7 +57,7 @@ export function findingsView(findings: Findings): FindingsView {
     full: findings.uncertainty !== null,
     verdict: {
       level: cautions[0]?.level ?? "note",
-      sentence: stopSentence(findings),
+      sentence: verdictSentence(findings),
       stops: findings.cautions.filter((caution) => caution.level === "stop"),
     },
     sentences: sentencesOf(findings),
@@ -72,6 +72,13 @@ export function findingsView(findings: Findings): FindingsView {
     cautions,
     counted: cautions.map((group) => count(group.cautions.length, group.name)).join(", "),
   };
+}
+
+/** Failures can still raise a stop, so a quick screening must not say that there is none. */
+function verdictSentence(findings: Findings): string {
+  const stopped = findings.cautions.some((caution) => caution.level === "stop");
+  if (findings.uncertainty !== null || stopped) return stopSentence(findings);
+  return "No stop so far. Cooling failures, which can raise one, are still to be computed.";
 }
 
 /** "1 stop", "2 warnings" */

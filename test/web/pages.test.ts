@@ -123,6 +123,11 @@ describe("the page of a case", () => {
     const good = await request(app).post("/findings").send(filled(demoDocument())).expect(200);
     expect(good.text).toContain("MTSR");
     expect(good.text).not.toContain("<html");
+    const quick = await request(app)
+      .post("/findings?parts=quick")
+      .send(filled(demoDocument("hydrolysis")));
+    expect(quick.text).toContain("No stop so far");
+    expect(quick.text).not.toContain("No stop was raised");
     expect(good.text).not.toMatch(wrongNumbers);
     const bad = await request(app).post("/findings").send(filled(blankCase())).expect(200);
     expect(bad.text).toContain('data-pointer="/mixture/mass"');
