@@ -10,6 +10,7 @@ import { startBrowser } from "./browser.js";
 import { editing } from "./editing.js";
 import { measures } from "./measures.js";
 import { saving } from "./saving.js";
+import { workings } from "./workings.js";
 
 const screener = threadedScreener(built("server/web/screeningWorker.ts"));
 let server: Server;
@@ -44,3 +45,4 @@ editing(visit);
 saving(visit);
 accessibility(visit);
 measures(visit);
+workings(visit);
