@@ -2,7 +2,7 @@ import { canonicalJson } from "../case/canonical.js";
 import type { Findings } from "../screening/findings.js";
 
 /** What travels inside a sheet: the inputs as typed, and everything that was computed from them. */
-export interface SheetRecord {
+interface SheetRecord {
   readonly format: typeof recordFormat;
   readonly case: unknown;
   readonly findings: Findings;

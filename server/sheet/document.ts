@@ -62,7 +62,7 @@ const entities: Readonly<Record<string, string>> = {
 };
 
 /** Text for XML 1.0: what it cannot hold at all becomes the replacement character. */
-export function escapeXml(text: string): string {
+function escapeXml(text: string): string {
   return text
     .replace(/[^\t\n\r\u0020-\ud7ff\ue000-\ufffd\u{10000}-\u{10ffff}]/gu, "\ufffd")
     .replace(/[&<>]/g, (character) => entities[character] ?? character);

@@ -22,6 +22,14 @@ export const styles = {
 
 export type Element = PDFKit.PDFStructureElement;
 
+/** What a structure element says beside its content. */
+export interface ElementOptions {
+  /** words in the place of a picture */
+  readonly alt?: string;
+  /** what the heading cell of a table names: "Column" or "Row" */
+  readonly scope?: string;
+}
+
 /** Where the writing stands: everything that is drawn moves `y` down, or goes on on a new page. */
 export interface Cursor {
   readonly pdf: PDFKit.PDFDocument;
@@ -32,6 +40,8 @@ export interface Cursor {
   y: number;
   /** the structure element that takes what is drawn next */
   parent: Element;
+  /** the bookmark of the section, under which its parts get theirs */
+  bookmark: PDFKit.PDFOutline;
 }
 
 const margins = { left: 50, right: 50, top: 60, bottom: 66 };
@@ -49,6 +59,7 @@ export function startPages(pdf: PDFKit.PDFDocument): Cursor {
     bottom: pdf.page.height - margins.bottom,
     y: margins.top,
     parent: root,
+    bookmark: pdf.outline,
   };
 }
 
@@ -78,11 +89,7 @@ export function ornament(cursor: Cursor, draw: () => void): void {
 }
 
 /** A new structure element below the present parent. */
-export function childElement(
-  cursor: Cursor,
-  tag: string,
-  options: { alt?: string; scope?: string } = {},
-): Element {
+export function childElement(cursor: Cursor, tag: string, options: ElementOptions = {}): Element {
   const element = cursor.pdf.struct(tag, options);
   cursor.parent.add(element);
   return element;
@@ -141,7 +148,7 @@ export function paragraph(
 export function heading(cursor: Cursor, text: string, keep = 100): void {
   cursor.y += cursor.y > cursor.top ? 10 : 0;
   ensure(cursor, lineHeight(styles.heading) + 6 + keep);
-  cursor.pdf.outline.addItem(text);
+  cursor.bookmark = cursor.pdf.outline.addItem(text);
   paragraph(cursor, text, styles.heading, { tag: "H2", after: 1 });
   ornament(cursor, () => rule(cursor, cursor.y, 0.8, ink.text));
   cursor.y += 6;
@@ -151,6 +158,7 @@ export function heading(cursor: Cursor, text: string, keep = 100): void {
 export function subheading(cursor: Cursor, text: string, keep = 70): void {
   cursor.y += cursor.y > cursor.top ? 4 : 0;
   ensure(cursor, lineHeight(styles.subheading) + keep);
+  cursor.bookmark.addItem(text);
   paragraph(cursor, text, styles.subheading, { tag: "H3", after: 2 });
 }
 

@@ -3,6 +3,7 @@ import {
   type Cursor,
   childElement,
   type Element,
+  type ElementOptions,
   ink,
   newPage,
   ornament,
@@ -18,68 +19,59 @@ export interface Column {
   readonly align?: "left" | "right";
 }
 
-export interface TableOptions {
-  /** columns whose cells name their row */
-  readonly rowHeadings?: number;
-  readonly strong?: (row: number) => boolean;
+/** The columns as they stand on the page. */
+interface Grid {
+  readonly columns: readonly Column[];
+  /** pt */
+  readonly widths: readonly number[];
 }
 
 interface Row {
+  readonly isHead: boolean;
+  /** the lines of each cell */
   readonly cells: readonly (readonly string[])[];
+  /** pt */
   readonly height: number;
-  readonly style: TextStyle;
 }
 
 const gap = 8;
 const padding = 2.2;
-const cellStyle = styles.small;
+const bodyStyle: TextStyle = styles.small;
 const headStyle: TextStyle = { ...styles.small, weight: "strong" };
 
 /**
  * A table that goes over pages: its heading comes again on each, no row stands alone below a heading
- * or at the top of the last page, and a row higher than a page is parted.
+ * or at the top of the last page, and a row higher than a page is parted. The first cell of a row names it.
  */
 export function table(
   cursor: Cursor,
   columns: readonly Column[],
   rows: readonly (readonly string[])[],
-  options: TableOptions = {},
 ): void {
   const shares = columns.reduce((sum, column) => sum + column.share, 0);
   const widths = columns.map((column) => (column.share / shares) * (cursor.width + gap) - gap);
+  const grid: Grid = { columns, widths };
   const head = layRow(
-    widths,
+    grid,
     columns.map((column) => column.heading),
-    headStyle,
+    true,
   );
   const highest = cursor.bottom - cursor.top - head.height;
-  const laid = rows.flatMap((row, index) =>
-    partRow(layRow(widths, row, options.strong?.(index) === true ? headStyle : cellStyle), highest),
-  );
+  const laid = rows.flatMap((row) => partRow(layRow(grid, row, false), highest));
   const element = childElement(cursor, "Table");
-  const draw = (row: Row, parent: Element | null, tagOf: (column: number) => string) =>
-    drawRow(cursor, columns, widths, row, parent, tagOf);
   let next = 0;
   do {
     const count = rowsThatFit(cursor, head.height, laid, next);
-    if (count === 0) {
-      newPage(cursor);
-      continue;
+    if (count > 0) {
+      drawHead(cursor, grid, head, next === 0 ? element : null);
+      for (const row of laid.slice(next, next + count)) drawRow(cursor, grid, row, element);
+      next += count;
     }
-    drawHead(cursor, head, next === 0 ? rowElement(cursor, element) : null, draw);
-    for (const row of laid.slice(next, next + count)) {
-      draw(row, rowElement(cursor, element), (column) => (column < (options.rowHeadings ?? 1) ? "TH" : "TD"));
-      ornament(cursor, () => rule(cursor, cursor.y, 0.3, ink.rule));
-    }
-    next += count;
     if (next < laid.length) newPage(cursor);
   } while (next < laid.length);
   element.end();
   cursor.y += 8;
 }
-
-/** What is missing stands back behind what was given. */
-const absent = /^(?:not (?:given|said|assessed|reached)|–)$/u;
 
 /** How many rows go on this page: 0 where it is better to begin on the next one. */
 function rowsThatFit(cursor: Cursor, headHeight: number, rows: readonly Row[], from: number): number {
@@ -98,90 +90,91 @@ function rowsThatFit(cursor: Cursor, headHeight: number, rows: readonly Row[], f
 }
 
 /** Text whose cell has nothing to its right may use the room that is left there. */
-function layRow(widths: readonly number[], texts: readonly string[], style: TextStyle): Row {
+function layRow({ widths }: Grid, texts: readonly string[], isHead: boolean): Row {
+  const style = isHead ? headStyle : bodyStyle;
   const last = texts.findLastIndex((text) => text !== "");
   const room = widths.slice(last).reduce((sum, width) => sum + width + gap, -gap);
   const cells = widths.map((width, column) =>
     wrap(texts[column] ?? "", column === last ? room : width, style),
   );
-  return { cells, style, height: rowHeight(cells, style) };
+  return { isHead, cells, height: rowHeight(cells) };
 }
 
-function rowHeight(cells: readonly (readonly string[])[], style: TextStyle): number {
-  return Math.max(...cells.map((lines) => lines.length)) * lineHeight(style) + 2 * padding;
+function rowHeight(cells: readonly (readonly string[])[]): number {
+  return Math.max(...cells.map((lines) => lines.length)) * lineHeight(bodyStyle) + 2 * padding;
 }
 
 function partRow(row: Row, highest: number): Row[] {
   if (row.height <= highest) return [row];
-  const most = Math.max(1, Math.floor((highest - 2 * padding) / lineHeight(row.style)));
-  const parts: Row[] = [];
+  const most = Math.max(1, Math.floor((highest - 2 * padding) / lineHeight(bodyStyle)));
   const longest = Math.max(...row.cells.map((lines) => lines.length));
-  for (let from = 0; from < longest; from += most) {
-    const cells = row.cells.map((lines) => lines.slice(from, from + most));
-    parts.push({
-      cells,
-      style: row.style,
-      height: rowHeight(cells, row.style),
-    });
-  }
-  return parts;
+  return Array.from({ length: Math.ceil(longest / most) }, (_, part) => {
+    const cells = row.cells.map((lines) => lines.slice(part * most, (part + 1) * most));
+    return { isHead: row.isHead, cells, height: rowHeight(cells) };
+  });
 }
 
-function rowElement(cursor: Cursor, parent: Element): Element {
-  const element = cursor.pdf.struct("TR");
-  parent.add(element);
-  return element;
-}
-
-function drawHead(
-  cursor: Cursor,
-  head: Row,
-  element: Element | null,
-  draw: (row: Row, parent: Element | null, tagOf: (column: number) => string) => void,
-): void {
+/** @param parent null where the heading is repeated, which a screen reader leaves out */
+function drawHead(cursor: Cursor, grid: Grid, head: Row, parent: Element | null): void {
   ornament(cursor, () => cursor.pdf.rect(cursor.left, cursor.y, cursor.width, head.height).fill(ink.fill));
-  draw(head, element, () => "TH");
+  if (parent === null) ornament(cursor, () => drawCells(cursor, grid, head, (_column, draw) => draw()));
+  else drawTagged(cursor, grid, head, parent);
+  cursor.y += head.height;
   ornament(cursor, () => rule(cursor, cursor.y, 0.8, ink.text));
 }
 
-function drawRow(
+function drawRow(cursor: Cursor, grid: Grid, row: Row, parent: Element): void {
+  drawTagged(cursor, grid, row, parent);
+  cursor.y += row.height;
+  ornament(cursor, () => rule(cursor, cursor.y, 0.3, ink.rule));
+}
+
+function drawTagged(cursor: Cursor, grid: Grid, row: Row, parent: Element): void {
+  const element = cursor.pdf.struct("TR");
+  parent.add(element);
+  drawCells(cursor, grid, row, (column, draw) => {
+    const tag = row.isHead || column === 0 ? "TH" : "TD";
+    const options: ElementOptions = tag === "TH" ? { scope: row.isHead ? "Column" : "Row" } : {};
+    const cell = cursor.pdf.struct(tag, options);
+    element.add(cell);
+    readable(cursor, cell, tag, draw);
+    cell.end();
+  });
+  element.end();
+}
+
+function drawCells(
   cursor: Cursor,
-  columns: readonly Column[],
-  widths: readonly number[],
+  { columns, widths }: Grid,
   row: Row,
-  parent: Element | null,
-  tagOf: (column: number) => string,
+  place: (column: number, draw: () => void) => void,
 ): void {
   let x = cursor.left;
   row.cells.forEach((lines, column) => {
+    const left = x;
     const width = widths[column] ?? 0;
-    const at = x;
-    const write = () => drawCell(cursor, lines, at, width, columns[column]?.align ?? "left", row.style);
-    if (parent === null) ornament(cursor, write);
-    else {
-      const tag = tagOf(column);
-      const cell = cursor.pdf.struct(tag);
-      parent.add(cell);
-      readable(cursor, cell, tag, write);
-      cell.end();
-    }
+    place(column, () =>
+      drawCell(cursor, lines, left, columns[column]?.align === "right" ? width : null, row),
+    );
     x += width + gap;
   });
-  cursor.y += row.height;
-  parent?.end();
 }
 
+/** What is missing stands back behind what was given. */
+const absent = /^(?:not (?:given|said|assessed|reached)|–)$/u;
+
+/** @param alignedTo width at whose end the lines end; null: they begin at `x` */
 function drawCell(
   cursor: Cursor,
   lines: readonly string[],
   x: number,
-  width: number,
-  align: "left" | "right",
-  style: TextStyle,
+  alignedTo: number | null,
+  { isHead }: Row,
 ): void {
+  const style = isHead ? headStyle : bodyStyle;
   const shown = absent.test(lines.join(" ")) ? { ...style, colour: ink.quiet } : style;
   lines.forEach((line, index) => {
-    const indent = align === "right" ? width - widthOf(line, style) : 0;
+    const indent = alignedTo === null ? 0 : alignedTo - widthOf(line, style);
     drawLine(cursor.pdf, line, x + indent, cursor.y + padding + index * lineHeight(style), shown);
   });
 }

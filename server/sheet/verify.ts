@@ -9,7 +9,7 @@ import { program } from "../words/program.js";
 import { renderSheet } from "./render.js";
 
 /** One thing that was checked, in one plain sentence. */
-export interface Check {
+interface Check {
   readonly name: "record" | "inputs" | "findings" | "pages";
   readonly passed: boolean;
   readonly sentence: string;

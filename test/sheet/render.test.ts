@@ -122,6 +122,15 @@ test("title and language are set, and no clock has left a date", async () => {
   await pdf.destroy();
 });
 
+test("a title with markup is text in the metadata too", async () => {
+  const title = `<b>A & B</b> ]]> "quoted" é \u0007`;
+  const pdf = await openPdf(await renderSheet({ ...input, document: { ...inventedDocument, title } }));
+  const { info, metadata } = await pdf.getMetadata();
+  expect(info).toMatchObject({ Title: `INVENTED-0001: ${title}` });
+  expect(metadata?.get("dc:title")).toBe(`INVENTED-0001: ${title.replace("\u0007", "\ufffd")}`);
+  await pdf.destroy();
+});
+
 test("the record travels inside, whole and canonical", async () => {
   const pdf = await openPdf(await sheet);
   const attachments: Record<string, { content: Uint8Array }> = await pdf.getAttachments();
