@@ -1,7 +1,6 @@
 import { fromArrhenius } from "../kinetics/rateConstant.js";
 import { timeToConversion } from "../thermal/completion.js";
-import { courseOf, type Dosing, doseAt, largestRise } from "../thermal/dosing.js";
-import { isothermalBalance, stoichiometricTime } from "../thermal/isothermal.js";
+import { type Dosing, doseAt, largestRise } from "../thermal/dosing.js";
 import type { Step } from "../thermal/step.js";
 
 /** Places of a point's quantities; times are parts of the feed's duration, rates parts of the largest one. */
@@ -29,17 +28,13 @@ export interface DosingPoints {
    * @returns K
    */
   rise(index: number, ratioIndex: number): number;
-  /** times of a course, s: evenly up to the stoichiometric point, where the rate bends, and after it */
-  readonly sampleTimes: readonly number[];
-  /** rates at `sampleTimes`, parts of the largest one; read only */
-  course(index: number): Float64Array;
+  dosing(index: number): Dosing;
 }
 
 interface Point {
   readonly dosing: Dosing;
   readonly values: readonly number[];
   readonly rises: Map<number, number>;
-  course: Float64Array | null;
 }
 
 /**
@@ -52,7 +47,6 @@ export function createDosingPoints(nominal: Step): DosingPoints {
   const { reaction, limits } = nominal;
   const { feed } = reaction;
   if (feed === null) throw new Error("A batch is not dosed");
-  const times = sampleTimes(stoichiometricTime(isothermalBalance(nominal, 0)), feed.duration);
 
   function at(index: number): Point | null {
     const before = points.get(index);
@@ -72,7 +66,7 @@ export function createDosingPoints(nominal: Step): DosingPoints {
       endRate / fastest.value,
       Math.log(timeToConversion(dosing, limits.targetConversion)),
     ];
-    return { dosing, values, rises: new Map(), course: null };
+    return { dosing, values, rises: new Map() };
   }
 
   function known(index: number): Point {
@@ -96,31 +90,8 @@ export function createDosingPoints(nominal: Step): DosingPoints {
       rises.set(ratioIndex, rise);
       return rise;
     },
-    sampleTimes: times,
-    course(index) {
-      const point = known(index);
-      point.course ??= sampled(point.dosing, times);
-      return point.course;
-    },
+    dosing: (index) => known(index).dosing,
   };
-}
-
-/** Samples of the rate over the feed: up to the stoichiometric point, and from there to the end. */
-const samplesBefore = 32;
-const samplesAfter = 12;
-
-function sampleTimes(turn: number, end: number): readonly number[] {
-  const times = Array.from({ length: samplesBefore + 1 }, (_, i) => (turn * i) / samplesBefore);
-  for (let i = 1; i <= samplesAfter && turn < end; i += 1) {
-    times.push(turn + ((end - turn) * i) / samplesAfter);
-  }
-  return times;
-}
-
-function sampled(dosing: Dosing, times: readonly number[]): Float64Array {
-  const course = courseOf(dosing);
-  if (course === null) throw new Error("A batch is not dosed");
-  return Float64Array.from(times, (time) => course.rateAt(time) / dosing.fastest.value);
 }
 
 /**

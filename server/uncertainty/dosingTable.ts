@@ -1,7 +1,7 @@
 import { lnRateConstant } from "../kinetics/rateConstant.js";
 import type { Step } from "../thermal/step.js";
 import { type Isothermal, integrated } from "../window/study.js";
-import { courseBetween } from "./dosingCourse.js";
+import { courseBetween, type SampledCourses, sampleCourses } from "./dosingCourse.js";
 import {
   createDosingPoints,
   type DosingPoints,
@@ -29,6 +29,7 @@ interface Cell {
   /** by the index of the ratio of heat capacities: four rises of each point */
   readonly rises: Map<number, Float64Array>;
   readonly completionHolds: boolean;
+  courses: SampledCourses | null;
 }
 
 /**
@@ -97,8 +98,8 @@ export function dosingTable(nominal: Step): (step: Step) => Isothermal {
       courseAt(temperature) {
         const cell = locate(lnRateConstant(rate, temperature));
         if (cell === null) return direct.courseAt(temperature);
-        const fastest = Math.exp(read(cell, weights, quantities.lnFastest));
-        return courseBetween(points, cell.points, weights, fastest);
+        cell.courses ??= sampleCourses(cell.points.map(points.dosing), points.dosing(cell.points[3]));
+        return courseBetween(cell.courses, weights, Math.exp(read(cell, weights, quantities.lnFastest)));
       },
     };
   };
@@ -126,7 +127,7 @@ function testedCell(points: DosingPoints, start: number, spacing: number): Cell 
   const riseError = Math.abs(risen - points.rise(middle, 0));
   if (misses(quantities.lnFastest) || misses(quantities.endRate)) return null;
   if (!(riseError <= allowedError * Math.max(...risesThere))) return null;
-  return { ...cell, completionHolds: !misses(quantities.lnCompletion) };
+  return { ...cell, completionHolds: !misses(quantities.lnCompletion), courses: null };
 }
 
 function read(cell: Pick<Cell, "values">, weights: Float64Array, quantity: number): number {
@@ -142,7 +143,7 @@ function readRise(
   cell: Cell,
   weights: Float64Array,
   ratioIndex: number,
-  ratioWeights: Float64Array,
+  ratioWeights: readonly number[],
 ): number {
   let rises = cell.rises.get(ratioIndex);
   if (rises === undefined) {
@@ -174,8 +175,8 @@ function fillWeights(weights: Float64Array, u: number): void {
   weights[5] = (a * b * c * d * e) / 120;
 }
 
-/** Weights of the cubic through four points at -1 to 2, at u from 0 to 1 (Lagrange). */
-function cubicWeights(u: number): Float64Array {
+/** Weights of the cubic through four points at -1, 0, 1 and 2 (Lagrange), at u from 0 to 1. */
+function cubicWeights(u: number): readonly [number, number, number, number] {
   const [a, b, c, d] = [u + 1, u, u - 1, u - 2];
-  return Float64Array.of((-b * c * d) / 6, (a * c * d) / 2, (-a * b * d) / 2, (a * b * c) / 6);
+  return [(-b * c * d) / 6, (a * c * d) / 2, (-a * b * d) / 2, (a * b * c) / 6];
 }

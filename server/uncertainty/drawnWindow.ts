@@ -91,7 +91,9 @@ export function collectWindows(
     add,
     result(added) {
       const needed = Math.ceil(cautiousPart * added - 1e-9);
-      const inward = (spans: readonly Span[]): readonly Span[] => drawIn(spans, low, high);
+      // A single draw is the estimates themselves: there is nothing to resolve.
+      const inward = (spans: readonly Span[]): readonly Span[] =>
+        added === 1 ? spans : drawIn(spans, low, high);
       return {
         lanes: window.lanes.map((lane) => {
           const follower = followers.find((each) => each.lane === lane);
