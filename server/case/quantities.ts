@@ -20,6 +20,8 @@ interface Refusal {
 }
 
 const longest = 100;
+/** Typed temperatures end here, K: a study over more would only be long. */
+const hottest = 3000;
 const allowed = /^[A-Za-z0-9 .+\-*/^()]*$/;
 const leadingNumber =
   /^([+-]? ?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?)(?: ?[*xX] ?10 ?\^ ?([+-]?\d+))?(?![\d.^])/;
@@ -49,6 +51,11 @@ export function readQuantity(text: string, dimension: Dimension): Reading {
   if (!(kelvin > 1e-9)) {
     return refuse(
       `${quoted(text)} is ${kelvin < -1e-9 ? "below" : "at"} absolute zero; expected ${dimension.words} above 0 K, such as ${dimension.example}`,
+    );
+  }
+  if (kelvin > hottest) {
+    return refuse(
+      `${quoted(text)} is above ${hottest} K, where no such process runs; expected ${dimension.words}, such as ${dimension.example}`,
     );
   }
   return { ok: true, measured: { value: kelvin, ln: Math.log(kelvin) } };

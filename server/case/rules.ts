@@ -2,8 +2,8 @@ import type { Fault } from "./faults.js";
 import { pointerOf } from "./faults.js";
 import { memberOf, valueAt } from "./outline.js";
 import { failureRules } from "./ruleFailures.js";
-import { helperRules } from "./ruleHelpers.js";
 import { rateFaults } from "./ruleRates.js";
+import { workingFieldRules } from "./ruleWorkings.js";
 import { figureTyped } from "./typed.js";
 import { isGroup } from "./typedParts.js";
 import { workingRules } from "./workings.js";
@@ -24,7 +24,7 @@ export function crossFaults(document: unknown): Fault[] {
   rangeRules(document, report);
   rateFaults(document, report);
   failureRules(document, report);
-  helperRules(document, report);
+  workingFieldRules(document, report);
   workingRules(document, report);
   return faults;
 }
@@ -98,9 +98,19 @@ function coolantRules(document: unknown, report: ReportAt): void {
   }
 }
 
+/** A wider swing is no control, and would only lengthen the study, K. */
+const widestBand = 100;
+
 /** Ranges run from low to high. */
 function rangeRules(document: unknown, report: ReportAt): void {
   const limits = memberOf(document, "limits");
+  const band = figureTyped(memberOf(limits, "controlBand"), "temperatureDifference");
+  if (band !== null && band > widestBand) {
+    report(
+      ["limits", "controlBand"],
+      `is wider than ${widestBand} K; expected how far the temperature swings to each side of its set point, such as "2 K"`,
+    );
+  }
   const lowest = figureTyped(memberOf(limits, "lowestTemperature"), "temperature");
   const highest = figureTyped(memberOf(limits, "highestTemperature"), "temperature");
   if (lowest !== null && highest !== null && lowest >= highest) {

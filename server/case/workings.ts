@@ -5,8 +5,8 @@ import { coefficientWorking } from "../screening/workingsCoefficient.js";
 import type { Kind } from "./dimensions.js";
 import { pathOf, pointerOf } from "./faults.js";
 import { memberOf, valueAt } from "./outline.js";
-import { helperRules } from "./ruleHelpers.js";
 import type { ReportAt } from "./rules.js";
+import { workingFieldRules } from "./ruleWorkings.js";
 import { figureTyped } from "./typed.js";
 import { isGroup } from "./typedParts.js";
 import { limits, vessel } from "./vesselSchema.js";
@@ -30,7 +30,7 @@ export type WorkedField = keyof typeof workingGroups;
  */
 export function workingsIn(document: unknown): Working[] {
   const broken: string[] = [];
-  helperRules(document, (path) => broken.push(pointerOf(path)));
+  workingFieldRules(document, (path) => broken.push(pointerOf(path)));
   const read = <Read>(
     field: WorkedField,
     kind: Kind,

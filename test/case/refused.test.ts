@@ -100,4 +100,13 @@ describe("refused", () => {
       faults: [expect.objectContaining({ pointer: "/limits/coolingUse" })],
     });
   });
+
+  test("a temperature or a control band so large that a study over it would only be long", () => {
+    expect(faultsOf(edited(demo("acylation"), "/limits/highestTemperature", "1e306 K"))[0]).toMatch(
+      /above 3000 K/,
+    );
+    expect(faultsOf(edited(demo("acylation"), "/limits/controlBand", "1e6 K"))[0]).toMatch(
+      /wider than 100 K/,
+    );
+  });
 });

@@ -3,7 +3,7 @@ import type { ReportAt } from "./rules.js";
 import { figureTyped } from "./typed.js";
 
 /** What the workings behind an area, a coefficient and a boiling point must fulfil. */
-export function helperRules(document: unknown, report: ReportAt): void {
+export function workingFieldRules(document: unknown, report: ReportAt): void {
   areaRules(valueAt(document, "vessel", "heatTransferAreaFrom"), report);
   const wall = valueAt(document, "vessel", "heatTransferCoefficientFrom");
   const lining = ["liningThickness", "liningConductivity"];
