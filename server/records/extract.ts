@@ -1,11 +1,14 @@
 import { canonicalJson } from "../case/canonical.js";
 import { recordFormat, recordName } from "./attach.js";
+import { type Filing, readFiling } from "./filing.js";
 import { type PdfObjects, readPdfObjects, unpackStream } from "./pdfObjects.js";
 
 /** The parts of a record as they were found: nothing in them has been checked yet. */
 export interface FoundRecord {
   readonly case: unknown;
   readonly findings: unknown;
+  /** undefined: the sheet was printed without being filed */
+  readonly filing: Filing | undefined;
 }
 
 export type Extraction =
@@ -72,7 +75,9 @@ export function parseRecord(bytes: Buffer): Extraction {
   }
   if (!("case" in record && "findings" in record))
     return refused("The record lacks its case or its findings.");
-  return { ok: true, record: { case: record.case, findings: record.findings } };
+  const filing = "filing" in record ? readFiling(record.filing) : undefined;
+  if (filing === null) return refused("The record's place in a register is broken.");
+  return { ok: true, record: { case: record.case, findings: record.findings, filing } };
 }
 
 function shortly(value: unknown): string {

@@ -3,12 +3,12 @@ import { type Before, formOf, workingsShown } from "../case/form.js";
 import { type Fault, readCase } from "../case/read.js";
 import { type SavedCase, titleOf } from "../files/cases.js";
 import type { DemoCase } from "../files/demos.js";
+import { timeText } from "../words/timeText.js";
 import { abandoned } from "./abandoned.js";
 import { differences } from "./differences.js";
 import { type FindingsView, findingsView } from "./findingsView.js";
 import { type ListedFault, listFaults, type Places, placeAt, placesOf } from "./places.js";
 import type { Services } from "./services.js";
-import { timeText } from "./timeText.js";
 
 /** Where the case on a page comes from, and so where its form goes. */
 export type Origin =

@@ -1,10 +1,10 @@
 import { type Response, Router, raw } from "express";
 import { readCaseText } from "../case/read.js";
+import { timeText } from "../words/timeText.js";
 import { renderCase } from "./casePage.js";
 import { refuse, tooLarge } from "./problems.js";
 import { type Sample, sampleOf } from "./sample.js";
 import type { Services } from "./services.js";
-import { timeText } from "./timeText.js";
 import { readUpload } from "./upload.js";
 
 /** The first page: what this is, cases to start from, cases that were saved, a file to open. */
