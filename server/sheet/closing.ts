@@ -1,4 +1,6 @@
+import { type Filing, filingText } from "../records/filing.js";
 import type { Caution, Findings } from "../screening/findings.js";
+import { timeText } from "../words/timeText.js";
 import { drawLine, lineHeight } from "./lines.js";
 import {
   type Cursor,
@@ -40,7 +42,12 @@ export function writeCautions(cursor: Cursor, cautions: readonly Caution[], find
 }
 
 /** Space for two people to put their names to what they have read. */
-export function writeSignatures(cursor: Cursor, preparedBy: string | null, digest: string): void {
+export function writeSignatures(
+  cursor: Cursor,
+  preparedBy: string | null,
+  digest: string,
+  filing: Filing | undefined,
+): void {
   heading(cursor, "Preparation and review", 210);
   signatureBlock(cursor, "Prepared by", `Name as typed, not verified: ${preparedBy ?? "not given"}`, [
     "Name",
@@ -61,6 +68,21 @@ export function writeSignatures(cursor: Cursor, preparedBy: string | null, diges
     styles.small,
   );
   paragraph(cursor, digest, styles.body);
+  if (filing !== undefined) writeFiling(cursor, filing);
+}
+
+/** Who holds this paper can tell whether the register it names was rewritten since. */
+function writeFiling(cursor: Cursor, filing: Filing): void {
+  const { number, supersedes } = filing;
+  subheading(cursor, "Place in the register");
+  const place = `Filed as ${filingText(filing)}, at ${timeText(filing.filedAt)}. It supersedes ${supersedes === null ? "no sheet" : `No. ${supersedes}`}.`;
+  paragraph(cursor, place, styles.body);
+  const before =
+    number === 1
+      ? "No entry stands before it; zeros stand for its digest"
+      : `SHA-256 of the entry before it, No. ${number - 1}`;
+  paragraph(cursor, `${before}:`, styles.small, { after: 0 });
+  paragraph(cursor, filing.previousDigest, styles.body);
 }
 
 function signatureBlock(cursor: Cursor, title: string, remark: string, lines: readonly string[]): void {

@@ -1,3 +1,4 @@
+import { type Filing, filingText } from "../records/filing.js";
 import { noticeFirstSentence } from "../screening/notice.js";
 import { drawLine, lineHeight, shorten, widthOf } from "./lines.js";
 import { type Cursor, ink, rule, styles } from "./page.js";
@@ -7,6 +8,7 @@ export interface Running {
   readonly record: string | null;
   readonly program: string;
   readonly digest: string;
+  readonly filing: Filing | undefined;
 }
 
 /** Puts head and foot on every page, once the number of pages is known. */
@@ -42,6 +44,8 @@ function foot(cursor: Cursor, running: Running, pages: string): void {
     weight: "strong",
   });
   const below = y + 4 + lineHeight(styles.small);
-  drawLine(pdf, `${running.program} · case ${running.digest.slice(0, 12)}`, left, below, styles.label);
+  const filed = running.filing === undefined ? "" : `${filingText(running.filing)} · `;
+  const origin = `${filed}${running.program} · case ${running.digest.slice(0, 12)}`;
+  drawLine(pdf, origin, left, below, styles.label);
   drawLine(pdf, pages, left + width - widthOf(pages, styles.label), below, styles.label);
 }

@@ -1,6 +1,8 @@
 import type { Figure } from "../charts/figure.js";
+import { type Filing, filingText } from "../records/filing.js";
 import type { Findings, TmradFindings } from "../screening/findings.js";
 import { differenceText, durationText, temperatureText } from "../words/numbers.js";
+import { timeText } from "../words/timeText.js";
 import { writeNotice, writeStop } from "./boxes.js";
 import { drawPicture } from "./figures.js";
 import { writeFrontCautions } from "./frontCautions.js";
@@ -21,14 +23,17 @@ export interface TitleBlock {
     | undefined;
 }
 
+/** What stands on page one. */
+export interface Front {
+  readonly document: TitleBlock;
+  readonly findings: Findings;
+  readonly filing: Filing | undefined;
+  readonly picture: Figure | null;
+}
+
 /** Page one, which must be enough for someone who reads nothing else. */
-export function writeFront(
-  cursor: Cursor,
-  block: TitleBlock,
-  findings: Findings,
-  picture: Figure | null,
-): void {
-  writeTitle(cursor, block, findings);
+export function writeFront(cursor: Cursor, { document, findings, filing, picture }: Front): void {
+  writeTitle(cursor, document, findings, filing);
   writeNotice(cursor, findings.notice);
   writeStop(cursor, findings);
   if (picture !== null) drawPicture(cursor, picture, roomForPicture(cursor, findings));
@@ -38,7 +43,7 @@ export function writeFront(
   }
   cursor.y += 3;
   facts(cursor, keyFacts(findings), 4);
-  writeFrontCautions(cursor, findings.cautions);
+  writeFrontCautions(cursor, findings);
 }
 
 /** So long may a sentence be before it takes the room of another. */
@@ -53,7 +58,7 @@ function roomForPicture(cursor: Cursor, findings: Findings): number {
   return cursor.bottom - cursor.y - belowPicture.words - lines * belowPicture.warning;
 }
 
-function writeTitle(cursor: Cursor, block: TitleBlock, findings: Findings): void {
+function writeTitle(cursor: Cursor, block: TitleBlock, findings: Findings, filing: Filing | undefined): void {
   const { pdf } = cursor;
   pdf.outline.addItem("Summary");
   const shown = clip(block.title, cursor.width, styles.title, 2);
@@ -85,9 +90,18 @@ function writeTitle(cursor: Cursor, block: TitleBlock, findings: Findings): void
         label: "Digest of the case, SHA-256, first 12 of 64",
         value: findings.digest.slice(0, 12),
       },
+      ...(filing === undefined ? [] : filingFacts(filing)),
     ],
     3,
   );
+}
+
+function filingFacts(filing: Filing): Fact[] {
+  return [
+    { label: "Filed as", value: filingText(filing) },
+    { label: "Supersedes", value: filing.supersedes === null ? "no sheet" : `No. ${filing.supersedes}` },
+    { label: "Filed at", value: timeText(filing.filedAt) },
+  ];
 }
 
 interface Fact {

@@ -1,7 +1,7 @@
-import type { Caution } from "../screening/findings.js";
+import type { Caution, Findings } from "../screening/findings.js";
 import { lineHeight, shorten, wrap } from "./lines.js";
 import { type Cursor, paragraph, styles } from "./page.js";
-import { levelMeanings, levelNames } from "./sentences.js";
+import { levelMeanings, levelNames, stopSentence } from "./sentences.js";
 
 const indent = 8;
 const after = 2;
@@ -10,9 +10,10 @@ const after = 2;
  * Warnings in words where the page has the room, else the first line of each, at last only codes; notes by
  * code. All of them stand in words further on.
  */
-export function writeFrontCautions(cursor: Cursor, cautions: readonly Caution[]): void {
+export function writeFrontCautions(cursor: Cursor, findings: Findings): void {
+  const { cautions } = findings;
   if (cautions.every((caution) => caution.level !== "stop")) {
-    paragraph(cursor, "No stop was raised. That does not make the step safe.", styles.strong, { after });
+    paragraph(cursor, stopSentence(findings), styles.strong, { after });
   }
   const warnings = cautions.filter((caution) => caution.level === "warn");
   const notes = cautions.filter((caution) => caution.level === "note");

@@ -1,5 +1,6 @@
 import type { Figure } from "../charts/figure.js";
 import { attachRecord, recordBytes } from "../records/attach.js";
+import type { Filing } from "../records/filing.js";
 import type { Findings } from "../screening/findings.js";
 import type { CaseModel } from "../screening/model.js";
 import { writeCautions, writeSignatures } from "./closing.js";
@@ -19,6 +20,8 @@ export interface SheetInput {
   readonly model: CaseModel;
   readonly findings: Findings;
   readonly paper: Paper;
+  /** where it stands in the register; left out of a sheet that is only printed */
+  readonly filing?: Filing;
 }
 
 /**
@@ -26,7 +29,7 @@ export interface SheetInput {
  * working, cautions and space to sign. The same input gives the same bytes (of one version of Node,
  * whose zlib packs them).
  */
-export async function renderSheet({ document, model, findings, paper }: SheetInput): Promise<Buffer> {
+export async function renderSheet({ document, model, findings, paper, filing }: SheetInput): Promise<Buffer> {
   const program = `${findings.program.name} ${findings.program.version}`;
   const record = document.batch?.record ?? null;
   const pdf = openDocument(paper, {
@@ -38,7 +41,7 @@ export async function renderSheet({ document, model, findings, paper }: SheetInp
   const figures = drawableFigures(findings);
   const picture = pictureOf(figures);
   const cursor = startPages(pdf);
-  writeFront(cursor, document, findings, picture);
+  writeFront(cursor, { document, findings, filing, picture });
   newPage(cursor);
   writeInputs(cursor, document, model.inputs);
   writeInputWorkings(cursor, findings.workings);
@@ -48,15 +51,16 @@ export async function renderSheet({ document, model, findings, paper }: SheetInp
   for (const figure of others) drawFigure(cursor, figure);
   writeWorking(cursor, model, findings);
   writeCautions(cursor, findings.cautions, findings);
-  writeSignatures(cursor, document.batch?.preparedBy ?? null, findings.digest);
+  writeSignatures(cursor, document.batch?.preparedBy ?? null, findings.digest, filing);
   cursor.parent.end();
   writeRunning(cursor, {
     title: document.title,
     record,
     program,
     digest: findings.digest,
+    filing,
   });
-  attachRecord(pdf, recordBytes(document, findings));
+  attachRecord(pdf, recordBytes(document, findings, filing));
   return closeDocument(pdf);
 }
 

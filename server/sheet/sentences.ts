@@ -116,6 +116,9 @@ export function actSentence(findings: Findings): string {
 /** What stands or does not stand against using the result. */
 export function stopSentence(findings: Findings): string {
   const count = findings.cautions.filter((caution) => caution.level === "stop").length;
+  if (count === 0 && findings.failures === null) {
+    return "No stop was raised by what was assessed; cooling failures were not simulated.";
+  }
   if (count === 0) return "No stop was raised. That does not make the step safe.";
   return count === 1 ? "A stop stands." : `${count} stops stand.`;
 }

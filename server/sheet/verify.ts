@@ -58,6 +58,7 @@ export async function verifySheet(file: Buffer, recompute: Recompute): Promise<V
     document: read.document,
     model: read.model,
     findings: stated,
+    ...(record.filing === undefined ? {} : { filing: record.filing }),
   });
   checks.push(
     difference === null

@@ -21,7 +21,7 @@ describe("the record in a PDF", () => {
   test("comes out as it went in", async () => {
     expect(extractRecord(await pdfWith(canonical))).toEqual({
       ok: true,
-      record: { case: record.case, findings: record.findings },
+      record: { case: record.case, findings: record.findings, filing: undefined },
     });
   });
 
@@ -46,6 +46,10 @@ describe("the record in a PDF", () => {
       [Buffer.from("[]"), "does not say of which format"],
       [Buffer.from('{"format":"thermal-window/record-1"}'), "lacks its case or its findings"],
       [Buffer.from('{"format":7}'), "another format (7)"],
+      [
+        Buffer.from('{"case":1,"filing":{"number":0},"findings":1,"format":"thermal-window/record-1"}'),
+        "place in a register is broken",
+      ],
     ] as const) {
       const extracted = extractRecord(await pdfWith(bytes));
       expect(extracted.ok ? "accepted" : extracted.fault).toContain(fault);

@@ -7,6 +7,7 @@ import { screen } from "../../server/screening/screen.js";
 import { renderSheet } from "../../server/sheet/render.js";
 import { type Recompute, verifySheet } from "../../server/sheet/verify.js";
 import { inventedDocument } from "./invented.js";
+import { pageTexts } from "./readPdf.js";
 
 // Quick findings keep these tests fast; verification compares whatever it is given the means to recompute.
 const recompute: Recompute = (model, digest) => screen(model, { digest, depth: "quick" });
@@ -51,6 +52,25 @@ describe("a sheet verifies", () => {
       ]);
       expect(verified).toBe(true);
     }
+  });
+
+  test("when it was filed, with its place in the register printed on it", async () => {
+    const filing = {
+      number: 12,
+      revision: 2,
+      supersedes: 7,
+      filedAt: "2026-01-02T03:04:05.000Z",
+      previousDigest: "ab".repeat(32),
+    };
+    const filed = await renderSheet({ ...honest, filing });
+    expect((await verify(filed)).verified).toBe(true);
+    const pages = await pageTexts(filed);
+    for (const text of ["No. 12, revision 2", "No. 7"]) expect(pages[0]).toContain(text);
+    expect(pages.at(-1)).toContain(filing.previousDigest);
+    for (const page of pages) expect(page).toContain("No. 12, revision 2");
+    const moved = { ...filing, number: 13 };
+    const forged = await withRecord(filed, recordBytes(honest.document, honest.findings, moved));
+    expect((await verify(forged)).verified).toBe(false);
   });
 
   test("by its record alone as far as inputs and findings go", async () => {
