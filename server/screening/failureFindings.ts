@@ -6,17 +6,20 @@ import type { Step } from "../thermal/step.js";
 import { failureCautions, unfollowed, withoutKinetics } from "./cautions/failures.js";
 import type { Caution, FailureFindings } from "./findings.js";
 import type { FailureModel } from "./model.js";
+import { ignored, type Progress } from "./progress.js";
 
 /**
  * Simulates and judges the failures of a case.
  *
  * @param step at the estimates
  * @param failures of the case, in its order
+ * @param onProgress told before each of them
  * @returns findings in the same order, null where the case has no kinetics to simulate; with their cautions
  */
 export function failureFindings(
   step: Step,
   failures: readonly FailureModel[],
+  onProgress: Progress = ignored,
 ): { readonly failures: FailureFindings[] | null; readonly cautions: Caution[] } {
   const { rate } = step.reaction;
   if (failures.length === 0) return { failures: [], cautions: [] };
@@ -25,6 +28,7 @@ export function failureFindings(
   const findings: FailureFindings[] = [];
   const cautions: Caution[] = [];
   failures.forEach((failure, i) => {
+    onProgress(i / failures.length);
     const pointer = `/failures/${i}`;
     const temperature = failure.startTemperature ?? step.reaction.temperature;
     const vessel = vessels.get(temperature) ?? createVessel(step, rate, temperature);

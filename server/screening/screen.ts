@@ -19,6 +19,7 @@ import { type KnownRates, knownRates } from "./known.js";
 import { measuredCautions, measuredFindings, measuredOf, withMeasured } from "./measured.js";
 import type { CaseModel } from "./model.js";
 import { notice } from "./notice.js";
+import { ignored, type Progress, partOf } from "./progress.js";
 import { rateFindings } from "./rateFindings.js";
 import { estimates, realise } from "./realise.js";
 import {
@@ -37,16 +38,20 @@ export interface ScreenOptions {
   readonly digest: string;
   /** quick: everything but failures and draws */
   readonly depth: "quick" | "full";
+  /** called now and then with the part that is done, 0 to 1 and never falling; what it throws ends the work */
+  readonly onProgress?: Progress;
 }
 
 /**
  * Screens a parsed case.
  *
  * @param model parsed case, SI
- * @param options digest of the case and depth of the work
+ * @param options digest of the case, depth of the work, progress
  * @returns findings: every number finite or null
  */
 export function screen(model: CaseModel, options: ScreenOptions): Findings {
+  const { onProgress = ignored } = options;
+  onProgress(0);
   const known = withMeasured(model, knownRates(model));
   const step = realise(model, known, estimates);
   const study = studyOf(step, "draws");
@@ -66,9 +71,15 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
   const cooling = dosing === null ? null : coolingFindings(step, dosing);
   const full = options.depth === "full";
   const allowed = rate === null ? null : temperatureWindow(study);
-  const drawn = full ? drawnFindings(model, known, { study, window: allowed, td24: t24 }) : null;
+  onProgress(partDone.estimates);
+  const nominal = { study, window: allowed, td24: t24 };
+  const drawn = full
+    ? drawnFindings(model, known, nominal, {
+        onProgress: partOf(onProgress, partDone.estimates, partDone.draws),
+      })
+    : null;
   const window = allowed === null ? null : windowWithDraws(windowFindings(study, allowed, full), drawn);
-  const failed = full ? failureFindings(step, model.failures) : null;
+  const failed = full ? failureFindings(step, model.failures, partOf(onProgress, partDone.draws, 1)) : null;
   const criticality: Findings["criticality"] = {
     class: mtsr === null || t24 === null ? null : criticalityClass(process, mtsr, temperatures.mtt_K, t24),
     probability: drawn?.criticalityProbability ?? null,
@@ -111,6 +122,9 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
     cautions: byLevel(cautions),
   };
 }
+
+/** What is done of a full screening after its first two parts, by the time that they usually take. */
+const partDone = { estimates: 0.05, draws: 0.6 };
 
 /** Temperatures over which curves are drawn: the study, and what the case can reach. */
 function curveSpan(step: Step, mtsr: number | null, t24: number | null): readonly [number, number] {
