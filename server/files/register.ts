@@ -1,9 +1,9 @@
 import { digestOf } from "../case/canonical.js";
+import type { Filing } from "../records/filing.js";
 import {
   digestOfFile,
   entryOf,
   entryText,
-  type FilingPlace,
   ownFiles,
   places,
   type ReviewEntry,
@@ -22,7 +22,7 @@ export interface SheetToFile {
   /** number of the sheet that this one is to supersede; null where there is said to be none */
   readonly supersedes: number | null;
   /** Draws the sheet for a place; called again where another process took the number meanwhile. */
-  readonly draw: (place: FilingPlace) => Promise<DrawnSheet>;
+  readonly draw: (place: Filing) => Promise<DrawnSheet>;
 }
 
 export interface DrawnSheet {
@@ -124,16 +124,17 @@ export function register(storage: Storage, now: () => Date = () => new Date()): 
         const known = await fresh();
         const standing = known.standing(sheet.facts.record, sheet.facts.step);
         if ((standing?.number ?? null) !== sheet.supersedes) return { filed: false, standing };
-        const place: FilingPlace = {
+        const place: Filing = {
           number: known.last() + 1,
           revision: (standing?.revision ?? 0) + 1,
           supersedes: sheet.supersedes,
+          filedAt: now().toISOString(),
           previousDigest: known.lastDigest(),
         };
         const drawn = await sheet.draw(place);
         // Before anything is written: drawing takes long, and the number may have gone meanwhile.
         if ((await fresh()).last() >= place.number) continue;
-        const entry = sheetEntry(sheet, place, drawn, now());
+        const entry = sheetEntry(sheet, place, drawn);
         if (await fileWhole(storage, entry, drawn)) return { filed: true, entry };
       }
     });
@@ -174,11 +175,11 @@ export function register(storage: Storage, now: () => Date = () => new Date()): 
   };
 }
 
-function sheetEntry(sheet: SheetToFile, place: FilingPlace, drawn: DrawnSheet, time: Date): SheetEntry {
+function sheetEntry(sheet: SheetToFile, place: Filing, drawn: DrawnSheet): SheetEntry {
   return entryOf<SheetEntry>({
     kind: "sheet",
     number: place.number,
-    time: time.toISOString(),
+    time: place.filedAt,
     previous: place.previousDigest,
     ...sheet.facts,
     revision: place.revision,

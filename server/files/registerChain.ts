@@ -7,6 +7,7 @@ import {
   readEntry,
   type SheetEntry,
 } from "./registerEntry.js";
+import { contradictions } from "./registerFacts.js";
 import { entryNumbers } from "./registerStart.js";
 import type { Storage } from "./storage.js";
 
@@ -50,6 +51,8 @@ export async function checkChain(
     },
   );
   const faults = [...missing(found, upTo), ...wrongEntries(found, upTo), ...brokenLinks(found, upTo)];
+  const last = found.get(numbers.at(-1) ?? 0);
+  if (last !== undefined && last.number <= upTo) faults.push(...(await lastFaults(storage, last)));
   if (options.sheets) {
     const sheets = [...found.values()].flatMap((each) => (each.number > upTo ? [] : (sheetIn(each) ?? [])));
     await inGroups(sheets, async (sheet) => {
@@ -76,6 +79,19 @@ export async function sheetFaults(storage: Storage, sheet: SheetEntry): Promise<
     }
   }
   return faults;
+}
+
+/** Nothing follows from the last entry yet; where it is a sheet's, the sheet itself tells what it must say. */
+async function lastFaults(storage: Storage, last: Found): Promise<readonly string[]> {
+  const sheet = sheetIn(last);
+  const record = sheet === null ? null : await storage.readBytes(places.record(sheet));
+  if (sheet === null || record === null) return [];
+  const keys = contradictions(sheet, record);
+  return keys.length === 0
+    ? []
+    : [
+        `Entry ${last.number}, the last one, was changed: it does not agree with its sheet (${keys.join(", ")}).`,
+      ];
 }
 
 function missing(found: ReadonlyMap<number, Found>, upTo: number): string[] {

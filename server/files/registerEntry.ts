@@ -7,6 +7,9 @@ const digest = z.string().regex(/^[0-9a-f]{64}$/);
 const number = z.int().positive();
 const line = z.string();
 
+/** Of the case that was screened, as its findings tell it. */
+export const criticalityClass = z.literal([1, 2, 3, 4, 5, "none"]).nullable();
+
 const common = {
   format: z.literal(format),
   number,
@@ -23,7 +26,7 @@ const facts = {
   vessel: line.nullable(),
   preparedBy: line.nullable(),
   /** criticality class; null: not assessed */
-  class: z.union([z.literal([1, 2, 3, 4, 5, "none"]), z.null()]),
+  class: criticalityClass,
   stop: z.boolean(),
   program: z.strictObject({ name: line, version: line }),
 };
@@ -77,15 +80,6 @@ export type RegisterEntry = SheetEntry | ReviewEntry | VoidEntry;
 
 /** What an entry tells of its sheet, taken from the case and its findings. */
 export type SheetFacts = Pick<SheetEntry, keyof typeof facts>;
-
-/** Where a sheet stands in the register. It is printed on the sheet, so that paper copies hold the chain. */
-export interface FilingPlace {
-  readonly number: number;
-  readonly revision: number;
-  readonly supersedes: number | null;
-  /** 64 hexadecimal digits */
-  readonly previousDigest: string;
-}
 
 /** What stands for the entry before the first one. */
 export const noEntry = "0".repeat(64);

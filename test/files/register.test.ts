@@ -42,10 +42,11 @@ describe("filing a sheet", () => {
     const first = await filed(sheets);
     const second = await filed(sheets, {}, first.number);
     const pdf = (await sheets.pdf(second))?.toString() ?? "";
-    expect(JSON.parse(pdf.slice(5)).place).toEqual({
+    expect(JSON.parse(pdf.slice(5)).filing).toEqual({
       number: 2,
       revision: 2,
       supersedes: 1,
+      filedAt: second.time,
       previousDigest: second.previous,
     });
     expect(second.digests.pdf).toBe(sha256(pdf));
@@ -53,11 +54,8 @@ describe("filing a sheet", () => {
   });
 
   test("carries the time of the clock, the facts and unreviewed", async () => {
-    const entry = await filed(register(memoryStorage(), ticking()), {
-      stop: true,
-      class: "none",
-      vessel: null,
-    });
+    const told = { stop: true, class: "none", vessel: " " } as const;
+    const entry = await filed(register(memoryStorage(), ticking()), told);
     expect(entry).toMatchObject({
       time: "2026-01-01T00:00:00.000Z",
       record: "B-0001",
@@ -81,7 +79,7 @@ describe("filing a sheet", () => {
     const sheets = register(memoryStorage(), ticking());
     await filed(sheets, { step: "Step 1" });
     expect(await filed(sheets, { step: "Step 2" })).toMatchObject({ revision: 1, supersedes: null });
-    expect(await filed(sheets, { step: null })).toMatchObject({ revision: 1, supersedes: null });
+    expect(await filed(sheets, { step: "" })).toMatchObject({ revision: 1, supersedes: null });
   });
 
   test("over a sheet that was superseded meanwhile is refused and shows the one that stands", async () => {

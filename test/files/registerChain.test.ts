@@ -125,6 +125,26 @@ describe("the chain of entries", () => {
   });
 });
 
+describe("the last entry", () => {
+  test.each([
+    ['"class":2', '"class":1', "class"],
+    ['"stop":false', '"stop":true', "stop"],
+    ['"revision":1', '"revision":2', "revision"],
+    ['"time":"2026', '"time":"2025', "time"],
+    ['"title":"Coupling', '"title":"Uncoupling', "title"],
+    [/"previous":"[0-9a-f]{4}/, '"previous":"0000', "previous"],
+    [/"findings":"[0-9a-f]{4}/, '"findings":"0000', "digests"],
+  ])("is held against its own sheet: %s", async (from, to, key) => {
+    const { storage } = await seven();
+    await storage.remove(places.entry(7));
+    await edit(storage, 6, from, to);
+    const { faults } = await checkChain(storage);
+    expect(faults).toContain(
+      `Entry 6, the last one, was changed: it does not agree with its sheet (${key}).`,
+    );
+  });
+});
+
 describe("the files of the sheets", () => {
   test("one changed byte of a PDF, and a record that was removed, are named with their sheet", async () => {
     const { storage, sheets } = await seven();

@@ -1,29 +1,45 @@
-import { canonicalJson } from "../../server/case/canonical.js";
+import { canonicalJson, digestOf } from "../../server/case/canonical.js";
 import type { SheetToFile } from "../../server/files/register.js";
 import type { SheetFacts } from "../../server/files/registerEntry.js";
+import { factsOf } from "../../server/files/registerFacts.js";
+import { recordFormat } from "../../server/records/attach.js";
 
-/** What a sheet of no substance tells of itself; all of it invented. */
-export const someFacts: SheetFacts = {
-  record: "B-0001",
-  step: "Step 2, coupling",
-  title: "Coupling in the large vessel",
-  vessel: "V-7",
-  preparedBy: "A. Example",
-  class: 2,
-  stop: false,
-  program: { name: "thermal-window", version: "0.0.0" },
-};
+/** What a sheet of no substance may tell of itself. */
+export interface Told {
+  readonly record?: string;
+  readonly step?: string;
+  readonly title?: string;
+  readonly vessel?: string;
+  readonly class?: SheetFacts["class"];
+  readonly stop?: boolean;
+}
 
-/** A sheet whose bytes are cheap: they hold its place, as a real one's do, and nothing else. */
-export function plainSheet(facts: Partial<SheetFacts> = {}, supersedes: number | null = null): SheetToFile {
-  const findings = { invented: true, ...facts };
+/**
+ * A sheet of no substance, invented and cheap: its record holds what the register looks at, and its PDF only
+ * the record.
+ */
+export function plainSheet(told: Told = {}, supersedes: number | null = null): SheetToFile {
+  const document = {
+    title: told.title ?? "Coupling in the large vessel",
+    batch: {
+      record: told.record ?? "B-0001",
+      step: told.step ?? "Step 2, coupling",
+      vessel: told.vessel ?? "V-7",
+      preparedBy: "A. Example",
+    },
+  };
+  const findings = {
+    criticality: { class: told.class === undefined ? (2 as const) : told.class },
+    cautions: told.stop ? [{ level: "stop" }] : [],
+    program: { name: "thermal-window", version: "0.0.0" },
+  };
   return {
-    facts: { ...someFacts, ...facts },
-    caseDigest: "c".repeat(64),
+    facts: factsOf(document, findings),
+    caseDigest: digestOf(document),
     findings,
     supersedes,
-    draw: async (place) => {
-      const text = canonicalJson({ place, findings });
+    draw: async (filing) => {
+      const text = canonicalJson({ format: recordFormat, case: document, findings, filing });
       return { pdf: Buffer.from(`%PDF ${text}`), record: Buffer.from(text) };
     },
   };
