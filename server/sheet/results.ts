@@ -17,7 +17,7 @@ import { table } from "./table.js";
 
 /** The findings in tables; every figure rounded towards caution, the full digits are in the attached record. */
 export function writeResults(cursor: Cursor, findings: Findings): void {
-  heading(cursor, "Findings");
+  heading(cursor, "Findings", 190);
   paragraph(
     cursor,
     "Shown figures are rounded towards caution: times, T_D24 and the window's upper end down, MTSR and its lower end up. The attached record keeps full precision.",

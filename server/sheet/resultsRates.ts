@@ -1,5 +1,5 @@
 import type { Findings, Percentiles, RateFindings } from "../screening/findings.js";
-import { differenceText, durationText, numberText, temperatureText } from "../words/numbers.js";
+import { differenceText, durationText, numberText, percentText, temperatureText } from "../words/numbers.js";
 import { findingTable, shown } from "./findingTable.js";
 import { type Cursor, paragraph, styles, subheading } from "./page.js";
 import { table } from "./table.js";
@@ -75,9 +75,10 @@ export function writeUncertainty(cursor: Cursor, findings: Findings): void {
   paragraph(cursor, `${found.draws} draws from the stated standard errors, seed ${found.seed}.`, styles.body);
   const row = (name: string, values: Percentiles | null, text: (value: number) => string) => [
     name,
-    shown(values?.p05, text),
-    shown(values?.p50, text),
-    shown(values?.p95, text),
+    ...[values?.p05, values?.p50, values?.p95].map((value) =>
+      // In draws without a window there is no end of one, which is not the same as not having looked.
+      values !== null && value === null ? "none" : shown(value, text),
+    ),
   ];
   table(
     cursor,
@@ -90,6 +91,9 @@ export function writeUncertainty(cursor: Cursor, findings: Findings): void {
     [
       row("T_D24", found.td24_K, (kelvin) => temperatureText(kelvin, "down")),
       row("MTSR", found.mtsr_K, (kelvin) => temperatureText(kelvin, "up")),
+      row("TMRad from the process temperature", found.timeToMaximumRateAtProcess_s, durationText),
+      row("TMRad from MTSR", found.timeToMaximumRateAtMtsr_s, durationText),
+      row("Cooling duty over capacity", found.coolingUse, (part) => percentText(part, "up")),
       row("Window, upper end", found.upper_K, (kelvin) => temperatureText(kelvin, "down")),
       row("Least time to act", found.timeToAct_s, durationText),
     ],
