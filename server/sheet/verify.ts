@@ -6,7 +6,7 @@ import type { Findings } from "../screening/findings.js";
 import type { CaseModel } from "../screening/model.js";
 import { numberText } from "../words/numbers.js";
 import { program } from "../words/program.js";
-import { renderSheet } from "./render.js";
+import { renderSheet, type SheetInput } from "./render.js";
 
 /** One thing that was checked, in one plain sentence. */
 interface Check {
@@ -24,13 +24,21 @@ export interface Verification {
 /** Computes the findings of a case in full; in a worker where one is at hand. */
 export type Recompute = (model: CaseModel, digest: string) => Findings | Promise<Findings>;
 
+/** Prints a sheet; in a worker where one is at hand. */
+export type Print = (input: SheetInput) => Promise<Buffer>;
+
 /**
  * Whether a sheet still follows from its own inputs: takes the record out, recomputes the findings from
  * the case, prints the sheet again, and compares. A record on its own, as JSON, is checked without pages.
  *
  * @param file a PDF or the JSON text of a record
+ * @param print draws the sheet again, to be compared
  */
-export async function verifySheet(file: Buffer, recompute: Recompute): Promise<Verification> {
+export async function verifySheet(
+  file: Buffer,
+  recompute: Recompute,
+  print: Print = renderSheet,
+): Promise<Verification> {
   const isRecord = file.subarray(0, 1).toString("latin1") === "{";
   const extracted = isRecord ? parseRecord(file) : extractRecord(file);
   if (!extracted.ok) return verdict([{ name: "record", passed: false, sentence: extracted.fault }]);
@@ -54,12 +62,9 @@ export async function verifySheet(file: Buffer, recompute: Recompute): Promise<V
   // The pages can only be judged against findings that are known to be right.
   if (isRecord || !again.passed) return verdict(checks);
   const stated: Findings = { ...findings, program: programOf(record) };
-  const difference = await pagesDifference(file, {
-    document: read.document,
-    model: read.model,
-    findings: stated,
-    ...(record.filing === undefined ? {} : { filing: record.filing }),
-  });
+  const filing = record.filing === undefined ? {} : { filing: record.filing };
+  const input = { document: read.document, model: read.model, findings: stated, ...filing };
+  const difference = await pagesDifference(file, input, print);
   checks.push(
     difference === null
       ? passed("pages", "Every page is printed exactly as the program prints it.")
@@ -120,8 +125,9 @@ function valueAt(value: unknown, key: string): unknown {
 
 async function pagesDifference(
   file: Buffer,
-  input: Omit<Parameters<typeof renderSheet>[0], "paper">,
+  input: Omit<SheetInput, "paper">,
+  print: Print,
 ): Promise<string | null> {
   const paper = file.includes("/MediaBox [0 0 612 792]", 0, "latin1") ? "Letter" : "A4";
-  return printDifference(file, await renderSheet({ ...input, paper }));
+  return printDifference(file, await print({ ...input, paper }));
 }
