@@ -48,7 +48,7 @@ export async function backUp(from: Storage, to: Storage, begun: Date): Promise<B
   );
   await inGroups([...entries], ([number, content]) => to.write(places.entry(number), content));
   const cases = await copyCases(from, to);
-  const { faults } = await checkChain(to, { sheets: true });
+  const { faults } = await checkChain(to, { sheet: "all" });
   const last = entries.get(numbers.at(-1) ?? 0);
   const backup: Backup = {
     format: "thermal-window/backup-1",

@@ -1,5 +1,6 @@
 import { digestOf } from "../case/canonical.js";
 import type { Filing } from "../records/filing.js";
+import { type ChainCheck, type ChainScope, checkChain } from "./registerChain.js";
 import {
   digestOfFile,
   entryOf,
@@ -55,6 +56,8 @@ export interface Register {
   /** The PDF or the record of a sheet; null where it is gone or is not what was filed. */
   pdf(sheet: SheetEntry): Promise<Buffer | null>;
   record(sheet: SheetEntry): Promise<Buffer | null>;
+  /** Whether the chain of entries is whole, as `checkChain`. */
+  check(scope: ChainScope): Promise<ChainCheck>;
 }
 
 /** Files read at once. */
@@ -163,7 +166,9 @@ export function register(storage: Storage, now: () => Date = () => new Date()): 
   return {
     start: async () => {
       const report = await setTornAside(storage, now);
-      for (const folder of [places.entries, places.sheets, places.aside]) await storage.sweep(folder);
+      // What a killed process left is in nobody's way; a disk that refuses must not keep the register closed.
+      const folders = [places.entries, places.sheets, places.aside];
+      await Promise.allSettled(folders.map(storage.sweep));
       await fresh();
       return report;
     },
@@ -171,6 +176,7 @@ export function register(storage: Storage, now: () => Date = () => new Date()): 
     file,
     review,
     pdf: (sheet) => unchanged(storage, places.pdf(sheet), sheet.digests.pdf),
+    check: (scope) => checkChain(storage, scope),
     record: (sheet) => unchanged(storage, places.record(sheet), sheet.digests.record),
   };
 }

@@ -19,6 +19,14 @@ export interface ChainCheck {
   readonly faults: readonly string[];
 }
 
+/** What of a register is looked at. */
+export interface ChainScope {
+  /** the entry whose standing matters, also against those after it; all entries unless given */
+  readonly upTo?: number;
+  /** whose files are read too and compared with their digests: one sheet by its number, or all; none unless given */
+  readonly sheet?: number | "all";
+}
+
 interface Found {
   readonly number: number;
   readonly digest: string;
@@ -30,16 +38,10 @@ const together = 32;
 
 /**
  * Follows the chain of entries from the first one, each of which carries the digest of the one before.
- *
- * @param options.upTo the entry whose standing matters, also against the one after it; all unless given
- * @param options.sheets also reads the two files of every sheet and compares them with their digests
  */
-export async function checkChain(
-  storage: Storage,
-  options: { readonly upTo?: number; readonly sheets?: boolean } = {},
-): Promise<ChainCheck> {
+export async function checkChain(storage: Storage, scope: ChainScope = {}): Promise<ChainCheck> {
   const numbers = await entryNumbers(storage);
-  const upTo = Math.min(options.upTo ?? Number.POSITIVE_INFINITY, numbers.at(-1) ?? 0);
+  const upTo = Math.min(scope.upTo ?? Number.POSITIVE_INFINITY, numbers.at(-1) ?? 0);
   const found = new Map<number, Found>();
   await inGroups(
     numbers.filter((number) => number <= upTo + 2),
@@ -53,17 +55,18 @@ export async function checkChain(
   const faults = [...missing(found, upTo), ...wrongEntries(found, upTo), ...brokenLinks(found, upTo)];
   const last = found.get(numbers.at(-1) ?? 0);
   if (last !== undefined && last.number <= upTo) faults.push(...(await lastFaults(storage, last)));
-  if (options.sheets) {
-    const sheets = [...found.values()].flatMap((each) => (each.number > upTo ? [] : (sheetIn(each) ?? [])));
-    await inGroups(sheets, async (sheet) => {
-      faults.push(...(await sheetFaults(storage, sheet)));
-    });
-  }
+  const sheets = [...found.values()].flatMap((each) => {
+    const wanted = each.number <= upTo && (scope.sheet === "all" || scope.sheet === each.number);
+    return (wanted ? sheetIn(each) : null) ?? [];
+  });
+  await inGroups(sheets, async (sheet) => {
+    faults.push(...(await sheetFaults(storage, sheet)));
+  });
   return { upTo, faults };
 }
 
 /** Why the two files of a sheet are not what was filed, one sentence each; none: they are. */
-export async function sheetFaults(storage: Storage, sheet: SheetEntry): Promise<readonly string[]> {
+async function sheetFaults(storage: Storage, sheet: SheetEntry): Promise<readonly string[]> {
   const files = [
     { name: "PDF", path: places.pdf(sheet), digest: sheet.digests.pdf },
     { name: "record", path: places.record(sheet), digest: sheet.digests.record },

@@ -25,16 +25,30 @@ export async function entryNumbers(storage: Storage): Promise<readonly number[]>
  */
 export async function setTornAside(storage: Storage, now: () => Date): Promise<readonly string[]> {
   const torn: { number: number; digest: string }[] = [];
+  const report: string[] = [];
   for (const number of (await entryNumbers(storage)).toReversed()) {
     const content = await storage.readBytes(places.entry(number));
     if (content === null || readEntry(content.toString("utf8")).state !== "torn") break;
-    if (await moved(storage, number, content)) torn.unshift({ number, digest: digestOfFile(content) });
+    try {
+      if (await moved(storage, number, content)) torn.unshift({ number, digest: digestOfFile(content) });
+    } catch {
+      return [`Entry ${number} is torn, and the disk refuses to have it set aside; nothing was changed.`];
+    }
   }
-  for (const { number, digest } of torn) await enterVoid(storage, number, digest, now());
-  return torn.map(
-    ({ number, digest }) =>
-      `Entry ${number} was torn and set aside as ${places.torn(number, digest)}; its number is void, and every entry before it is kept.`,
-  );
+  for (const { number, digest } of torn) {
+    const aside = `Entry ${number} was torn and set aside as ${places.torn(number, digest)}`;
+    const entered = await enterVoid(storage, number, digest, now()).then(
+      () => true,
+      () => false,
+    );
+    report.push(
+      entered
+        ? `${aside}; its number is void, and every entry before it is kept.`
+        : `${aside}; that its number is void could not be entered, for the disk refuses. Every entry before it is kept.`,
+    );
+    if (!entered) break;
+  }
+  return report;
 }
 
 /** Another process that starts at the same time may have done it, and put a whole entry in its place. */

@@ -114,7 +114,7 @@ test("a copy that was interrupted lists nothing that it does not hold, and does 
     },
   };
   await expect(backUp(storage, full, new Date())).rejects.toMatchObject({ code: "ENOSPC" });
-  expect((await checkChain(target, { sheets: true })).faults).toEqual([]);
+  expect((await checkChain(target, { sheet: "all" })).faults).toEqual([]);
   expect(await target.read(backupName)).toBeNull();
 });
 

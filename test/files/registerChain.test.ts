@@ -40,7 +40,7 @@ async function swap(storage: Storage, one: number, other: number): Promise<void>
 describe("the chain of entries", () => {
   test("is whole as it was filed, in all or up to any entry", async () => {
     const { storage } = await seven();
-    expect(await checkChain(storage, { sheets: true })).toEqual({ upTo: 7, faults: [] });
+    expect(await checkChain(storage, { sheet: "all" })).toEqual({ upTo: 7, faults: [] });
     expect(await checkChain(storage, { upTo: 4 })).toEqual({ upTo: 4, faults: [] });
     expect(await checkChain(memoryStorage())).toEqual({ upTo: 0, faults: [] });
   });
@@ -153,7 +153,7 @@ describe("the files of the sheets", () => {
     const pdf = (await storage.readBytes(places.pdf(second))) ?? Buffer.alloc(0);
     await storage.write(places.pdf(second), Buffer.from(pdf.map((byte, at) => (at === 9 ? byte ^ 1 : byte))));
     await storage.remove(places.record(third));
-    expect((await checkChain(storage, { sheets: true })).faults.toSorted()).toEqual([
+    expect((await checkChain(storage, { sheet: "all" })).faults.toSorted()).toEqual([
       "The PDF of sheet 2 was changed: its digest is not the one in entry 2.",
       "The record of sheet 3 is missing: it was removed.",
     ]);

@@ -45,7 +45,7 @@ describe("a disk that is full or refuses", () => {
     expect(await storage.list(places.entries)).toHaveLength(1);
     expect(await storage.list(places.sheets)).toHaveLength(2);
     expect(await sheets.file(plainSheet({ record: "B-2" }))).toMatchObject({ entry: { number: 2 } });
-    expect(await checkChain(storage, { sheets: true })).toEqual({ upTo: 2, faults: [] });
+    expect(await checkChain(storage, { sheet: "all" })).toEqual({ upTo: 2, faults: [] });
   });
 
   test("that refuses only after the entry took its name leaves the sheet filed and whole", async () => {
@@ -62,7 +62,19 @@ describe("a disk that is full or refuses", () => {
     );
     await expect(sheets.file(plainSheet())).rejects.toMatchObject({ code: "EIO" });
     expect((await sheets.fresh()).last()).toBe(1);
-    expect(await checkChain(storage, { sheets: true })).toEqual({ upTo: 1, faults: [] });
+    expect(await checkChain(storage, { sheet: "all" })).toEqual({ upTo: 1, faults: [] });
+  });
+
+  test("does not keep a register with a torn last entry closed", async () => {
+    const storage = memoryStorage();
+    await register(storage, ticking()).file(plainSheet());
+    await storage.write(places.entry(2), "{ half");
+    const unmoved = register({ ...storage, move: () => Promise.reject(refusal("EROFS")) }, ticking());
+    expect(await unmoved.start()).toEqual([expect.stringContaining("Entry 2 is torn, and the disk refuses")]);
+    expect((await unmoved.fresh()).sheets()).toHaveLength(1);
+    const moved = register(refusing(storage, 1, "ENOSPC"), ticking());
+    expect(await moved.start()).toEqual([expect.stringContaining("could not be entered")]);
+    expect((await moved.fresh()).last()).toBe(1);
   });
 
   test("a review that cannot be written is not entered", async () => {
@@ -109,7 +121,7 @@ test("a real disk of 1 MB fills up: everything filed before is whole, nothing is
     const again = register(storage, ticking());
     expect(await again.start()).toEqual([]);
     expect((await again.fresh()).sheets()).toHaveLength(filed);
-    expect(await checkChain(storage, { sheets: true, upTo: filed - 1 })).toEqual({
+    expect(await checkChain(storage, { sheet: "all", upTo: filed - 1 })).toEqual({
       upTo: filed - 1,
       faults: [],
     });

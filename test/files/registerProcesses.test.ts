@@ -53,7 +53,7 @@ test("500 sheets filed by four processes at once get 500 numbers, none twice, no
   const numbers = filings.flatMap(({ told }) => told().map(([number]) => number));
   expect(numbers.toSorted((a, b) => a - b)).toEqual(Array.from({ length: 500 }, (_, index) => index + 1));
   const storage = folderStorage(into);
-  expect(await checkChain(storage, { sheets: true })).toEqual({ upTo: 500, faults: [] });
+  expect(await checkChain(storage, { sheet: "all" })).toEqual({ upTo: 500, faults: [] });
   const sheets = (await register(storage).fresh()).sheets();
   const expected = ["A", "B", "C", "D"].flatMap((name) =>
     Array.from({ length: 125 }, (_, index) => `${name}-${index + 1}`),
@@ -89,7 +89,7 @@ test(`${kills} kills at random moments lose nothing that was filed and list noth
   const storage = folderStorage(into);
   const after = register(storage);
   expect(await after.start()).toEqual([]);
-  const { faults, upTo } = await checkChain(storage, { sheets: true });
+  const { faults, upTo } = await checkChain(storage, { sheet: "all" });
   expect(faults).toEqual([]);
   const listed = new Map(
     (await after.fresh()).sheets().map(({ sheet }) => [sheet.number, sheet.digests.pdf]),
