@@ -19,7 +19,10 @@ const log = pino({ level: "info" }, pino.destination({ fd: 2, sync: true }));
 const storage = folderStorage(settings.dataFolder);
 await storage.sweep("cases");
 
-const screener = threadedScreener();
+const screener = threadedScreener({
+  ceiling_s: settings.screenSeconds,
+  onTrouble: (error) => log.error({ err: error }),
+});
 const app = createApp(settings, {
   cases: caseStore(storage),
   demos: await readDemos(folderStorage(join(projectRoot, "scenarios"))),

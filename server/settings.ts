@@ -10,6 +10,8 @@ export interface Settings {
   readonly host: string;
   /** absolute */
   readonly dataFolder: string;
+  /** the longest that one screening, or one sheet, may take, s */
+  readonly screenSeconds: number;
 }
 
 export type ReadSettings =
@@ -29,7 +31,7 @@ function findRoot(folder: string): string {
   return findRoot(parent);
 }
 
-/** Reads PORT, HOST and DATA_DIR; every fault says what came and what would do. */
+/** Reads PORT, HOST, DATA_DIR and SCREEN_SECONDS; every fault says what came and what would do. */
 export function readSettings(environment: Readonly<Record<string, string | undefined>>): ReadSettings {
   const faults: string[] = [];
 
@@ -46,5 +48,14 @@ export function readSettings(environment: Readonly<Record<string, string | undef
 
   const dataFolder = resolve(projectRoot, environment.DATA_DIR?.trim() || "data");
 
-  return faults.length > 0 ? { ok: false, faults } : { ok: true, settings: { port, host, dataFolder } };
+  const secondsText = environment.SCREEN_SECONDS?.trim() || "30";
+  const screenSeconds = Number(secondsText);
+  if (!/^\d{1,4}$/.test(secondsText) || screenSeconds < 1 || screenSeconds > 3600) {
+    faults.push(
+      `SCREEN_SECONDS is "${secondsText}"; a whole number from 1 to 3600 would do, the longest that one screening may take, in seconds; 30 unless set.`,
+    );
+  }
+
+  if (faults.length > 0) return { ok: false, faults };
+  return { ok: true, settings: { port, host, dataFolder, screenSeconds } };
 }

@@ -1,6 +1,7 @@
 import type { ErrorRequestHandler, Request, Response } from "express";
 import type { Logger } from "pino";
 import type { Fault } from "../case/read.js";
+import { Unavailable } from "./unavailable.js";
 
 /** Why a request was not answered as asked; `faults` says which fields, as JSON pointers. */
 export interface Problem {
@@ -9,6 +10,11 @@ export interface Problem {
   readonly title: string;
   readonly detail: string;
   readonly faults: readonly Fault[];
+}
+
+/** Says when it is worth while to ask again. */
+export function tellWhen(response: Response, { retryAfter_s }: Unavailable): void {
+  if (retryAfter_s !== null) response.set("Retry-After", String(retryAfter_s));
 }
 
 /** Answers with a problem: programs get problem details (RFC 9457), people the error page. */
@@ -50,7 +56,8 @@ export function answerErrors(log: Logger): ErrorRequestHandler {
     if (response.headersSent) return next(error);
     if (response.closed) return;
     const problem = problemOf(error);
-    if (problem.status >= 500)
+    if (error instanceof Unavailable) tellWhen(response, error);
+    else if (problem.status >= 500)
       log.error({ err: error, method: request.method, path: request.originalUrl.split("?")[0] });
     refuse(request, response, problem);
   };
@@ -64,13 +71,8 @@ function problemOf(error: unknown): Problem {
   if (typeof status === "number" && status >= 400 && status < 500) {
     return withPointer(400, "Bad Request", "The request could not be read.");
   }
-  if (status === 503) {
-    return {
-      status: 503,
-      title: "Service Unavailable",
-      detail: "Too many screenings are under way. Try again in a minute.",
-      faults: [],
-    };
+  if (error instanceof Unavailable) {
+    return { status: 503, title: "Service Unavailable", detail: error.message, faults: [] };
   }
   return {
     status: 500,

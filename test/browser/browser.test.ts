@@ -12,7 +12,7 @@ import { measures } from "./measures.js";
 import { saving } from "./saving.js";
 import { workings } from "./workings.js";
 
-const screener = threadedScreener(built("server/web/screeningWorker.ts"));
+const screener = threadedScreener({ worker: built("server/web/screeningWorker.ts") });
 let server: Server;
 let browser: Browser;
 

@@ -4,7 +4,7 @@ import { directScreener, type ScreeningOrder, threadedScreener } from "../../ser
 import { built } from "../build.js";
 import { demoDocument } from "./testApp.js";
 
-const threaded = threadedScreener(built("server/web/screeningWorker.ts"));
+const threaded = threadedScreener({ worker: built("server/web/screeningWorker.ts") });
 afterAll(() => threaded.close());
 
 function order(name: string, depth: "quick" | "full", title?: string): ScreeningOrder {
@@ -39,8 +39,22 @@ describe("screening in threads", () => {
     expect(await threaded.screen(order("hydrolysis", "full", "Next"))).toMatchObject({ failures: [{}] });
   });
 
+  test("those who ask for the same case at once wait for one screening, and it ends with the last of them", async () => {
+    const same = order("acylation", "full", "Shared");
+    const [first, second] = [new AbortController(), new AbortController()];
+    const answers = [first, second].map(({ signal }) => threaded.screen(same, signal));
+    const [early, late] = answers.map((answer) => answer.then(String, (error: Error) => error.name));
+    expect(threaded.load()).toEqual({ running: 1, waiting: 0 });
+    first.abort();
+    expect(await early).toBe("AbortError");
+    expect(threaded.standing(same.digest)).not.toBeNull();
+    second.abort();
+    expect(await late).toBe("AbortError");
+    expect(threaded.standing(same.digest)).toBeNull();
+  });
+
   test("more work than can wait is refused with the status that says so", async () => {
-    const controllers = Array.from({ length: 60 }, () => new AbortController());
+    const controllers = Array.from({ length: 80 }, () => new AbortController());
     const outcomes = controllers.map(({ signal }, index) =>
       threaded.screen(order("acylation", "full", `Burst ${index}`), signal).then(
         () => "done",
@@ -51,5 +65,6 @@ describe("screening in threads", () => {
       for (const controller of controllers) controller.abort();
     }, 200);
     expect(await Promise.all(outcomes)).toContain(503);
+    expect(threaded.load().waiting).toBe(0);
   });
 });

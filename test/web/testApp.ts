@@ -8,7 +8,7 @@ import { createApp } from "../../server/web/app.js";
 import { directScreener, type Screener } from "../../server/web/screener.js";
 import { memoryStorage } from "../files/memoryStorage.js";
 
-const settings = { port: 0, host: "127.0.0.1", dataFolder: "" };
+const settings = { port: 0, host: "127.0.0.1", dataFolder: "", screenSeconds: 30 };
 
 export const demos = await readDemos(folderStorage(join(projectRoot, "scenarios")));
 
