@@ -127,24 +127,27 @@ export function createPool({ worker, threads, longestQueue, ceiling_s, onTrouble
       if (closed) throw stopping();
       if (queue.length >= longestQueue) throw overloaded();
       const control = createControl();
-      let standing: Job<Result>["standing"] = () => ({ before: null, fraction: 0 });
-      const result = new Promise<Result>((resolve, reject) => {
-        const entry: Entry = {
-          name,
-          task,
-          control,
-          done: (value) => resolve(value as Result),
-          fail: reject,
-        };
-        signal.addEventListener("abort", () => giveUp(entry, signal.reason), { once: true });
-        standing = () => {
+      const { promise, resolve, reject } = deferred<Result>();
+      const entry: Entry = {
+        name,
+        task,
+        control,
+        done: (result) => resolve(result as Result),
+        fail: reject,
+      };
+      const leave = (): void => giveUp(entry, signal.reason);
+      const stay = (): void => signal.removeEventListener("abort", leave);
+      signal.addEventListener("abort", leave);
+      promise.then(stay, stay);
+      queue.push(entry);
+      startNext();
+      return {
+        result: promise,
+        standing() {
           const place = queue.indexOf(entry);
           return { before: place < 0 ? null : place, fraction: fractionDone(control) };
-        };
-        queue.push(entry);
-      });
-      startNext();
-      return { result, standing };
+        },
+      };
     },
     load: () => ({ running: running.size, waiting: queue.length }),
     close() {
@@ -153,4 +156,13 @@ export function createPool({ worker, threads, longestQueue, ceiling_s, onTrouble
       return piscina.destroy();
     },
   };
+}
+
+function deferred<Value>() {
+  let resolve: (value: Value) => void = () => undefined;
+  let reject: (reason: unknown) => void = () => undefined;
+  const promise = new Promise<Value>((yes, no) => {
+    [resolve, reject] = [yes, no];
+  });
+  return { promise, resolve, reject };
 }
