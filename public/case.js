@@ -54,11 +54,12 @@ function showFaults() {
   for (const place of form.querySelectorAll(".fault")) {
     const message = faults.get(place.dataset.pointer);
     const control = document.getElementById(place.dataset.control);
-    const shown =
-      message !== undefined && (place.textContent !== "" || control?.dataset.touched !== undefined);
+    const touched = control?.matches("[data-touched], :has([data-touched])") === true;
+    const shown = message !== undefined && (place.textContent !== "" || touched);
     place.textContent = shown ? message : "";
-    if (shown) control?.setAttribute("aria-invalid", "true");
-    else control?.removeAttribute("aria-invalid");
+    if (!control?.matches("input, select")) continue;
+    if (shown) control.setAttribute("aria-invalid", "true");
+    else control.removeAttribute("aria-invalid");
   }
 }
 
@@ -107,7 +108,7 @@ async function reshape(action) {
   const added = [...form.querySelectorAll("input, select, textarea")].find(
     (each) => each.id !== "" && !known.has(each.id),
   );
-  (action.startsWith("add:") ? added : document.getElementById(focused))?.focus();
+  (action.startsWith("add") ? added : document.getElementById(focused))?.focus();
   refreshSoon();
 }
 
@@ -125,6 +126,8 @@ function tellKnown(details) {
 }
 
 form.addEventListener("input", (event) => {
+  // What waits to be taken over into a table is no part of the case yet.
+  if (event.target.name.startsWith("paste")) return;
   event.target.dataset.touched = "";
   const known = event.target.closest(".known");
   if (known !== null) tellKnown(known);
@@ -138,7 +141,11 @@ form.addEventListener("change", (event) => {
 
 form.addEventListener("click", (event) => {
   const button = event.target.closest("button[name=do]");
-  if (button === null || !/^(add|remove|work|undo):/.test(button.value)) return;
+  if (
+    button === null ||
+    !/^(add|add-failure|remove|work|undo|paste|paste-decimal|paste-separates):/.test(button.value)
+  )
+    return;
   event.preventDefault();
   reshape(button.value).catch(() => form.requestSubmit(button));
 });

@@ -2,7 +2,9 @@ import { faultBook } from "./faultBook.js";
 import type { Fault } from "./faults.js";
 import { insideOf, listOf, unusedGroup } from "./formBlocks.js";
 import { type FormContext, fieldOf, optional } from "./formFields.js";
+import type { Pasted } from "./formPaste.js";
 import type { FormBlock, FormGroup, FormSection } from "./formShape.js";
+import { failureStarts } from "./formStarts.js";
 import { unusedOf } from "./formUnused.js";
 import { type Before, formWorkings } from "./formWorkings.js";
 import { memberOf, outline, type Place } from "./outline.js";
@@ -11,6 +13,7 @@ import { overallOrder } from "./typed.js";
 
 export { documentFromForm } from "./formDocument.js";
 export { editForm } from "./formEdit.js";
+export { isPasting, type Pasted, pastedIn, pasteRows, stillWaiting } from "./formPaste.js";
 export * from "./formShape.js";
 export { type Before, beforeOf, isWorking, workField } from "./formWorkings.js";
 
@@ -29,12 +32,20 @@ export function blankCase(): unknown {
  *
  * @param document as typed so far
  * @param before what fields held before they were worked out, to be given back
+ * @param pasted what waits in the text areas of tables
  */
-export function formOf(document: unknown, faults: readonly Fault[] = [], before: Before = {}): FormSection[] {
+export function formOf(
+  document: unknown,
+  faults: readonly Fault[] = [],
+  before: Before = {},
+  pasted: Pasted = new Map(),
+): FormSection[] {
   const context: FormContext = {
     faults: faultBook(faults),
     order: overallOrder(document),
     workings: formWorkings(document, before),
+    pasted,
+    starts: failureStarts(document),
   };
   const unused = unusedOf(document);
   const unusedIn = (section: string) =>

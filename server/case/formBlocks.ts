@@ -1,5 +1,6 @@
 import { pathOf, pointerOf } from "./faults.js";
 import { blankOf, choicesOf, type FormContext, fieldOf, optional, textOf } from "./formFields.js";
+import { formPaste } from "./formPaste.js";
 import type { FormBlock, FormButton, FormField, FormGroup, FormList } from "./formShape.js";
 import { memberOf, type Place } from "./outline.js";
 
@@ -132,6 +133,8 @@ export function listOf(
     entries,
     faults: context.faults.takeBelow(pointer),
     ...(typed.length >= atMost ? {} : { button: { value: `add:${pointer}`, label: `Add: ${name}` } }),
+    ...(layout === "rows" ? { paste: formPaste(place, path, typed.length, context.pasted) } : {}),
+    ...(pointer === "/failures" && typed.length < atMost ? { starts: context.starts } : {}),
   };
 }
 

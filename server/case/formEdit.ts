@@ -1,11 +1,12 @@
 import { pathOf } from "./faults.js";
+import { startedFailure } from "./formStarts.js";
 import { unusedOf } from "./formUnused.js";
 import { memberOf, outline, type Place, placeBelow, valueAt } from "./outline.js";
 import { isGroup } from "./typedParts.js";
 
 /**
  * What a button of the form does to the document: `add:/failures`, `add:/decomposition`,
- * `remove:/failures/2`, `remove:unused:/reaction`. Anything else changes nothing.
+ * `add-failure:quench`, `remove:/failures/2`, `remove:unused:/reaction`. Anything else changes nothing.
  */
 export function editForm(document: unknown, action: string): unknown {
   if (action.startsWith("remove:unused:")) {
@@ -14,25 +15,30 @@ export function editForm(document: unknown, action: string): unknown {
       .filter((unused) => path.every((key, i) => unused[i] === key))
       .reduceRight<unknown>((edited, unused) => withoutEmpty(edited, unused), document);
   }
+  if (action.startsWith("add-failure:")) {
+    const failure = startedFailure(document, action.slice("add-failure:".length));
+    return failure === null ? document : added(document, ["failures"], failure);
+  }
   if (action.startsWith("add:")) return added(document, pathOf(action.slice("add:".length)));
   if (action.startsWith("remove:")) return without(document, pathOf(action.slice("remove:".length)));
   return document;
 }
 
-function added(document: unknown, path: readonly string[]): unknown {
+function added(document: unknown, path: readonly string[], entry?: object): unknown {
   const place = placeAt(document, path);
   if (place === undefined) return document;
   const there = valueAt(document, ...path);
   if (place.kind === "list") {
     const entries: unknown[] = Array.isArray(there) ? there : [];
     if (entries.length >= place.about.atMost) return document;
-    return replaced(document, path, [...entries, place.about.starter ?? {}]);
+    return replaced(document, path, [...entries, entry ?? place.about.starter ?? {}]);
   }
   const isOptional = place.kind === "group" || place.kind === "variants";
   return isOptional && there === undefined ? replaced(document, path, {}) : document;
 }
 
-function placeAt(document: unknown, path: readonly string[]): Place | undefined {
+/** The place of the schema at the end of a path, given what the document holds on the way. */
+export function placeAt(document: unknown, path: readonly string[]): Place | undefined {
   let place: Place | undefined = outline;
   let value = document;
   for (const key of path) {

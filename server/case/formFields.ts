@@ -1,7 +1,8 @@
 import { rateConstantDimension } from "./dimensions.js";
 import type { FaultBook } from "./faultBook.js";
 import { pointerOf } from "./faults.js";
-import type { FormChoice, FormControl, FormField, FormWorking } from "./formShape.js";
+import type { Pasted } from "./formPaste.js";
+import type { FormChoice, FormControl, FormField, FormStart, FormWorking } from "./formShape.js";
 import type { Leaf } from "./leaves.js";
 import { memberOf, type Place } from "./outline.js";
 import { bases, isGroup } from "./typedParts.js";
@@ -13,6 +14,10 @@ export interface FormContext {
   readonly order: number | null;
   /** workings by the pointer of the group that holds what they are given */
   readonly workings: ReadonlyMap<string, FormWorking>;
+  /** what waits in the text areas of tables */
+  readonly pasted: Pasted;
+  /** failures to begin with */
+  readonly starts: readonly FormStart[];
 }
 
 /** The field of a leaf. */

@@ -78,6 +78,29 @@ export interface FormGroup {
   readonly working?: FormWorking;
 }
 
+/** A text area for rows pasted from a spreadsheet, which a button takes over into their list. */
+export interface FormPaste {
+  readonly name: string;
+  readonly text: string;
+  /** a heading that would do: "Temperature [degC]" */
+  readonly example: string;
+  /** what becomes of the rows already there; absent where there are none */
+  readonly placing?: FormControl;
+  readonly button: FormButton;
+  readonly fault?: string;
+  /** asked before the text can be read, with the answers as buttons */
+  readonly question?: string;
+  readonly answers: readonly FormButton[];
+  /** what was done with the last text */
+  readonly told?: string;
+}
+
+/** An entry to begin with, and what it asks. */
+export interface FormStart {
+  readonly button: FormButton;
+  readonly question: string;
+}
+
 /** Entries of one kind, as rows of a table or one group below the other. */
 export interface FormList {
   readonly type: "list";
@@ -89,6 +112,9 @@ export interface FormList {
   readonly faults: readonly string[];
   /** absent where the list is full */
   readonly button?: FormButton;
+  readonly paste?: FormPaste;
+  /** entries to begin with */
+  readonly starts?: readonly FormStart[];
 }
 
 export type FormBlock = FormField | FormGroup | FormList;

@@ -1,5 +1,5 @@
 import type { Response } from "express";
-import { type Before, formOf, workingsShown } from "../case/form.js";
+import { type Before, formOf, type Pasted, workingsShown } from "../case/form.js";
 import { type Fault, readCase } from "../case/read.js";
 import { type SavedCase, titleOf } from "../files/cases.js";
 import type { DemoCase } from "../files/demos.js";
@@ -26,6 +26,8 @@ export interface CaseToShow {
   readonly faultsUnder?: string;
   /** what fields held before they were worked out */
   readonly before?: Before;
+  /** what waits in the text areas of tables */
+  readonly pasted?: Pasted;
   /** waits for failures and draws; otherwise the page comes with what is known at once */
   readonly full?: boolean;
   /** what was typed differs from what `origin` holds */
@@ -54,7 +56,7 @@ export async function renderCase(services: Services, response: Response, shown: 
   const { document, origin, faultsShown = true, faultsUnder = "", before = {}, full = false } = shown;
   const screened = await screenDocument(services, response, document, full);
   const faults = screened.faults.filter(({ pointer }) => faultsShown && pointer.startsWith(faultsUnder));
-  const sections = formOf(document, faults, before);
+  const sections = formOf(document, faults, before, shown.pasted);
   const places = placesOf(sections);
   const saved = origin.kind === "saved" ? origin.saved : null;
   response.render("case", {

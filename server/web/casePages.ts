@@ -1,6 +1,17 @@
 import { type Request, type Response, Router, urlencoded } from "express";
 import { canonicalJson } from "../case/canonical.js";
-import { beforeOf, blankCase, documentFromForm, editForm, isWorking, workField } from "../case/form.js";
+import {
+  beforeOf,
+  blankCase,
+  documentFromForm,
+  editForm,
+  isPasting,
+  isWorking,
+  pastedIn,
+  pasteRows,
+  stillWaiting,
+  workField,
+} from "../case/form.js";
 import { readCase } from "../case/read.js";
 import { titleOf } from "../files/cases.js";
 import { abandoned } from "./abandoned.js";
@@ -65,6 +76,15 @@ export function casePages(services: Services): Router {
     const action = typeof body.do === "string" ? body.do : "screen";
     const document = documentFromForm(body);
     const before = beforeOf(body);
+    const pasted = pastedIn(body);
+    const kept = { origin, before, pasted };
+    if (leavesPage(action)) {
+      const waiting = stillWaiting(document, pasted);
+      if (waiting.size > 0) {
+        response.status(422);
+        return renderCase(services, response, { ...kept, document, pasted: waiting, changed: true });
+      }
+    }
     if (action === "save") return save(response, document, origin, Number(body.revision));
     if (action === "copy") {
       const made = await cases.create(withTitle(document, `${titleOf(document)}, copy`));
@@ -78,25 +98,22 @@ export function casePages(services: Services): Router {
     if (action === "sheet" || action === "findings") {
       if (await download(response, document, action, body.paper)) return;
     }
-    if (action === "update" || action.startsWith("add:") || action.startsWith("remove:")) {
+    if (action === "update" || /^(add|add-failure|remove):/.test(action)) {
       const edited = editForm(document, action);
-      return renderCase(services, response, {
-        document: edited,
-        origin,
-        faultsShown: false,
-        before,
-        changed: true,
-      });
+      return renderCase(services, response, { ...kept, document: edited, faultsShown: false, changed: true });
+    }
+    if (isPasting(action)) {
+      const { list: faultsUnder, ...taken } = pasteRows(document, action, pasted);
+      return renderCase(services, response, { ...kept, ...taken, faultsUnder, changed: true });
     }
     if (isWorking(action)) {
       const { group: faultsUnder, ...worked } = workField(document, action, before);
-      return renderCase(services, response, { ...worked, origin, faultsUnder, changed: true });
+      return renderCase(services, response, { ...kept, ...worked, faultsUnder, changed: true });
     }
     if (!readCase(document).ok) response.status(422);
     return renderCase(services, response, {
+      ...kept,
       document,
-      origin,
-      before,
       changed: isChanged(document, origin),
       full: true,
       paper: body.paper,
@@ -141,6 +158,11 @@ export function casePages(services: Services): Router {
   }
 
   return router;
+}
+
+/** Whether an action takes the case somewhere else, and so would leave behind what was only pasted. */
+function leavesPage(action: string): boolean {
+  return ["save", "copy", "case", "sheet", "findings"].includes(action);
 }
 
 function missing(request: Request, response: Response): void {
