@@ -26,13 +26,13 @@ export type Heading =
 
 /** How people head the fields of rows. A lower-case k, since K is a unit. */
 const names: Readonly<Record<string, RegExp>> = {
-  temperature: /^(?:t|temp\.?|temperature|theta|θ|ϑ)(?:[ _].*)?$/i,
+  temperature: /^(?:t|temp\.?|temperature|theta|θ|ϑ)(?:[ _]\w+)?$/i,
   rateConstant:
     /^(?:k(?:[_ ]?[A-Za-z0-9']{1,4})?|[Rr]ate(?:[ _-](?:constant|coefficient))?s?(?: k\w{0,4})?)$/,
   relativeError:
     /^(?:rel(?:\.|ative)?[ _-]*(?:std\.?|standard)?[ _-]*(?:err(?:or)?|uncertainty)\.?(?: of k)?|s\(k\) ?\/ ?k)$/i,
   leftOut: /^(?:left[ _-]?out|excluded|omitted|reason)(?: .*)?$/i,
-  time: /^(?:t|time|elapsed(?: time)?)(?: .*)?$/i,
+  time: /^(?:t|time|elapsed(?: time)?)$/i,
   releasedFraction: /^(?:released(?: fraction| part)?|fraction(?: released)?|thermal conversion|x)$/i,
 };
 const standardError =
