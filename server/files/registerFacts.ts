@@ -27,7 +27,7 @@ const source = z.object({
   }),
   findings: z.object({
     criticality: z.object({ class: criticalityClass }),
-    cautions: z.array(z.object({ level: z.string() })),
+    cautions: z.array(z.object({ level: z.string() })).readonly(),
     program: z.object({ name: z.string(), version: z.string() }),
   }),
 });

@@ -6,7 +6,7 @@ import { digestOfFile, type ReviewEntry } from "./registerEntry.js";
 import type { FiledSheet } from "./registerIndex.js";
 
 /** What a register says of a file, in plain sentences. */
-export interface Standing {
+export interface SheetStanding {
   /** in: filed here; out: not filed here; against: it says that it was, and the register does not bear it out */
   readonly state: "in" | "out" | "against";
   readonly sentence: string;
@@ -21,7 +21,7 @@ export interface Standing {
  *
  * @param file a PDF or the JSON text of a record
  */
-export async function standingOf(register: Register, file: Buffer): Promise<Standing> {
+export async function standingOf(register: Register, file: Buffer): Promise<SheetStanding> {
   const index = await register.fresh();
   const entry = index.withDigest(digestOfFile(file));
   const filed = entry === null ? null : index.sheet(entry.number);
