@@ -1,4 +1,4 @@
-import type { Working } from "../screening/workings.js";
+import type { Working } from "../screening/workingsOutline.js";
 import { areaWorking } from "../screening/workingsArea.js";
 import { boilingWorking } from "../screening/workingsBoiling.js";
 import { coefficientWorking } from "../screening/workingsCoefficient.js";

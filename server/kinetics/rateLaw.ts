@@ -52,19 +52,6 @@ export function lawLogSlope(law: RateLaw, alpha: number): number {
 }
 
 /**
- * d f/d alpha, for the Jacobian of a balance. Finite everywhere: where the law's own slope is infinite
- * (alpha = 0 with m < 1, alpha = 1 with n < 1) the slope a hair inside is returned.
- *
- * @param law rate law
- * @param alpha progress; clipped
- * @returns dimensionless
- */
-export function lawSlope(law: RateLaw, alpha: number): number {
-  const inside = Math.min(Math.max(alpha, 1e-12), 1 - 1e-12);
-  return lawValue(law, inside) * lawLogSlope(law, inside);
-}
-
-/**
  * The largest f on [0, 1]: at constant temperature the largest rate of the law.
  *
  * @param law rate law

@@ -3,13 +3,3 @@ export interface Estimate {
   readonly value: number;
   readonly standardError: number | null;
 }
-
-/**
- * An estimate that carries no error of its own.
- *
- * @param value SI
- * @returns the estimate, treated as exact by every draw
- */
-export function exact(value: number): Estimate {
-  return { value, standardError: null };
-}

@@ -109,7 +109,7 @@ function withInterval(
  *
  * @param order n
  */
-export function rateUnit(order: number): string {
+function rateUnit(order: number): string {
   if (order === 1) return "s⁻¹";
   if (order === 2) return "m³ mol⁻¹ s⁻¹";
   if (Number.isInteger(order)) return `m${superscript(3 * (order - 1))} mol${superscript(1 - order)} s⁻¹`;

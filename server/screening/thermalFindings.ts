@@ -21,7 +21,7 @@ function grid(low: number, high: number, points = curvePoints): number[] {
 }
 
 /** Beyond the range of floating-point numbers a time is not given. */
-export function finiteOrNull(value: number): number | null {
+function finiteOrNull(value: number): number | null {
   return Number.isFinite(value) ? value : null;
 }
 

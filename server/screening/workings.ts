@@ -4,8 +4,6 @@ import { boilingWorking } from "./workingsBoiling.js";
 import { coefficientWorking } from "./workingsCoefficient.js";
 import type { Working } from "./workingsOutline.js";
 
-export type { Working, WorkingFault, WorkingStep, WorkingValue } from "./workingsOutline.js";
-
 /**
  * The workings that a case keeps behind its heat transfer area, its heat transfer coefficient and its maximum
  * technical temperature, each with whether its field still follows from it.

@@ -45,7 +45,7 @@ export function volumeOf(step: Step, fed: number): number {
  * @param step SI numbers
  * @returns kg
  */
-export function finalMass(step: Step): number {
+function finalMass(step: Step): number {
   return step.mixture.mass + (step.reaction.feed?.mass ?? 0);
 }
 
@@ -55,7 +55,7 @@ export function finalMass(step: Step): number {
  * @param step SI numbers
  * @returns J/K
  */
-export function finalHeatCapacity(step: Step): number {
+function finalHeatCapacity(step: Step): number {
   return heatCapacityOf(step, step.reaction.feed?.mass ?? 0);
 }
 

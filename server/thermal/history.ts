@@ -10,7 +10,7 @@ import { type Accuracy, type Runaway, timeToMaximumRate } from "./runaway.js";
  * @param extent k t, dimensionless
  * @returns alpha in [0, 1]
  */
-export function progressAfter(law: RateLaw, extent: number): number {
+function progressAfter(law: RateLaw, extent: number): number {
   if (!(extent > 0)) return 0;
   return law.autocatalytic ? autocatalyticProgress(law, extent) : orderProgress(law.order, extent);
 }

@@ -7,7 +7,7 @@ import type { Bottom } from "./dishedHead.js";
  * @param bottom of the vessel
  * @returns m^2
  */
-export function shellSection({ diameter }: Bottom): number {
+function shellSection({ diameter }: Bottom): number {
   return (Math.PI * diameter * diameter) / 4;
 }
 

@@ -1,6 +1,6 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
-import type { Working } from "../../server/screening/workings.js";
+import type { Working } from "../../server/screening/workingsOutline.js";
 import { areaWorking } from "../../server/screening/workingsArea.js";
 import { boilingWorking } from "../../server/screening/workingsBoiling.js";
 import { coefficientWorking } from "../../server/screening/workingsCoefficient.js";
