@@ -31,19 +31,25 @@ function feedMassRate(step: Step): number {
 }
 
 /**
- * How long the feed can still run before all of it is in.
+ * How long the feed can run before it reaches the amount that the charged reactant needs, or before all of it is in:
+ * whichever comes next. The balance bends at both.
  *
  * @returns s; 0 where nothing is left
  */
-export function feedTimeLeft(step: Step, charge: Charge): number {
-  const { feed } = step.reaction;
+export function feedStretch(step: Step, charge: Charge): number {
+  const { feed, amountA, b } = step.reaction;
   if (feed === null) return 0;
-  const left = 1 - charge.fed / feed.mass;
-  // A rest within rounding is no rest.
-  return left > 1e-12 ? left * feed.duration : 0;
+  const needed = b === null ? 1 : b.amount / b.perA / amountA;
+  const stoichiometric = feed.reactant === "A" ? needed : 1 / needed;
+  for (const part of [Math.min(stoichiometric, 1), 1]) {
+    const left = part - charge.fed / feed.mass;
+    // A rest within rounding is no rest.
+    if (left > 1e-12) return left * feed.duration;
+  }
+  return 0;
 }
 
-/** The charge after the feed has run for a time, s, which must not exceed `feedTimeLeft`. */
+/** The charge after the feed has run for a time, s, which must not exceed `feedStretch`. */
 export function afterFeeding(step: Step, charge: Charge, time: number): Charge {
   const { feed } = step.reaction;
   if (feed === null || time === 0) return charge;

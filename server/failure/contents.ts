@@ -26,6 +26,13 @@ interface Places {
   readonly progress: 2 | 3 | null;
 }
 
+/**
+ * Rate constants level off here, 1/s: no vessel is so well mixed that its contents could react within a nanosecond.
+ * Far beyond the model, and below a millionth of a figure anywhere before; without it the end of a violent runaway
+ * would drown in rounding.
+ */
+const fastest = 1e9;
+
 /** Contents and jacket of a vessel that nothing controls, as a system of differential equations. */
 export interface Contents {
   readonly step: Step;
@@ -81,7 +88,7 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
   const heatPerExtent = -reaction.heat * limiting;
   const heatPerMass = decomposition?.heat ?? 0;
   const totalB = b?.amount ?? 0;
-  const orderB = b?.order ?? 1;
+  const orderB = b?.order ?? 0;
   const perA = b?.perA ?? 0;
   const volumeOrder = 1 - overallOrder(reaction);
   const jacketCapacity = flowing === null ? 1 : flowing.holdup * flowing.heatCapacity;
@@ -98,6 +105,7 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
   let coolant = 0;
   let power = 0;
   let inside = inventoryOf(step, { fed: 0, quenchCapacity: 0, quenchVolume: 0 }, false);
+  let slowest = 0;
   let blurredA = totalA;
   let blurredB = totalB;
   let blurredProgress = 1;
@@ -113,8 +121,10 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
   let amountA = 0;
   let amountB = 0;
   let reacting = 0;
+  let reactionLevelling = 1;
   let decaying = 0;
   let decayConstant = 0;
+  let decayLevelling = 1;
   let decayHeat = 0;
   let input = 0;
 
@@ -137,16 +147,17 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
         // Both used up: odd times odd must not come out positive.
         if (amountA < 0 && amountB < 0) sign = -1;
       }
-      factor =
-        ((mixing * sign) / limiting) *
-        volumePower(reaction, volume) *
-        Math.exp(lnRateConstant(rate, temperature));
+      const k = Math.exp(lnRateConstant(rate, temperature));
+      reactionLevelling = 1 / (1 + k * slowest);
+      factor = (((mixing * sign) / limiting) * volumePower(reaction, volume)) / (1 / k + slowest);
       reacting = factor * ofA * ofB;
     }
     input = heatPerExtent * reacting + inside.heatCapacityRate * (feedTemperature - above) + power;
     if (above < ambient) input += gainCoefficient * (ambient - above);
     if (law !== undefined && decay !== undefined && progressAt !== null) {
-      decayConstant = Math.exp(lnRateConstant(decay, temperature));
+      const k = Math.exp(lnRateConstant(decay, temperature));
+      decayLevelling = 1 / (1 + k / fastest);
+      decayConstant = 1 / (1 / k + 1 / fastest);
       decaying = decayConstant * continuedLaw(law, y[progressAt], blurredProgress);
       decayHeat = (inside.mass + inside.massRate * elapsed) * heatPerMass;
       input += decayHeat * decaying;
@@ -176,7 +187,7 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
     const gaining = y[0] < ambient ? gainCoefficient : 0;
     let heatPerKelvin = -inside.heatCapacityRate - gaining - exchange;
     if (mixing > 0) {
-      const perKelvin = reacting * steepness(rate);
+      const perKelvin = reacting * reactionLevelling * steepness(rate);
       const slopeA = amountPowerSlope(amountA, orderA, blurredA);
       const slopeB = b === null ? 0 : amountPowerSlope(amountB, orderB, blurredB);
       const perExtent = -factor * limiting * (slopeA * ofB + perA * ofA * slopeB);
@@ -191,7 +202,7 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
       out[jacketAt * size + jacketAt] = -(exchange + coolantExchange) / jacketCapacity;
     }
     if (law !== undefined && decay !== undefined && progressAt !== null) {
-      const perKelvin = decaying * steepness(decay);
+      const perKelvin = decaying * decayLevelling * steepness(decay);
       const perProgress = decayConstant * continuedLawSlope(law, y[progressAt], blurredProgress);
       heatPerKelvin += decayHeat * perKelvin;
       out[progressAt] = (decayHeat * perProgress) / capacity;
@@ -233,6 +244,8 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
       coolantExchange = conditions.coolantFlow * coolantCapacityRate;
       power = conditions.agitating ? vessel.agitatorPower : 0;
       inside = inventoryOf(step, charge, conditions.feeding);
+      slowest =
+        (totalA ** orderA * totalB ** orderB * volumePower(reaction, inside.volume)) / limiting / fastest;
     },
     heatCapacity: (time) => inside.heatCapacity + inside.heatCapacityRate * (time - origin),
     heatToRemove(time, state) {

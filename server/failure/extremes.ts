@@ -1,7 +1,7 @@
 import type { DenseStep } from "../numeric/denseStep.js";
 import { maximise } from "../numeric/roots.js";
 import type { Contents } from "./contents.js";
-import type { Observer } from "./follow.js";
+import type { Observer } from "./leg.js";
 
 /** A largest value and when it was reached, s after the failure. */
 export interface Peak {
@@ -39,9 +39,9 @@ export function fastest(contents: Contents): PeakFinder {
     return slope[0];
   };
   return largest(
-    (step, time) => {
+    (step, time, clock) => {
       step.evaluate(time, state);
-      return at(time, state);
+      return at(clock + time, state);
     },
     at,
     0,
@@ -49,7 +49,7 @@ export function fastest(contents: Contents): PeakFinder {
 }
 
 function largest(
-  inside: (step: DenseStep, time: number) => number,
+  inside: (step: DenseStep, time: number, clock: number) => number,
   atStart: (time: number, state: Float64Array) => number,
   offset: number,
 ): PeakFinder {
@@ -70,17 +70,17 @@ function largest(
       before = atStart(time, state);
       offer(before, time);
     },
-    step(step) {
+    step(step, clock) {
       const { start, end } = step;
       const middle = start + 0.5 * (end - start);
-      const atMiddle = inside(step, middle);
-      const atEnd = inside(step, end);
+      const atMiddle = inside(step, middle, clock);
+      const atEnd = inside(step, end, clock);
       if (vertex(before, atMiddle, atEnd) > value) {
-        const top = maximise((time) => inside(step, time), start, end, resolution * (end - start));
-        offer(top.value, top.x);
+        const top = maximise((time) => inside(step, time, clock), start, end, resolution * (end - start));
+        offer(top.value, clock + top.x);
       }
-      offer(atMiddle, middle);
-      offer(atEnd, end);
+      offer(atMiddle, clock + middle);
+      offer(atEnd, clock + end);
       before = atEnd;
     },
   };

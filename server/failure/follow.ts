@@ -1,10 +1,10 @@
-import type { DenseStep } from "../numeric/denseStep.js";
 import type { Integrator } from "../numeric/stiff.js";
 import type { EventFunction } from "../numeric/stiffEvents.js";
 import type { Trajectory } from "../numeric/trajectory.js";
-import { afterFeeding, type Charge, feedTimeLeft, quenched } from "./charge.js";
+import { afterFeeding, type Charge, feedStretch, quenched } from "./charge.js";
 import { type Conditions, changed, effectiveMixing, type MixingAssumption } from "./conditions.js";
 import type { Contents } from "./contents.js";
+import { integrateLeg, type Observer } from "./leg.js";
 import type { Moment } from "./start.js";
 import type { Change, Quench } from "./timeline.js";
 
@@ -15,12 +15,6 @@ export interface Marks {
   readonly td24: number | null;
   /** when the decomposition reached what is allowed of it */
   readonly allowed: number | null;
-}
-
-/** Watches a run: `enter` at the start of every leg, `step` after every step of it. */
-export interface Observer {
-  enter(time: number, state: Float64Array): void;
-  step(step: DenseStep): void;
 }
 
 export interface FollowOptions {
@@ -50,9 +44,6 @@ export interface Followed {
   /** done: as far as asked. lost: stopped by `untilLost`. failed: the integrator gave up there. */
   readonly status: "done" | "lost" | "failed";
 }
-
-/** Steps after which a run is given up; a run through both reactions takes a few hundred. */
-const mostSteps = 20_000;
 
 /**
  * Integrates the contents from a moment on, through every change at its exact time.
@@ -122,8 +113,8 @@ export function follow(
       }
       next += 1;
     }
-    const feedLeft = conditions.feeding ? feedTimeLeft(step, charge) : 0;
-    if (conditions.feeding && feedLeft === 0) conditions = { ...conditions, feeding: false };
+    const stretch = conditions.feeding ? feedStretch(step, charge) : 0;
+    if (conditions.feeding && stretch === 0) conditions = { ...conditions, feeding: false };
     legs.push({ time, charge, conditions });
     contents.enter(time, charge, conditions, effectiveMixing(conditions, options.mixing), blur);
     values.forEach((value, index) => {
@@ -136,27 +127,20 @@ export function follow(
     }
     if (time >= until) break;
     let stop = Math.min(until, next < changes.length ? changes[next].after : until);
-    if (conditions.feeding) stop = Math.min(stop, time + feedLeft);
-    const result = integrator.run(system, time, state, stop, {
+    if (conditions.feeding) stop = Math.min(stop, time + stretch);
+    const end = integrateLeg(system, integrator, time, state, stop, {
       relativeTolerance,
       absoluteTolerance,
       events,
-      maxSteps: mostSteps,
-      ...(observer === undefined
-        ? {}
-        : {
-            onStep(dense: DenseStep): undefined {
-              observer.step(dense);
-            },
-          }),
-      ...(trajectory === undefined ? {} : { trajectory }),
+      observer,
+      trajectory,
     });
-    for (const event of result.events) mark(event.index, event.t);
-    if (conditions.feeding) charge = afterFeeding(step, charge, result.t - time);
-    time = result.t;
-    state = result.y;
-    if (result.status !== "done") {
-      status = result.status === "event" ? "lost" : "failed";
+    for (const event of end.events) mark(event.index, event.time);
+    if (conditions.feeding) charge = afterFeeding(step, charge, end.time - time);
+    time = end.time;
+    state = end.state;
+    if (end.status !== "done") {
+      status = end.status === "event" ? "lost" : "failed";
       break;
     }
     if (time >= until && !(next < changes.length && changes[next].after <= time)) break;

@@ -41,6 +41,8 @@ export function holdAt(step: Step, rate: ModifiedArrhenius, temperature: number)
     mtsrAt: dosing.rise.at,
     extentAt(time) {
       if (run !== null && time <= balance.feedEnd) return run.extentAt(time);
+      // Nothing happens in a nanosecond, and no step could be that short.
+      if (time - balance.feedEnd < 1e-9) return endExtent;
       integrator ??= createIntegrator(1);
       const options = { relativeTolerance: 1e-9, absoluteTolerance: 1e-11 };
       const after = integrator.run(

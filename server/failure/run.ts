@@ -2,7 +2,8 @@ import { createTrajectory, type Trajectory } from "../numeric/trajectory.js";
 import { afterFeeding } from "./charge.js";
 import type { MixingAssumption } from "./conditions.js";
 import { fastest, hottest, type Peak } from "./extremes.js";
-import { follow, type Leg, type Marks, type Observer } from "./follow.js";
+import { follow, type Leg, type Marks } from "./follow.js";
+import type { Observer } from "./leg.js";
 import { type Loss, lossOf } from "./loss.js";
 import type { FailureStart, Moment } from "./start.js";
 import { lastChange, type Timeline, watch } from "./timeline.js";
@@ -78,9 +79,9 @@ export function runToHorizon(
       top.enter(time, state);
       rise.enter(time, state);
     },
-    step(step) {
-      top.step(step);
-      rise.step(step);
+    step(step, clock) {
+      top.step(step, clock);
+      rise.step(step, clock);
     },
   };
   const options = { relativeTolerance, mixing, td24, untilLost: false, observer, trajectory };
