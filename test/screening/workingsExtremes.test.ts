@@ -1,9 +1,9 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
-import type { Working } from "../../server/screening/workingsOutline.js";
 import { areaWorking } from "../../server/screening/workingsArea.js";
 import { boilingWorking } from "../../server/screening/workingsBoiling.js";
 import { coefficientWorking } from "../../server/screening/workingsCoefficient.js";
+import type { Working } from "../../server/screening/workingsOutline.js";
 
 /** Positive numbers of every size that a double has, and of sizes that occur. */
 const positive = fc.oneof(
