@@ -10,6 +10,7 @@ import {
   stopSentence,
   windowSentence,
 } from "../sheet/sentences.js";
+import { type FailureLine, failureLines } from "./failuresView.js";
 import { type KeyFigureGroup, keyFigures } from "./keyFigures.js";
 
 /** Findings as the page shows them: words, and drawings ready to stand in it. */
@@ -28,6 +29,7 @@ export interface FindingsView {
   readonly figures: readonly (Pick<Figure, "id" | "title" | "sentence" | "table"> & {
     readonly svg: string;
   })[];
+  readonly failures: readonly FailureLine[];
   readonly cautions: readonly CautionGroup[];
   /** how many there are: "2 warnings, 3 notes" */
   readonly counted: string;
@@ -69,6 +71,7 @@ export function findingsView(findings: Findings): FindingsView {
       table: figure.table,
       svg: drawSvg(figure),
     })),
+    failures: failureLines(findings),
     cautions,
     counted: cautions.map((group) => count(group.cautions.length, group.name)).join(", "),
   };
