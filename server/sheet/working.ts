@@ -14,6 +14,8 @@ export interface Method {
   readonly title: string;
   readonly equation: string;
   readonly numbers: string;
+  /** equations of it with the numbers put in, SI, for a pocket calculator; left out where no single line does it */
+  readonly worked?: readonly string[];
   readonly reference: string;
 }
 
@@ -32,14 +34,15 @@ export function writeWorking(cursor: Cursor, model: CaseModel, findings: Finding
   heading(cursor, "Working");
   paragraph(
     cursor,
-    "SI inside; R = 8.314462618 J/(mol K), k_{B} = 1.380649×10⁻²³ J/K, h = 6.62607015×10⁻³⁴ J s (exact, SI 2019). Numbers put in are shown rounded; the program calculates with all digits.",
+    "SI inside; R = 8.314462618 J/(mol K), k_{B} = 1.380649×10⁻²³ J/K, h = 6.62607015×10⁻³⁴ J s (exact, SI 2019). Numbers beside their units are shown rounded, the program calculates with all digits; a line of numbers alone is in SI.",
     { ...styles.small, formula: true },
   );
   for (const method of methodsOf(model, findings)) writeMethod(cursor, method);
 }
 
 function writeMethod(cursor: Cursor, method: Method): void {
-  const lines = [method.equation, method.numbers].flatMap((text) =>
+  const worked = method.worked ?? [];
+  const lines = [method.equation, method.numbers, ...worked].flatMap((text) =>
     wrap(text, cursor.width - indent, styles.formula),
   );
   ensure(cursor, (lines.length + 3) * lineHeight(styles.body));
@@ -47,6 +50,7 @@ function writeMethod(cursor: Cursor, method: Method): void {
     paragraph(cursor, method.title, styles.strong, { tag: "H3", after: 0 });
     paragraph(cursor, method.equation, styles.formula, { indent, after: 0 });
     paragraph(cursor, method.numbers, styles.formula, { indent, after: 0 });
+    for (const line of worked) paragraph(cursor, line, styles.formula, { indent, after: 0 });
     paragraph(cursor, method.reference, { ...styles.label, formula: true }, { indent, after: 6 });
   });
 }

@@ -9,6 +9,7 @@ import {
   temperatureText,
 } from "../words/numbers.js";
 import { shortNumber } from "./shortNumber.js";
+import { typeable, worked } from "./worked.js";
 import type { Method } from "./working.js";
 
 /** Cooling, window, failures and draws. */
@@ -34,9 +35,30 @@ function capacity({ vessel, reaction }: CaseModel, found: Cooling): Method {
     title: "Cooling at scale",
     equation: `${flowing === null ? "UA_{e} = UA (constant jacket temperature)" : "UA_{e} = UA w/(UA + w), w = coolant flow × c_{p}"}; capacity = UA_{e} (T − T_{c}); duty = largest of r V (−ΔH_{r}) + m Q k_{d} f(α) − feed cooling, plus the agitator`,
     numbers: `${ua}${w}, T = ${temperatureText(reaction.temperature.value)}, T_{c} = ${temperatureText(temperature.value)}: capacity ${powerText(found.capacity_W, "down")}, duty ${powerText(found.duty_W, "up")}${found.use === null ? "" : `, use ${percentText(found.use, "up")}`}`,
+    worked: workedCapacity(vessel, reaction.temperature.value, found.capacity_W),
     reference:
       "Heat balance of a stirred jacket; losses to the surroundings are not credited (common practice)",
   };
+}
+
+function workedCapacity(vessel: CaseModel["vessel"], T: number, found: number): string[] {
+  const { flowing, temperature } = vessel.coolant;
+  const U = vessel.heatTransferCoefficient.value;
+  const S = vessel.heatTransferArea.value;
+  const ua = U * S;
+  const w = flowing === null ? null : flowing.flow.value * flowing.heatCapacity.value;
+  const effective = w === null ? ua : (ua * w) / (ua + w);
+  const perKelvin = (value: number) => `${typeable(value)} W/K`;
+  const lines = [worked("UA = U A", { U, A: S }, perKelvin(ua))];
+  if (flowing !== null && w !== null) {
+    const coolant = { flow: flowing.flow.value, "c_{p}": flowing.heatCapacity.value };
+    lines.push(
+      worked("w = flow × c_{p}", coolant, perKelvin(w)),
+      worked("UA_{e} = UA w/(UA + w)", { UA: ua, w }, perKelvin(effective)),
+    );
+  }
+  const values = { "UA_{e}": effective, T, "T_{c}": temperature.value };
+  return [...lines, worked("capacity = UA_{e} (T − T_{c})", values, powerText(found, "down"))];
 }
 
 function stability(found: Cooling): Method {

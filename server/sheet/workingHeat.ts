@@ -2,6 +2,8 @@ import type { Findings } from "../screening/findings.js";
 import type { CaseModel } from "../screening/model.js";
 import { differenceText, durationText, percentText, temperatureText } from "../words/numbers.js";
 import { shortNumber } from "./shortNumber.js";
+import { typeable, worked } from "./worked.js";
+import { capacityAfter, workedAllAtOnce, workedMtsr, workedRise } from "./workedHeat.js";
 import type { Method } from "./working.js";
 
 const gygax = "Gygax 1988, Chem. Eng. Sci. 43:1759; Stoessel 2008, Thermal Safety of Chemical Processes";
@@ -18,6 +20,7 @@ export function heatMethods(model: CaseModel, findings: Findings): Method[] {
       title: "Accumulation and MTSR",
       equation:
         "MTSR = T + max over the feed of n_{acc}(t) (−ΔH_{r})/C(t), n_{acc} = min(n_{A}, n_{B}/ν); batch: T + ΔT_{ad}",
+      worked: workedMtsr(model, findings),
       numbers: `largest accumulation ${percentText(maximumFraction, "up")} of n_{lim}, ${durationText(at_s, "nearest")} after the start${measured === null ? "" : " (measured)"}; T = ${temperatureText(process)}: MTSR = ${temperatureText(mtsr, "up")}`,
       reference: `${gygax}. Assumes that the feed stops with the cooling.`,
     });
@@ -27,14 +30,29 @@ export function heatMethods(model: CaseModel, findings: Findings): Method[] {
       title: "All at once",
       equation: "T_{all} = [m_{0} c_{p,0} T + m_{feed} c_{p,feed} T_{feed} + n_{lim} (−ΔH_{r})]/C(end)",
       numbers: `${temperatureText(allAtOnce, "up")}`,
+      worked: [workedAllAtOnce(model, process, allAtOnce)],
       reference: "Heat balance; a bound where a failure lets the feed run on",
     });
   }
   const decomposition = model.decomposition;
+  const capacity = capacityAfter(model, 1);
+  const mass = model.mixture.mass.value + (model.reaction.feed?.mass.value ?? 0);
   if (decomposition !== null && findings.heat.decompositionRise_K !== null) {
     methods.push({
       title: "Adiabatic rise of the decomposition",
       equation: "ΔT_{ad,d} = Q/c, c = C(end)/m(end)",
+      worked: [
+        worked(
+          "c = C(end)/m(end)",
+          { "C(end)": capacity, "m(end)": mass },
+          `${typeable(capacity / mass)} J/(kg K)`,
+        ),
+        worked(
+          "ΔT_{ad,d} = Q/c",
+          { Q: decomposition.heat.value, c: capacity / mass },
+          differenceText(findings.heat.decompositionRise_K, "up"),
+        ),
+      ],
       numbers: `Q = ${shortNumber(decomposition.heat.value / 1000)} kJ/kg, C(end) = ${capacityText(model)}, m(end) = ${massText(model)}: ΔT_{ad,d} = ${differenceText(findings.heat.decompositionRise_K, "up")}`,
       reference: gygax,
     });
@@ -53,6 +71,7 @@ function rise(model: CaseModel, findings: Findings): Method {
     equation:
       "ΔT_{ad} = n_{lim} (−ΔH_{r})/C(end), n_{lim} = min(n_{A}, n_{B}/ν), C(end) = m_{0} c_{p,0} + m_{feed} c_{p,feed}",
     numbers: `n_{lim} = ${limiting}, −ΔH_{r} = ${shortNumber(-heat.value / 1000)} kJ/mol, C(end) = ${capacityText(model)}: ΔT_{ad} = ${differenceText(findings.heat.adiabaticRise_K, "up")}`,
+    worked: workedRise(model, findings),
     reference: gygax,
   };
 }

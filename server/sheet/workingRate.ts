@@ -1,8 +1,11 @@
 import type { DecompositionRate } from "../kinetics/parameters.js";
+import { largestLawValue } from "../kinetics/rateLaw.js";
+import { gasConstant } from "../numeric/constants.js";
 import type { Findings, RateFindings } from "../screening/findings.js";
-import type { CaseModel } from "../screening/model.js";
+import type { CaseModel, DecompositionModel } from "../screening/model.js";
 import { numberText, temperatureText } from "../words/numbers.js";
 import { shortNumber } from "./shortNumber.js";
+import { worked } from "./worked.js";
 import type { Method } from "./working.js";
 
 /** Rate constants of the reaction and of the decomposition at the process temperature. */
@@ -13,7 +16,8 @@ export function rateMethods(model: CaseModel, findings: Findings): Method[] {
   }
   if (model.decomposition !== null && findings.decompositionRate !== null) {
     const { rateConstant } = model.decomposition;
-    methods.push(rateMethod("Rate constant of the decomposition", rateConstant, findings.decompositionRate));
+    const method = rateMethod("Rate constant of the decomposition", rateConstant, findings.decompositionRate);
+    methods.push({ ...method, worked: [...referenceLine(model.decomposition), ...(method.worked ?? [])] });
   }
   return methods;
 }
@@ -41,8 +45,49 @@ function rateMethod(title: string, rate: DecompositionRate, found: RateFindings)
     title,
     equation,
     numbers: `${parametersText(rate, found)}; ${at}: k = ${k}`,
+    worked: atProcess.k === null ? [] : [workedRate(rate, found, k)],
     reference: source,
   };
+}
+
+/** Every form comes down to one of three equations. */
+function workedRate(rate: DecompositionRate, found: RateFindings, result: string): string {
+  const T = found.atProcess.temperature_K;
+  const form = rate.form === "table" ? rate.fitAs : rate.form;
+  if (form === "eyring") {
+    const pair = found.eyring;
+    const values = {
+      κ: pair.transmissionCoefficient,
+      "c_{0}": pair.standardConcentration_mol_m3,
+      n: "order" in rate ? rate.order : 1,
+      "ΔS‡": pair.activationEntropy_J_molK,
+      "ΔH‡": pair.activationEnthalpy_J_mol,
+      T,
+    };
+    return worked(eyring.equation, values, result);
+  }
+  const { lnPreExponential, activationEnergy_J_mol: Ea } = found.arrhenius;
+  if (form === "arrhenius") {
+    // Written with ln A, because A itself may be beyond the range of numbers.
+    return worked("k = exp(ln A − E_{a}/(R T))", { "ln A": lnPreExponential, "E_{a}": Ea, T }, result);
+  }
+  const at = rate.form === "td24" ? rate.temperature.value : "at" in rate ? rate.at.value : T;
+  const kRef = Math.exp(lnPreExponential - Ea / (gasConstant * at));
+  return worked(reference.equation, { "k_{ref}": kRef, "E_{a}": Ea, T, "T_{ref}": at }, result);
+}
+
+/** k_ref from a heat release rate, where that was given. */
+function referenceLine({ heat, rateLaw, rateConstant }: DecompositionModel): string[] {
+  if (rateConstant.form !== "heatRate") return [];
+  const f = largestLawValue({
+    autocatalytic: rateLaw.model === "autocatalytic",
+    order: rateLaw.order.value,
+    productOrder: rateLaw.productOrder.value,
+    initiation: rateLaw.initiation.value,
+  });
+  const q = rateConstant.heatReleaseRate.value;
+  const result = `${numberText(q / (heat.value * f), 4)} s⁻¹`;
+  return [worked("k_{ref} = q′/(Q f_{ref})", { "q′": q, Q: heat.value, "f_{ref}": f }, result)];
 }
 
 function sourceOf(rate: DecompositionRate): {

@@ -1,7 +1,8 @@
 import type { Findings } from "../screening/findings.js";
 import type { CaseModel, DecompositionModel } from "../screening/model.js";
-import { durationText, temperatureText } from "../words/numbers.js";
+import { durationText, numberText, temperatureText } from "../words/numbers.js";
 import { shortNumber } from "./shortNumber.js";
+import { typeable, worked } from "./worked.js";
 import type { Method } from "./working.js";
 
 /** TMRad, T_D24 and the criticality class. */
@@ -24,6 +25,7 @@ export function runawayMethods(model: CaseModel, findings: Findings): Method[] {
         title: "The same in closed form, zero order",
         equation: "TMR_{ad,0} = c R T_{0}²/(q′ E_{a}), q′ = k_{d}(T_{0}) f(α_{0}) Q",
         numbers: `from the process temperature: ${time(tmrad.zeroOrderAtProcess_s)}${cautionText(tmrad.zeroOrderCautious)}`,
+        worked: workedClosedForm(decomposition, findings),
         reference:
           "Semenov 1928, Z. Phys. 48:571; Townsend & Tou 1980. On the careful side only for order laws with E_{a} ΔT_{ad,d}/(R T_{0}²) ≥ n + 3",
       },
@@ -48,6 +50,29 @@ export function runawayMethods(model: CaseModel, findings: Findings): Method[] {
     });
   }
   return methods;
+}
+
+/** Heat release rate of fresh material at the process temperature, and the time that it gives. */
+function workedClosedForm({ heat, rateLaw }: DecompositionModel, findings: Findings): string[] {
+  const { decompositionRate, timeToMaximumRate, heat: rises } = findings;
+  const time = timeToMaximumRate?.zeroOrderAtProcess_s ?? null;
+  if (decompositionRate === null || time === null || rises.decompositionRise_K === null) return [];
+  const { k, temperature_K: T, apparentActivationEnergy_J_mol: Ea } = decompositionRate.atProcess;
+  const f = rateLaw.model === "order" ? 1 : rateLaw.initiation.value;
+  if (k === null || k * f === 0) return [];
+  const q = k * f * heat.value;
+  return [
+    worked(
+      "q′ = k_{d}(T_{0}) f(0) Q",
+      { "k_{d}(T_{0})": k, "f(0)": f, Q: heat.value },
+      `${typeable(q)} W/kg`,
+    ),
+    worked(
+      "TMR_{ad,0} = c R T_{0}²/(q′ E_{a})",
+      { c: heat.value / rises.decompositionRise_K, "T_{0}": T, "q′": q, "E_{a}": Ea },
+      `${numberText(time, 4)} s = ${durationText(time)}`,
+    ),
+  ];
 }
 
 function lawText({ rateLaw }: DecompositionModel): string {

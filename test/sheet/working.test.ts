@@ -2,6 +2,8 @@ import { describe, expect, test } from "vitest";
 import { readCase } from "../../server/case/read.js";
 import { screen } from "../../server/screening/screen.js";
 import { methodsOf } from "../../server/sheet/working.js";
+import { checkedCases } from "../published/caseFigures.js";
+import { evaluate, numberOf } from "../words/evaluate.js";
 import { inventedDocument, inventedFindings, inventedModel } from "./invented.js";
 
 function methodsFor(change: object) {
@@ -21,7 +23,8 @@ describe("the working", () => {
       expect(method.equation).not.toBe("");
       expect(method.numbers).toMatch(/\d/);
       expect(method.reference).not.toBe("");
-      for (const text of Object.values(method)) expect(text).not.toMatch(/NaN|undefined|null|Infinity/);
+      for (const text of Object.values(method).flat())
+        expect(text).not.toMatch(/NaN|undefined|null|Infinity/);
     }
   });
 
@@ -39,6 +42,28 @@ describe("the working", () => {
     expect(numbers).toContain("UA = 320 W/(m² K) × 5.6 m², w = 4.5 kg/s × 3.6 kJ/(kg K)");
     // By hand: 1792 × 16200 / (1792 + 16200) × (35 − 5) = 48.405 kW, rounded down.
     expect(numbers).toContain("capacity 48.4 kW");
+  });
+
+  test("has lines of plain numbers that a calculator takes to what is printed behind them", () => {
+    const forms = [
+      { form: "heatRate", heatReleaseRate: "20 W/kg", at: "160 degC", activationEnergy: "128 kJ/mol" },
+      { form: "td24", temperature: "100 degC", activationEnergy: "128 kJ/mol" },
+    ].map((rateConstant) =>
+      methodsFor({ decomposition: { ...inventedDocument.decomposition, rateConstant } }),
+    );
+    const checked = checkedCases().map(({ text }) => methodsFor(JSON.parse(text)));
+    const worked = [methodsFor({}), ...forms, ...checked].flat().flatMap((method) => method.worked ?? []);
+    expect(worked.length).toBeGreaterThan(80);
+    for (const line of worked) {
+      const [, numbers = "", result = ""] = line.split(" = ");
+      const [, shown = "", unit = ""] = /^([−\d .]+(?:×10\S+)?) (.+)$/u.exec(result) ?? [];
+      const printed = numberOf(shown) * (unit === "kW" ? 1000 : 1);
+      expect(printed, line).not.toBe(0);
+      // Results are rounded to the careful side in their last digit: three digits of rate constants, 0.1 K or 0.1 kW.
+      const lastDigit =
+        unit === "K" || unit === "kW" ? 0.1 * (unit === "kW" ? 1000 : 1) : 0.006 * Math.abs(printed);
+      expect(Math.abs(evaluate(numbers) - printed), line).toBeLessThanOrEqual(lastDigit);
+    }
   });
 
   test("shows the standard concentration beside the activation entropy", () => {
