@@ -1,4 +1,5 @@
 import { type Request, type Response, Router, urlencoded } from "express";
+import { canonicalJson } from "../case/canonical.js";
 import { documentFromForm } from "../case/form.js";
 import { readCase } from "../case/read.js";
 import type { SheetEntry } from "../files/registerEntry.js";
@@ -9,10 +10,12 @@ import { timeText } from "../words/timeText.js";
 import { abandoned } from "./abandoned.js";
 import { type Origin, renderCase } from "./casePage.js";
 import { controlId } from "./places.js";
+import { tellWhen } from "./problems.js";
 import { diskRefusal } from "./registerRefusal.js";
 import type { FilingTrouble } from "./registerTrouble.js";
 import { addressOfSheet, numberIn } from "./registerView.js";
 import type { Services } from "./services.js";
+import { Unavailable } from "./unavailable.js";
 
 /** Files the sheet of a case as it stands in the form, saved or not. */
 export function registerFiling(services: Services): Router {
@@ -32,26 +35,18 @@ export function registerFiling(services: Services): Router {
     const body: Record<string, unknown> = request.body ?? {};
     const document = documentFromForm(body);
     const paper = body.paper === "Letter" ? "Letter" : "A4";
-    const again = (status: number, filing?: FilingTrouble) => {
-      response.status(status);
-      const trouble = filing === undefined ? {} : { filing };
-      return renderCase(services, response, {
-        document,
-        origin,
-        paper,
-        changed: true,
-        full: true,
-        ...trouble,
-      });
-    };
+    const changed =
+      origin.kind === "saved" && canonicalJson(document) !== canonicalJson(origin.saved.document);
+    const again = (status: number, trouble: { readonly filing?: FilingTrouble } = {}) =>
+      renderCase(services, response.status(status), { document, origin, paper, changed, ...trouble });
     const read = readCase(document);
     if (!read.ok) return again(422);
     const typed = read.document;
-    if (!isFilable(typed)) return again(422, noRecord);
+    if (!isFilable(typed)) return again(422, { filing: noRecord });
     const { model, digest } = read;
     const signal = abandoned(response);
-    const findings = await screener.screen({ model, digest, depth: "full" }, signal);
     try {
+      const findings = await screener.screen({ model, digest, depth: "full" }, signal);
       const outcome = await register.file({
         facts: factsOf(typed, findings),
         caseDigest: digest,
@@ -63,12 +58,16 @@ export function registerFiling(services: Services): Router {
         }),
       });
       if (outcome.filed) return response.redirect(303, addressOfSheet(outcome.entry.number));
-      return again(409, question(typed, digest, outcome.standing));
+      return again(409, { filing: question(typed, digest, outcome.standing) });
     } catch (error) {
+      if (error instanceof Unavailable) {
+        tellWhen(response, error);
+        return again(error.status, { filing: notFiled([error.message, kept]) });
+      }
       const refusal = diskRefusal(error);
       if (refusal === null) throw error;
       log.error({ err: error }, "a sheet could not be filed");
-      return again(refusal.status, refused(refusal.sentence));
+      return again(refusal.status, { filing: notFiled([refusal.sentence, kept, lookFirst]) });
     }
   }
 
@@ -109,13 +108,14 @@ function question(document: FilableCase, digest: string, standing: SheetEntry | 
   };
 }
 
-function refused(sentence: string): FilingTrouble {
+const kept = "Nothing you typed is lost: it stands below, and “Case as JSON” gives it to you as a file.";
+/** A disk may fail after it has taken the entry. */
+const lookFirst = "Before you file again, look in the register whether the sheet stands there.";
+
+function notFiled(sentences: readonly string[]): FilingTrouble {
   return {
     title: "Not filed",
-    sentences: [
-      sentence,
-      "Nothing you typed is lost: it stands below, and “Case as JSON” gives it to you as a file. Before you file again, look in the register whether the sheet stands there.",
-    ],
+    sentences,
     links: [{ address: "/register", words: "To the register" }],
     button: null,
   };
