@@ -70,6 +70,7 @@ async function refresh(parts) {
   try {
     const fresh = await send(`/findings?parts=${parts}`, body());
     take(fresh, "outcome");
+    document.dispatchEvent(new Event("outcome"));
     for (const working of form.querySelectorAll("[data-working]")) take(fresh, working.id);
     const found = fresh.querySelector("#findings > *") !== null;
     if (found) take(fresh, "findings");
@@ -77,20 +78,30 @@ async function refresh(parts) {
     noteStale(!found);
     showFaults();
   } catch (error) {
-    if (error.name !== "AbortError") noteStale(true);
+    if (error.name === "AbortError") return;
+    noteStale(true);
+    const pending = document.getElementById("pending");
+    if (pending !== null) pending.textContent = "The server did not answer. “Screen” asks again.";
   }
 }
 
 function refreshSoon() {
   clearTimeout(timer);
   timer = setTimeout(refresh, pause_ms, "quick");
+  dropProgress();
   state.textContent = state.dataset.changed;
+}
+
+/** A screening of what stood in the fields before is not wanted any more. */
+function dropProgress() {
+  document.getElementById("progress")?.remove();
+  document.dispatchEvent(new Event("outcome"));
 }
 
 /** Has the failures and the draws computed where the page came without them. */
 function complete() {
   const pending = document.getElementById("pending");
-  if (pending === null) return;
+  if (pending === null || document.getElementById("progress") !== null) return;
   pending.textContent = pending.dataset.working;
   pending.setAttribute("role", "status");
   refresh("full");
@@ -158,11 +169,13 @@ form.addEventListener("submit", (event) => {
   complete();
 });
 
+document.addEventListener("screened", () => refresh("full"));
+
 // Going back restores what was typed after the page was drawn: the findings must follow it.
 addEventListener("pageshow", () => {
   const typed = [...form.elements].some(
     (each) => "defaultValue" in each && each.type !== "hidden" && each.value !== each.defaultValue,
   );
   if (typed) refreshSoon();
-  else complete();
+  else if (document.querySelector("#pending[data-held]") === null) complete();
 });

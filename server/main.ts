@@ -2,9 +2,11 @@ import { join } from "node:path";
 import { pino } from "pino";
 import { caseStore } from "./files/cases.js";
 import { readDemos } from "./files/demos.js";
+import { register } from "./files/register.js";
 import { folderStorage } from "./files/storage.js";
 import { projectRoot, readSettings } from "./settings.js";
 import { createApp } from "./web/app.js";
+import { longScreenings } from "./web/longScreenings.js";
 import { threadedScreener } from "./web/screener.js";
 
 const grace_ms = 4000;
@@ -18,6 +20,8 @@ const { settings } = read;
 const log = pino({ level: "info" }, pino.destination({ fd: 2, sync: true }));
 const storage = folderStorage(settings.dataFolder);
 await storage.sweep("cases");
+const sheets = register(storage);
+for (const sentence of await sheets.start()) log.warn(sentence);
 
 const screener = threadedScreener({
   ceiling_s: settings.screenSeconds,
@@ -26,7 +30,9 @@ const screener = threadedScreener({
 const app = createApp(settings, {
   cases: caseStore(storage),
   demos: await readDemos(folderStorage(join(projectRoot, "scenarios"))),
+  register: sheets,
   screener,
+  screenings: longScreenings(screener, log),
   log,
 });
 

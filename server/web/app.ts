@@ -11,6 +11,10 @@ import { compressedText } from "./compression.js";
 import { homePages } from "./homePages.js";
 import { controlId } from "./places.js";
 import { answerErrors, refuse } from "./problems.js";
+import { progressPages } from "./progressPages.js";
+import { registerFiling } from "./registerFiling.js";
+import { registerPages } from "./registerPages.js";
+import { registerVerify } from "./registerVerify.js";
 import { requestLog } from "./requestLog.js";
 import { headers, ownHostOnly, ownOriginWrites } from "./security.js";
 import type { Services } from "./services.js";
@@ -34,7 +38,8 @@ export function createApp(settings: Settings, services: Services): Express {
   app.use(assets.serve);
   app.use(compressedText());
   app.use("/api", jsonInterface(services));
-  app.use(homePages(services), casePages(services));
+  app.use(homePages(services), registerFiling(services), casePages(services), progressPages(services));
+  app.use(registerPages(services), registerVerify(services));
   app.use((request, response) => {
     refuse(request, response, {
       status: 404,

@@ -3,11 +3,14 @@ import { type Before, formOf, type Pasted, workingsShown } from "../case/form.js
 import { type Fault, readCase } from "../case/read.js";
 import { type SavedCase, titleOf } from "../files/cases.js";
 import type { DemoCase } from "../files/demos.js";
+import type { Findings } from "../screening/findings.js";
 import { timeText } from "../words/timeText.js";
-import { abandoned } from "./abandoned.js";
+import { beginFull } from "./beginFull.js";
 import { differences } from "./differences.js";
 import { type FindingsView, findingsView } from "./findingsView.js";
 import { type ListedFault, listFaults, type Places, placeAt, placesOf } from "./places.js";
+import { endOf, type ProgressView, progressView } from "./progressWords.js";
+import type { FilingTrouble } from "./registerTrouble.js";
 import type { Services } from "./services.js";
 
 /** Where the case on a page comes from, and so where its form goes. */
@@ -28,14 +31,20 @@ export interface CaseToShow {
   readonly before?: Before;
   /** what waits in the text areas of tables */
   readonly pasted?: Pasted;
-  /** waits for failures and draws; otherwise the page comes with what is known at once */
-  readonly full?: boolean;
+  /** otherwise the page comes with what is known at once */
+  readonly findings?: Findings;
+  /** why there are no full findings */
+  readonly told?: string | null;
+  /** address of the file that was asked for and is ready */
+  readonly file?: string;
   /** what was typed differs from what `origin` holds */
   readonly changed?: boolean;
   /** of the sheet, as chosen in the form */
   readonly paper?: unknown;
   /** the newer copy that stood in the way of a save */
   readonly conflict?: SavedCase;
+  /** why its sheet was not filed */
+  readonly filing?: FilingTrouble;
 }
 
 /** What a screening of a typed case came to: faults, or findings, or neither yet. */
@@ -44,6 +53,10 @@ export interface Outcome {
   readonly live: boolean;
   readonly faults: readonly ListedFault[];
   readonly findings: FindingsView | null;
+  /** of the failures and draws that are being computed */
+  readonly progress: ProgressView | null;
+  /** why they were not */
+  readonly told: string | null;
 }
 
 interface Screened {
@@ -53,8 +66,8 @@ interface Screened {
 
 /** Screens a document and answers with the page of its case. */
 export async function renderCase(services: Services, response: Response, shown: CaseToShow): Promise<void> {
-  const { document, origin, faultsShown = true, faultsUnder = "", before = {}, full = false } = shown;
-  const screened = await screenDocument(services, response, document, full);
+  const { document, origin, faultsShown = true, faultsUnder = "", before = {} } = shown;
+  const screened = await screenDocument(services, document, shown.findings);
   const faults = screened.faults.filter(({ pointer }) => faultsShown && pointer.startsWith(faultsUnder));
   const sections = formOf(document, faults, before, shown.pasted);
   const places = placesOf(sections);
@@ -63,46 +76,65 @@ export async function renderCase(services: Services, response: Response, shown: 
     page: {
       title: titleOf(document),
       wide: true,
-      script: "/case.js",
+      script: ["/case.js", "/progress.js"],
       state: stateOf(shown),
       action: saved === null ? "/cases/new" : `/cases/${saved.id}`,
       revision: shown.conflict?.revision ?? saved?.revision ?? null,
       sections,
       paper: shown.paper,
-      outcome: { live: false, faults: listFaults(faults, places), findings: screened.findings },
+      outcome: {
+        live: false,
+        faults: listFaults(faults, places),
+        findings: screened.findings,
+        progress: null,
+        told: shown.told ?? null,
+      },
+      file: shown.file ?? null,
       conflict: shown.conflict === undefined ? null : conflictOf(document, shown.conflict),
+      filing: shown.filing ?? null,
     },
     targetOf: targets(places),
   });
 }
 
-/** Screens what someone is typing and answers with the part of the page that holds the result. */
+/** Screens what someone is typing and answers with the part of the page that holds the result, or its progress. */
 export async function renderOutcome(
   services: Services,
   response: Response,
   document: unknown,
   full: boolean,
 ): Promise<void> {
-  const { faults, findings } = await screenDocument(services, response, document, full);
+  const screening = full ? await beginFull(services, response, document, null) : null;
+  const course = screening?.course() ?? null;
+  if (response.closed) return;
+  const { faults, findings } = await screenDocument(
+    services,
+    document,
+    course?.kind === "done" ? course.findings : undefined,
+  );
   const sections = formOf(document, faults);
   const places = placesOf(sections);
-  const outcome: Outcome = { live: true, faults: listFaults(faults, places), findings };
+  const outcome: Outcome = {
+    live: true,
+    faults: listFaults(faults, places),
+    findings,
+    progress: screening !== null && course?.kind === "running" ? progressView(screening) : null,
+    told: course === null ? null : endOf(course),
+  };
   response.render("fragment", { outcome, workings: workingsShown(sections), targetOf: targets(places) });
 }
 
 async function screenDocument(
   { screener }: Services,
-  response: Response,
   document: unknown,
-  full: boolean,
+  findings?: Findings,
 ): Promise<Screened> {
   const read = readCase(document);
   if (!read.ok) return { faults: read.faults, findings: null };
   const { model, digest } = read;
-  const depth = full ? "full" : "quick";
-  const findings =
-    screener.known(digest) ?? (await screener.screen({ model, digest, depth }, abandoned(response)));
-  return { faults: [], findings: findingsView(findings) };
+  const found =
+    findings ?? screener.known(digest) ?? (await screener.screen({ model, digest, depth: "quick" }));
+  return { faults: [], findings: findingsView(found) };
 }
 
 /** For links from a caution to the input it is about. */

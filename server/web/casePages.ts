@@ -12,12 +12,11 @@ import {
   stillWaiting,
   workField,
 } from "../case/form.js";
-import { readCase } from "../case/read.js";
 import { titleOf } from "../files/cases.js";
-import { abandoned } from "./abandoned.js";
 import { type Origin, renderCase, renderOutcome } from "./casePage.js";
 import { fileName } from "./fileName.js";
 import { refuse } from "./problems.js";
+import { renderScreened } from "./progressPages.js";
 import type { Services } from "./services.js";
 
 /** Pages of single cases. The form carries the whole case, so every action starts from what was typed. */
@@ -95,9 +94,6 @@ export function casePages(services: Services): Router {
       response.type("application/json").send(`${JSON.stringify(document, null, 2)}\n`);
       return;
     }
-    if (action === "sheet" || action === "findings") {
-      if (await download(response, document, action, body.paper)) return;
-    }
     if (action === "update" || /^(add|add-failure|remove):/.test(action)) {
       const edited = editForm(document, action);
       return renderCase(services, response, { ...kept, document: edited, faultsShown: false, changed: true });
@@ -110,14 +106,9 @@ export function casePages(services: Services): Router {
       const { group: faultsUnder, ...worked } = workField(document, action, before);
       return renderCase(services, response, { ...kept, ...worked, faultsUnder, changed: true });
     }
-    if (!readCase(document).ok) response.status(422);
-    return renderCase(services, response, {
-      ...kept,
-      document,
-      changed: isChanged(document, origin),
-      full: true,
-      paper: body.paper,
-    });
+    const shown = { ...kept, document, changed: isChanged(document, origin), paper: body.paper };
+    const file = action === "sheet" || action === "findings" ? action : null;
+    return renderScreened(services, response, shown, file);
   }
 
   async function save(response: Response, document: unknown, origin: Origin, over: number): Promise<void> {
@@ -130,31 +121,6 @@ export function casePages(services: Services): Router {
     if (outcome === null || outcome.saved) return response.redirect(303, `/cases/${id}`);
     response.status(409);
     return renderCase(services, response, { document, origin, conflict: outcome.current });
-  }
-
-  /** @returns false where the case holds faults, which the page must then show */
-  async function download(
-    response: Response,
-    document: unknown,
-    what: "sheet" | "findings",
-    paper: unknown,
-  ): Promise<boolean> {
-    const read = readCase(document);
-    if (!read.ok) return false;
-    const { model, digest } = read;
-    const signal = abandoned(response);
-    const findings = await services.screener.screen({ model, digest, depth: "full" }, signal);
-    const name = fileName(titleOf(document));
-    if (what === "findings") {
-      response.attachment(`${name} findings.json`).json(findings);
-      return true;
-    }
-    const sheet = await services.screener.sheet(
-      { document: read.document, model, findings, paper: paper === "Letter" ? "Letter" : "A4" },
-      signal,
-    );
-    response.attachment(`${name}.pdf`).type("application/pdf").send(sheet);
-    return true;
   }
 
   return router;

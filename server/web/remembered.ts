@@ -30,7 +30,7 @@ export function rememberedFindings() {
       kept.set(findings.digest, { findings, size });
       taken += size;
       for (const digest of kept.keys()) {
-        if (taken <= room) break;
+        if (taken <= room || kept.size === 1) break;
         forget(digest);
       }
       return findings;

@@ -2,9 +2,11 @@ import { join } from "node:path";
 import { pino } from "pino";
 import { type CaseStore, caseStore } from "../../server/files/cases.js";
 import { readDemos } from "../../server/files/demos.js";
+import { type Register, register } from "../../server/files/register.js";
 import { folderStorage } from "../../server/files/storage.js";
 import { projectRoot } from "../../server/settings.js";
 import { createApp } from "../../server/web/app.js";
+import { longScreenings } from "../../server/web/longScreenings.js";
 import { directScreener, type Screener } from "../../server/web/screener.js";
 import { memoryStorage } from "../files/memoryStorage.js";
 
@@ -19,13 +21,15 @@ export function demoDocument(name = "ring-closure"): Record<string, unknown> {
   return structuredClone(demo.document) as Record<string, unknown>;
 }
 
-/** The application over cases in memory, screening in this thread unless said. */
+/** The application over cases and a register in memory, screening in this thread unless said. */
 export function testApp(
   cases: CaseStore = caseStore(memoryStorage()),
   screener: Screener = directScreener(),
+  sheets: Register = register(memoryStorage()),
 ) {
   const logged: string[] = [];
   const log = pino({ level: "info" }, { write: (line: string) => logged.push(line) });
-  const app = createApp(settings, { cases, demos, screener, log });
-  return { app, cases, logged };
+  const screenings = longScreenings(screener, log);
+  const app = createApp(settings, { cases, demos, register: sheets, screener, screenings, log });
+  return { app, cases, sheets, logged };
 }
