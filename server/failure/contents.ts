@@ -106,20 +106,13 @@ export function createContents(step: Step, rate: ModifiedArrhenius, reference: n
   let power = 0;
   let inside = inventoryOf(step, { fed: 0, quenchCapacity: 0, quenchVolume: 0 }, false);
   let slowest = 0;
-  let blurredA = totalA;
-  let blurredB = totalB;
-  let blurredProgress = 1;
+  let [blurredA, blurredB, blurredProgress] = [totalA, totalB, 1];
 
   // What `prepare` computes at one place, shared by the slope and its derivatives.
-  let temperature = 0;
-  let capacity = 1;
-  let volume = 1;
+  let [temperature, capacity, volume] = [0, 1, 1];
   let factor = 0;
-  let ofA = 0;
-  let ofB = 0;
-  let sign = 1;
-  let amountA = 0;
-  let amountB = 0;
+  let [ofA, ofB, sign] = [0, 0, 1];
+  let [amountA, amountB] = [0, 0];
   let reacting = 0;
   let reactionLevelling = 1;
   let decaying = 0;

@@ -3,7 +3,7 @@ import { traceOf } from "../failure/trace.js";
 import { createVessel, type Vessel } from "../failure/vessel.js";
 import { vulnerableMoments } from "../failure/vulnerable.js";
 import type { Step } from "../thermal/step.js";
-import { failureCautions, unfollowed, withoutKinetics } from "./cautions/failures.js";
+import { failureCautions, measuredBeyondKinetics, unfollowed, withoutKinetics } from "./cautions/failures.js";
 import type { Caution, FailureFindings } from "./findings.js";
 import type { FailureModel } from "./model.js";
 import { ignored, type Progress } from "./progress.js";
@@ -27,6 +27,8 @@ export function failureFindings(
   const vessels = new Map<number, Vessel | null>();
   const findings: FailureFindings[] = [];
   const cautions: Caution[] = [];
+  const { measuredExcess } = step.reaction;
+  if (measuredExcess > 0) cautions.push(measuredBeyondKinetics(measuredExcess));
   failures.forEach((failure, i) => {
     onProgress(i / failures.length);
     const pointer = `/failures/${i}`;

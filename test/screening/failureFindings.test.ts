@@ -154,6 +154,18 @@ describe("the findings of the failures of a case", () => {
     expect(cautions.map((each) => each.code)).toEqual(["NOT_ASSESSED"]);
   });
 
+  test("warn where a measurement has accumulated more than the kinetics that they are run with", () => {
+    const document = documentOf("semibatch-acylation");
+    const step = stepOf(document);
+    const { failures } = modelOf(document);
+    const codesWith = (measuredExcess: number) =>
+      failureFindings({ ...step, reaction: { ...step.reaction, measuredExcess } }, failures).cautions.map(
+        (each) => each.code,
+      );
+    expect(codesWith(4)).toContain("MEASURED_ACCUMULATION");
+    expect(codesWith(0)).not.toContain("MEASURED_ACCUMULATION");
+  });
+
   test("of two failures at different temperatures start each at its own", () => {
     const cold = { ...stops, name: "Cold", startTemperature: "60 degC" };
     const { failures } = findingsOf("batch-ring-closure", [stops, cold]);

@@ -2,7 +2,13 @@ import type { Assessment } from "../../failure/assessment.js";
 import { momentOf } from "../../failure/run.js";
 import type { Vessel } from "../../failure/vessel.js";
 import { allAtOnceTemperature } from "../../thermal/balance.js";
-import { durationText, percentText, powerText, temperatureText } from "../../words/numbers.js";
+import {
+  differenceText,
+  durationText,
+  percentText,
+  powerText,
+  temperatureText,
+} from "../../words/numbers.js";
 import type { Caution } from "../findings.js";
 import type { FailureModel } from "../model.js";
 import { caution } from "./catalogue.js";
@@ -36,6 +42,19 @@ export function withoutKinetics(failures: readonly FailureModel[]): Caution {
     "NOT_ASSESSED",
     "/failures",
     `Without a rate constant of the desired reaction failures cannot be simulated: ${names} and the time to act are not assessed.`,
+  );
+}
+
+/**
+ * Failures are run with the kinetics; where a measured run has accumulated more, they look better than they are.
+ *
+ * @param excess K by which the measurement lets MTSR exceed what the kinetics say
+ */
+export function measuredBeyondKinetics(excess: number): Caution {
+  return caution(
+    "MEASURED_ACCUMULATION",
+    "/failures",
+    `Failures are simulated with the kinetics, which accumulate less than was measured: peaks can lie up to ${differenceText(excess, "up")} higher, and the time to act is shorter than shown.`,
   );
 }
 
