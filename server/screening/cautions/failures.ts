@@ -113,20 +113,21 @@ function courseOf(
   failure: FailureModel,
   pointer: string,
   vessel: Vessel,
-  { run, runs }: Assessment,
+  { run, runs, verdict }: Assessment,
 ): Caution[] {
   const cautions: Caution[] = [];
   const { step } = vessel.contents;
   if (runs.length > 1) {
-    const [reported, other] =
-      run.mixing === "unmixed"
-        ? ["unmixed until the agitator runs again", "as if mixed"]
-        : ["as if mixed", "unmixed until the agitator runs again"];
+    const shown = run.mixing === "mixed" ? "as if mixed" : "unmixed until the agitator runs again";
+    const judged =
+      verdict === "holds"
+        ? "It holds with both."
+        : "The time to act is the one that is short enough for both.";
     cautions.push(
       caution(
         "MIXING_LOST",
         pointer,
-        `“${failure.name}” stops the agitator, and nobody knows how far the contents still mix: both assumptions were run. The course shown is the worse one, ${reported}; acting in time must save the contents ${other} too.`,
+        `“${failure.name}” stops the agitator, and nobody knows how far the contents still mix: they were run as if mixed, and unmixed until the agitator runs again. The course shown is the worse one, ${shown}. ${judged}`,
       ),
     );
   }
