@@ -2,22 +2,23 @@ import { once } from "node:events";
 import type { Server } from "node:http";
 import type { AddressInfo } from "node:net";
 import { setTimeout as pause } from "node:timers/promises";
+import { pino } from "pino";
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import { formOf, formValues } from "../../server/case/form.js";
 import { readCase } from "../../server/case/read.js";
-import { screen } from "../../server/screening/screen.js";
+import { longScreenings } from "../../server/web/longScreenings.js";
 import { type Screener, threadedScreener } from "../../server/web/screener.js";
 import { built } from "../build.js";
 import { demoDocument, testApp } from "./testApp.js";
 
-/** A case that takes some seconds: the acylation with many failures. */
-function longCase(title: string): Record<string, unknown> {
-  const document = demoDocument("acylation");
-  const failures = document.failures as Record<string, unknown>[];
+/** A case that takes two and a half seconds, or ten times less. */
+function timedCase(title: string, failures: 1 | 10 = 10): Record<string, unknown> {
+  const document = demoDocument("hydrolysis");
+  const [failure] = document.failures as Record<string, unknown>[];
   return {
     ...document,
     title,
-    failures: Array.from({ length: 20 }, (_, i) => ({ ...failures[i % failures.length], name: `F${i}` })),
+    failures: Array.from({ length: failures }, (_, i) => ({ ...failure, name: `Failure ${i}` })),
   };
 }
 
@@ -25,8 +26,9 @@ function form(document: unknown, extra: Readonly<Record<string, string>> = {}): 
   return new URLSearchParams([...formValues(formOf(document)), ...Object.entries(extra)]);
 }
 
-const screener = threadedScreener({ worker: built("server/web/screeningWorker.ts") });
-const impatient = threadedScreener({ worker: built("server/web/screeningWorker.ts"), ceiling_s: 1.5 });
+const worker = built("test/web/slowWorker.ts");
+const screener = threadedScreener({ worker });
+const impatient = threadedScreener({ worker, ceiling_s: 2 });
 const servers: Server[] = [];
 let address: string;
 let hurried: string;
@@ -125,7 +127,7 @@ async function typed(document: unknown): Promise<{ readonly text: string; readon
 
 describe("a screening of over a second, without script", () => {
   test("shows its progress on a page that refreshes itself, and ends as the page of the case", async () => {
-    const { status, next } = await press(address, longCase("Refreshed"));
+    const { status, next } = await press(address, timedCase("Refreshed"));
     expect(status).toBe(303);
     const first = await page(next);
     expect(first.text).toContain("Cancel");
@@ -140,7 +142,7 @@ describe("a screening of over a second, without script", () => {
   });
 
   test("is cancelled by its button, stops, and keeps what was typed", async () => {
-    const { next } = await press(address, longCase("Cancelled here"));
+    const { next } = await press(address, timedCase("Cancelled here"));
     const answer = await fetch(`${next}/cancel`, { method: "POST" });
     const text = await answer.text();
     expect(answer.status).toBe(200);
@@ -151,7 +153,7 @@ describe("a screening of over a second, without script", () => {
   });
 
   test("leads to the sheet where that was asked for", async () => {
-    const { next } = await press(address, longCase("With its sheet"), "sheet");
+    const { next } = await press(address, timedCase("With its sheet"), "sheet");
     const { text } = await refreshed(next);
     expect(text).toContain(`<meta http-equiv="refresh" content="0; url=${new URL(next).pathname}/file">`);
     const sheet = await fetch(`${next}/file`);
@@ -167,7 +169,7 @@ describe("a screening of over a second, without script", () => {
 
 describe("a screening of over a second, with script", () => {
   test("tells its progress as events, and is at hand at their end", async () => {
-    const document = longCase("Events");
+    const document = timedCase("Events");
     const begun = await typed(document);
     expect(begun.text).toContain("No stop so far");
     const told = await events(begun.events ?? "");
@@ -181,7 +183,7 @@ describe("a screening of over a second, with script", () => {
   });
 
   test("is cancelled by its button while events are listened to", async () => {
-    const begun = await typed(longCase("Cancelled there"));
+    const begun = await typed(timedCase("Cancelled there"));
     const at = begun.events ?? "";
     let asked = false;
     const told = await events(at, () => {
@@ -203,7 +205,7 @@ describe("work that nobody waits for", () => {
       const answer = fetch(`${address}/api/screen`, {
         method: "POST",
         headers: { "content-type": "application/json" },
-        body: JSON.stringify(longCase(`Gone after ${after_ms} ms`)),
+        body: JSON.stringify(timedCase(`Gone after ${after_ms} ms`)),
         signal: gone.signal,
       }).catch(String);
       await pause(after_ms);
@@ -214,15 +216,31 @@ describe("work that nobody waits for", () => {
     }
   });
 
-  test("a progress page that was closed stops its work", async () => {
-    const begun = await typed(longCase("Closed"));
-    const gone = new AbortController();
-    const listening = fetch(begun.events ?? "", { signal: gone.signal });
-    await listening;
-    expect(screener.load().running).toBe(1);
-    gone.abort();
-    await pause(500);
-    expect(screener.load().running).toBe(1);
+  test("a screening whose page was closed is given up, one that is looked after is not", async () => {
+    const log = pino({ level: "silent" });
+    const screenings = longScreenings(screener, log, 200);
+    const begin = (title: string) => {
+      const read = readCase(timedCase(title));
+      if (!read.ok) throw new Error(JSON.stringify(read.faults));
+      const screening = screenings.begin({ model: read.model, digest: read.digest, depth: "full" }, null);
+      screenings.keep(screening);
+      return screening;
+    };
+    const [left, refreshing, listened] = ["Left", "Refreshing", "Listened to"].map(begin);
+    const leave = listened.watch();
+    for (let i = 0; i < 8; i += 1) {
+      await pause(60);
+      refreshing.look();
+    }
+    expect([left, refreshing, listened].map((each) => each.course().kind)).toEqual([
+      "cancelled",
+      "running",
+      "running",
+    ]);
+    leave();
+    await pause(300);
+    expect([refreshing, listened].map((each) => each.course().kind)).toEqual(["cancelled", "cancelled"]);
+    await idle(screener);
   });
 });
 
@@ -231,30 +249,28 @@ describe("the ceiling", () => {
     const answer = await fetch(`${hurried}/api/screen`, {
       method: "POST",
       headers: { "content-type": "application/json" },
-      body: JSON.stringify(longCase("Too long")),
+      body: JSON.stringify(timedCase("Too long")),
     });
     expect(answer.status).toBe(503);
     expect(answer.headers.get("content-type")).toContain("application/problem+json");
     expect(await answer.json()).toMatchObject({
       status: 503,
-      detail: expect.stringContaining("ended after 1.5 s"),
+      detail: expect.stringContaining("ended after 2 s"),
     });
     const next = await fetch(`${hurried}/api/screen`, {
       method: "POST",
       headers: { "content-type": "application/json" },
-      body: JSON.stringify(demoDocument("published-oncb")),
+      body: JSON.stringify(timedCase("Short enough", 1)),
     });
-    const read = readCase(demoDocument("published-oncb"));
-    if (!read.ok) throw new Error("A demo case cannot be read.");
-    const direct = screen(read.model, { digest: read.digest, depth: "full" });
-    expect(await next.json()).toEqual(JSON.parse(JSON.stringify(direct)));
+    expect(next.status).toBe(200);
+    expect(await next.json()).toMatchObject({ failures: [{ name: "Failure 0" }] });
   });
 
   test("people get the page of their case with the sentence, and what they typed", async () => {
-    const { next } = await press(hurried, longCase("Too long for the page"));
+    const { next } = await press(hurried, timedCase("Too long for the page"));
     const { status, text } = await refreshed(next);
     expect(status).toBe(503);
-    expect(text).toContain("ended after 1.5 s");
+    expect(text).toContain("ended after 2 s");
     expect(text).toContain('value="Too long for the page"');
   });
 });
