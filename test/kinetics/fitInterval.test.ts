@@ -3,7 +3,7 @@ import { describe, expect, test } from "vitest";
 import { fitTable, meanLnRateConstant, type TableFit } from "../../server/kinetics/fit.js";
 import { lnVariance, pairErrors } from "../../server/kinetics/interval.js";
 import type { EyringParameters } from "../../server/kinetics/parameters.js";
-import { dithionate } from "../published/rateTables.js";
+import { dithionate } from "../../server/screening/checks/rateTables.js";
 
 /** The fit as a person would type it: parameters and errors, perhaps rounded, perhaps without the correlation. */
 function typed(fit: TableFit, changes: Partial<EyringParameters> = {}): EyringParameters {

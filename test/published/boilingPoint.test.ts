@@ -1,28 +1,16 @@
 import { describe, expect, test } from "vitest";
 import { zeroCelsius } from "../../server/numeric/constants.js";
+import { steamTable } from "../../server/screening/checks/vessel.js";
 import { antoineBoilingPoint, clausiusClapeyron, pressureUnits } from "../../server/thermal/boilingPoint.js";
-
-// Saturated water and steam, pressure in bar and temperature in degC: Wagner & Kretzschmar, International Steam
-// Tables (IAPWS-IF97), to the digits printed; from memory.
-const steamTable = [
-  [0.1, 45.81],
-  [0.2, 60.06],
-  [0.5, 81.32],
-  [1, 99.61],
-  [2, 120.21],
-  [3, 133.53],
-  [5, 151.84],
-  [10, 179.89],
-] as const;
 
 describe("Clausius-Clapeyron, water with Tb = 99.97 degC and dHv = 40.65 kJ/mol (handbook values, from memory)", () => {
   const boiling = (bar: number) => clausiusClapeyron(99.97 + zeroCelsius, 40_650, bar * 1e5) - zeroCelsius;
 
   test.each(steamTable)(
-    "at %d bar is between 2 K below and 0.2 K above the steam table's %d degC",
+    "at %d bar is between 2 K below and 0.2 K above the steam table's %s degC",
     (bar, degC) => {
-      expect(boiling(bar)).toBeLessThan(degC + 0.2);
-      expect(boiling(bar)).toBeGreaterThan(degC - 2);
+      expect(boiling(bar)).toBeLessThan(Number(degC) + 0.2);
+      expect(boiling(bar)).toBeGreaterThan(Number(degC) - 2);
     },
   );
 
@@ -49,12 +37,6 @@ describe("Antoine's equation, water in mmHg and degC", () => {
     temperatureZero: zeroCelsius,
   });
   const low = water(8.07131, 1730.63, 233.426);
-  const high = water(8.14019, 1810.94, 244.485);
-
-  test.each(steamTable)("at %d bar is within 0.5 K of the steam table's %d degC", (bar, degC) => {
-    const constants = degC <= 100 ? low : high;
-    expect(Math.abs(antoineBoilingPoint(constants, bar * 1e5) - zeroCelsius - degC)).toBeLessThan(0.5);
-  });
 
   test("gives 760 mmHg at 100 degC", () => {
     expect(antoineBoilingPoint(low, 101_325) - zeroCelsius).toBeCloseTo(100, 1);

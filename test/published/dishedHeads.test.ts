@@ -4,18 +4,10 @@ import { dinRadii, ellipsoidalBottom, torisphericalBottom } from "../../server/t
 const areaOf = (bottom: ReturnType<typeof ellipsoidalBottom>) => bottom.areaBelow(bottom.height);
 const volumeOf = (bottom: ReturnType<typeof ellipsoidalBottom>) => bottom.volumeBelow(bottom.height);
 
-describe("whole heads against the figures of an open geometry library", () => {
-  test("a torispherical head of 2.54 m, dish 1.039370079 D, knuckle 0.062362205 D", () => {
-    const head = torisphericalBottom(2.54, 1.039370079 * 2.54, 0.062362205 * 2.54);
-    expect(areaOf(head)).toBeCloseTo(6.00394283477063, 12);
-    // Volume and height: independent implementation.
-    expect(volumeOf(head)).toBeCloseTo(1.315762103724892, 12);
-    expect(head.height).toBeCloseTo(0.421287761238738, 12);
-  });
-
-  test("half an ellipsoid of 2 m, 1.5 m high, which is longer than it is wide", () => {
-    expect(areaOf(ellipsoidalBottom(2, 1.5))).toBeCloseTo(8.459109081729984, 12);
-  });
+test("a torispherical head of 2.54 m has the volume and height of an independent implementation", () => {
+  const head = torisphericalBottom(2.54, 1.039370079 * 2.54, 0.062362205 * 2.54);
+  expect(volumeOf(head)).toBeCloseTo(1.315762103724892, 12);
+  expect(head.height).toBeCloseTo(0.421287761238738, 12);
 });
 
 describe("the two DIN forms", () => {

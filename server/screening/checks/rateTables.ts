@@ -1,5 +1,5 @@
-import type { TableParameters } from "../../server/kinetics/parameters.js";
-import { zeroCelsius } from "../../server/numeric/constants.js";
+import type { TableParameters } from "../../kinetics/parameters.js";
+import { zeroCelsius } from "../../numeric/constants.js";
 
 /** Rate constants at Celsius temperatures as printed, k in (L/mol)^(n-1)/s. */
 function table(order: number, fitAs: "eyring" | "arrhenius", pairs: readonly (readonly [number, number])[]) {
