@@ -26,8 +26,10 @@ export function registerPages({ register, log }: Pick<Services, "register" | "lo
     response.status(sound ? 200 : 400).render("register", {
       page: {
         title: "Register",
+        wide: true,
         typed,
         faults,
+        sound,
         gaps: gapsOf(index),
         total: index.sheets().length,
         count: found.length,

@@ -7,7 +7,8 @@ import { settled, type Visit } from "./visit.js";
 
 const axe = readFileSync(createRequire(import.meta.url).resolve("axe-core/axe.min.js"), "utf8");
 
-async function violations(page: Page): Promise<readonly string[]> {
+/** What axe-core finds on a page. */
+export async function violations(page: Page): Promise<readonly string[]> {
   await page.evaluate(axe);
   const { violations } = await page.evaluate<AxeResults>("axe.run({ resultTypes: ['violations'] })");
   return violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html} (${nodes.length})`);

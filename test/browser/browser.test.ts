@@ -9,6 +9,7 @@ import { accessibility } from "./accessibility.js";
 import { startBrowser } from "./browser.js";
 import { editing } from "./editing.js";
 import { measures } from "./measures.js";
+import { filing } from "./register.js";
 import { saving } from "./saving.js";
 import { workings } from "./workings.js";
 
@@ -46,3 +47,4 @@ saving(visit);
 accessibility(visit);
 measures(visit);
 workings(visit);
+filing(visit);
