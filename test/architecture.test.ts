@@ -7,7 +7,7 @@ import { projectRoot } from "../server/settings.js";
 const floors: readonly (readonly string[])[] = [
   ["main.ts"],
   ["cli", "web"],
-  ["settings.ts"],
+  ["settings.ts", "password.ts"],
   ["sheet", "records", "files"],
   ["charts", "case"],
   ["screening"],
