@@ -4,12 +4,16 @@ import { caseStore } from "./files/cases.js";
 import { readDemos } from "./files/demos.js";
 import { register } from "./files/register.js";
 import { folderStorage } from "./files/storage.js";
-import { projectRoot, readSettings } from "./settings.js";
+import { isOpen, projectRoot, readSettings } from "./settings.js";
 import { createApp } from "./web/app.js";
+import { serverOf } from "./web/connections.js";
+import { readiness } from "./web/health.js";
 import { longScreenings } from "./web/longScreenings.js";
 import { threadedScreener } from "./web/screener.js";
 
 const grace_ms = 4000;
+const unencrypted =
+  "What goes between here and the browsers, the password too, is not encrypted: put a proxy in front.";
 
 const read = readSettings(process.env);
 if (!read.ok) {
@@ -33,21 +37,22 @@ const app = createApp(settings, {
   register: sheets,
   screener,
   screenings: longScreenings(screener, log),
+  ready: readiness(storage, screener),
   log,
 });
 
-const server = app.listen(settings.port, settings.host, (error) => {
-  if (error !== undefined) {
-    process.stderr.write(`The server cannot listen on ${settings.host}:${settings.port}: ${error.message}\n`);
-    process.exit(1);
-  }
+const server = serverOf(app);
+server.once("error", (error) => {
+  process.stderr.write(`The server cannot listen on ${settings.host}:${settings.port}: ${error.message}\n`);
+  process.exit(1);
+});
+server.listen(settings.port, settings.host, () => {
   const address = server.address();
   const port = typeof address === "object" && address !== null ? address.port : settings.port;
   const host = settings.host.includes(":") ? `[${settings.host}]` : settings.host;
   process.stdout.write(`Thermal Window listens on http://${host}:${port}\n`);
+  if (isOpen(settings.host)) log.warn(unencrypted);
 });
-server.headersTimeout = 15_000;
-server.requestTimeout = 30_000;
 
 /** Finishes what is under way, gives up on the rest after a few seconds. */
 function stop(): void {

@@ -4,14 +4,18 @@ import express, { type Express } from "express";
 import { notice } from "../screening/notice.js";
 import { projectRoot, type Settings } from "../settings.js";
 import { program } from "../words/program.js";
+import { signedInOnly, unforwardedOnly } from "./access.js";
 import { jsonInterface } from "./api.js";
 import { loadAssets } from "./assets.js";
+import { endUnread, limitBodies } from "./bodies.js";
 import { casePages } from "./casePages.js";
 import { compressedText } from "./compression.js";
+import { health } from "./health.js";
 import { homePages } from "./homePages.js";
 import { controlId } from "./places.js";
 import { answerErrors, refuse } from "./problems.js";
 import { progressPages } from "./progressPages.js";
+import { limitRate } from "./rateLimit.js";
 import { registerFiling } from "./registerFiling.js";
 import { registerPages } from "./registerPages.js";
 import { registerVerify } from "./registerVerify.js";
@@ -34,9 +38,13 @@ export function createApp(settings: Settings, services: Services): Express {
   app.locals.program = program;
   app.locals.controlId = controlId;
 
-  app.use(requestLog(services.log), headers(), ownHostOnly(settings.host), ownOriginWrites());
-  app.use(assets.serve);
-  app.use(compressedText());
+  // Behind a proxy on this machine, the client is whom the proxy names.
+  if (settings.publicHosts.length > 0) app.set("trust proxy", "loopback");
+
+  app.use(headers(), health(services.ready));
+  app.use(requestLog(services.log), ownHostOnly([settings.host, ...settings.publicHosts]), ownOriginWrites());
+  app.use(endUnread(), assets.serve, limitRate(), limitBodies(), compressedText());
+  app.use(settings.accessHash === null ? unforwardedOnly() : signedInOnly(settings.accessHash));
   app.use("/api", jsonInterface(services));
   app.use(homePages(services), registerFiling(services), casePages(services), progressPages(services));
   app.use(registerPages(services), registerVerify(services));

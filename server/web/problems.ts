@@ -53,8 +53,9 @@ function withPointer(status: number, title: string, detail: string): Problem {
 /** Everything a handler throws ends here: what the client caused is named, the rest is logged and is our defect. */
 export function answerErrors(log: Logger): ErrorRequestHandler {
   return (error: unknown, request, response, next) => {
+    // Answered already, or nobody there to be answered.
+    if (response.closed || response.writableEnded) return;
     if (response.headersSent) return next(error);
-    if (response.closed) return;
     const problem = problemOf(error);
     if (error instanceof Unavailable) tellWhen(response, error);
     else if (problem.status >= 500)

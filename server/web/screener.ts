@@ -26,6 +26,8 @@ export interface Screener {
   sheet(input: SheetInput, signal?: AbortSignal): Promise<Buffer>;
   /** pieces of work in the threads and before them */
   load: Pool["load"];
+  /** Settles once a thread has answered; a question like any other piece of work, it waits its turn. */
+  responds(): Promise<void>;
   /** Gives up what is still running. */
   close(): Promise<void>;
 }
@@ -40,6 +42,7 @@ export function directScreener(): Screener {
     standing: () => null,
     sheet: renderSheet,
     load: () => ({ running: 0, waiting: 0 }),
+    responds: async () => undefined,
     close: async () => undefined,
   };
 }
@@ -100,6 +103,7 @@ export function threadedScreener({
     sheet: async (input, signal = new AbortController().signal) =>
       Buffer.from(await pool.run<Uint8Array>("drawSheet", input, signal).result),
     load: pool.load,
+    responds: () => pool.run<void>("respond", null, new AbortController().signal).result,
     close: pool.close,
   };
 }

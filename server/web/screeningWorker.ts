@@ -15,3 +15,6 @@ export async function drawSheet({ task }: Order<SheetInput>): Promise<Uint8Array
   const { renderSheet } = await import("../sheet/render.js");
   return renderSheet(task);
 }
+
+/** Or nothing, which shows that the thread works. */
+export function respond(): void {}

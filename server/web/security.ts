@@ -30,19 +30,26 @@ export function headers(): RequestHandler {
 
 const loopback: ReadonlySet<string> = new Set(["localhost", "127.0.0.1", "[::1]"]);
 
+/** Every address of the machine; no address that a page could be called by. */
+const wildcards: ReadonlySet<string> = new Set(["0.0.0.0", "::"]);
+
 /**
- * Refuses a request for any name but the loopback ones and the one configured. A foreign
- * site can make its own name resolve to this address (DNS rebinding) and would then count as
+ * Refuses a request for any name but the loopback ones, those configured, and the very address that the request
+ * came to. A foreign site can make its own name resolve to this address (DNS rebinding) and would then count as
  * the same origin; its name in the Host header gives it away.
  */
-export function ownHostOnly(configured: string): RequestHandler {
-  const allowed = new Set([...loopback, configured.toLowerCase(), `[${configured.toLowerCase()}]`]);
+export function ownHostOnly(configured: readonly string[]): RequestHandler {
+  const names = configured.map((name) => name.toLowerCase()).filter((name) => !wildcards.has(name));
+  const allowed = new Set([...loopback, ...names.flatMap((name) => [name, `[${name}]`])]);
   return (request, response, next) => {
-    if (allowed.has(hostNameOf(request.headers.host))) return next();
+    const host = hostNameOf(request.headers.host);
+    const address = (request.socket.localAddress ?? "").replace(/^::ffff:(?=\d+\.)/, "");
+    if (allowed.has(host) || host === address || host === `[${address}]`) return next();
     refuse(request, response, {
       status: 421,
       title: "Misdirected Request",
-      detail: "This server does not answer under that host name.",
+      detail:
+        "This server does not answer under that host name. Whoever runs it can allow a name by PUBLIC_HOST.",
       faults: [],
     });
   };

@@ -2,6 +2,7 @@ import type { Logger } from "pino";
 import type { CaseStore } from "../files/cases.js";
 import type { DemoCase } from "../files/demos.js";
 import type { Register } from "../files/register.js";
+import type { Readiness } from "./health.js";
 import type { LongScreenings } from "./longScreenings.js";
 import type { Screener } from "./screener.js";
 
@@ -12,5 +13,6 @@ export interface Services {
   readonly register: Register;
   readonly screener: Screener;
   readonly screenings: LongScreenings;
+  readonly ready: () => Promise<Readiness>;
   readonly log: Logger;
 }

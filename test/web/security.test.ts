@@ -5,7 +5,7 @@ import { headers, ownHostOnly, ownOriginWrites } from "../../server/web/security
 
 function guarded(host: string) {
   const app = express();
-  app.use(headers(), ownHostOnly(host), ownOriginWrites());
+  app.use(headers(), ownHostOnly([host]), ownOriginWrites());
   app.all("/api/any", (_request, response) => {
     response.send("answered");
   });

@@ -4,13 +4,21 @@ import { type CaseStore, caseStore } from "../../server/files/cases.js";
 import { readDemos } from "../../server/files/demos.js";
 import { type Register, register } from "../../server/files/register.js";
 import { folderStorage } from "../../server/files/storage.js";
-import { projectRoot } from "../../server/settings.js";
+import { projectRoot, type Settings } from "../../server/settings.js";
 import { createApp } from "../../server/web/app.js";
 import { longScreenings } from "../../server/web/longScreenings.js";
 import { directScreener, type Screener } from "../../server/web/screener.js";
 import { memoryStorage } from "../files/memoryStorage.js";
 
-const settings = { port: 0, host: "127.0.0.1", dataFolder: "", screenSeconds: 30 };
+/** A server for this machine alone. */
+export const settings: Settings = {
+  port: 0,
+  host: "127.0.0.1",
+  publicHosts: [],
+  accessHash: null,
+  dataFolder: "",
+  screenSeconds: 30,
+};
 
 export const demos = await readDemos(folderStorage(join(projectRoot, "scenarios")));
 
@@ -26,10 +34,13 @@ export function testApp(
   cases: CaseStore = caseStore(memoryStorage()),
   screener: Screener = directScreener(),
   sheets: Register = register(memoryStorage()),
+  changed: Partial<Settings> = {},
 ) {
   const logged: string[] = [];
   const log = pino({ level: "info" }, { write: (line: string) => logged.push(line) });
   const screenings = longScreenings(screener, log);
-  const app = createApp(settings, { cases, demos, register: sheets, screener, screenings, log });
+  const ready = async () => ({ storage: true, screenings: true });
+  const services = { cases, demos, register: sheets, screener, screenings, ready, log };
+  const app = createApp({ ...settings, ...changed }, services);
   return { app, cases, sheets, logged };
 }
