@@ -1,5 +1,5 @@
 import { findCrossing } from "../numeric/roots.js";
-import { type Span, spansWhere } from "../window/spans.js";
+import { holds, type Span, spansWhere } from "../window/spans.js";
 
 /** A function of temperature that is positive or zero where a criterion holds. */
 type Margin = (temperature: number) => number;
@@ -13,6 +13,8 @@ export interface Trail {
   readonly high: number;
   readonly startsHolding: boolean;
   readonly ends: readonly TrailEnd[];
+  /** where the margin turns back, or nearly does */
+  readonly turns: readonly number[];
 }
 
 interface TrailEnd {
@@ -40,12 +42,25 @@ export function trailOf(margin: Margin, held: readonly Span[], low: number, high
     if (start > low) ends.push(trailEnd(margin, start, false));
     if (end < high) ends.push(trailEnd(margin, end, true));
   }
-  return {
-    low,
-    high,
-    startsHolding: held.length > 0 && held[0][0] === low,
-    ends,
-  };
+  const startsHolding = held.length > 0 && held[0][0] === low;
+  return { low, high, startsHolding, ends, turns: turnsOf(margin, low, high) };
+}
+
+/** A margin is about to turn where its slope falls to this part of what it reaches on both sides. */
+const flat = 0.5;
+
+/** Looked for on a grid of at most 1 K: where the slope is least, and clearly less than on both sides. */
+function turnsOf(margin: Margin, low: number, high: number): number[] {
+  const cells = Math.max(1, Math.ceil(high - low - 1e-9));
+  const at = Array.from({ length: cells + 1 }, (_, i) => low + ((high - low) * i) / cells);
+  const values = at.map(margin);
+  const slopes = values.slice(1).map((value, i) => Math.abs(value - values[i]));
+  return at.slice(1, -1).filter((_, i) => {
+    const here = slopes[i];
+    const steepest = (part: readonly number[]): number => Math.max(...part.filter(Number.isFinite));
+    const least = i > 0 && here < slopes[i - 1] && here <= slopes[i + 1];
+    return least && here < flat * Math.min(steepest(slopes.slice(0, i)), steepest(slopes.slice(i + 1)));
+  });
 }
 
 function trailEnd(margin: Margin, at: number, falling: boolean): TrailEnd {
@@ -57,45 +72,81 @@ function trailEnd(margin: Margin, at: number, falling: boolean): TrailEnd {
   };
 }
 
+/** A change of sign of a margin inside the range. */
+interface End {
+  readonly at: number;
+  readonly falling: boolean;
+}
+
 /**
- * Where a criterion holds in one draw, by following its ends from the estimates by secants. It is taken to have
- * as many ends as at the estimates, except for those that leave [low, high].
+ * Where a criterion holds in one draw, by following its ends from the estimates by secants. Both ends of the range
+ * are looked at besides: where one says otherwise than the ends that were followed, there is another end between.
+ * So are the places where the margin turns back at the estimates, or nearly does: about them two ends could hide.
  *
  * @param trail at the estimates
  * @param margin in the draw
  * @returns null where the ends do not follow: then only a search of the whole range tells
  */
 export function followed(trail: Trail, margin: Margin): readonly Span[] | null {
-  const { low, high, ends } = trail;
-  if (ends.length === 0) return withoutEnds(trail, margin);
-  const spans: Span[] = [];
-  let holding = trail.startsHolding;
-  let start = low;
+  const { low, high } = trail;
+  const found = followedEnds(trail, margin);
+  if (found === null) return null;
+  const { ends } = found;
+  const atLow = careful(margin(low)) >= 0;
+  const atHigh = careful(margin(high)) >= 0;
+  if (ends.length === 0) {
+    if (atLow === atHigh && atLow !== found.startsHolding) return null;
+    if (atLow !== atHigh) ends.push(endBetween(margin, low, high, atLow));
+  }
+  const first = ends[0];
+  if (first !== undefined && first.falling !== atLow) {
+    const near = first.at - besides;
+    if (near <= low || careful(margin(near)) >= 0 !== first.falling) return null;
+    ends.unshift(endBetween(margin, low, near, atLow));
+  }
+  const last = ends[ends.length - 1];
+  if (last !== undefined && last.falling === atHigh) {
+    const near = last.at + besides;
+    if (near >= high || careful(margin(near)) >= 0 === last.falling) return null;
+    ends.push(endBetween(margin, near, high, !atHigh));
+  }
+  const spans = spansBetween(ends, atLow, low, high);
+  return trail.turns.every((at) => careful(margin(at)) >= 0 === holds(spans, at)) ? spans : null;
+}
+
+/** So far beside an end its side is certain, K. */
+const besides = 2 * endTolerance;
+
+function followedEnds(trail: Trail, margin: Margin): { ends: End[]; startsHolding: boolean } | null {
+  const ends: End[] = [];
+  let startsHolding = trail.startsHolding;
   let last = Number.NEGATIVE_INFINITY;
-  for (const end of ends) {
+  for (const end of trail.ends) {
     const at = followEnd(trail, end, margin);
     // Two ends may both have left on the same side; inside the range their order must stay.
     if (at === null || at < last || (at === last && Number.isFinite(at))) return null;
     last = at;
-    if (at === Number.POSITIVE_INFINITY) continue;
-    if (holding && at > low) spans.push([start, at]);
-    holding = !holding;
-    start = Math.max(at, low);
+    if (at === Number.NEGATIVE_INFINITY) startsHolding = !startsHolding;
+    else if (at !== Number.POSITIVE_INFINITY) ends.push({ at, falling: end.falling });
   }
-  if (holding) spans.push([start, high]);
-  return spans;
+  return { ends, startsHolding };
 }
 
-/** Two looks tell: what both ends of the range say, and one crossing where they disagree. */
-function withoutEnds({ low, high, startsHolding }: Trail, margin: Margin): readonly Span[] | null {
-  const atLow = careful(margin(low));
-  const atHigh = careful(margin(high));
-  if (atLow >= 0 && atHigh >= 0) return startsHolding ? [[low, high]] : null;
-  if (atLow < 0 && atHigh < 0) return startsHolding ? null : [];
-  const crossing = findCrossing((at) => careful(margin(at)), low, high, {
-    tolerance: endTolerance,
-  });
-  return atLow >= 0 ? [[low, crossing.before]] : [[crossing.after, high]];
+/** The end between two temperatures on whose sides the criterion does and does not hold. */
+function endBetween(margin: Margin, from: number, to: number, falling: boolean): End {
+  const crossing = findCrossing((at) => careful(margin(at)), from, to, { tolerance: endTolerance });
+  return { at: falling ? crossing.before : crossing.after, falling };
+}
+
+function spansBetween(ends: readonly End[], startsHolding: boolean, low: number, high: number): Span[] {
+  const spans: Span[] = [];
+  let start = startsHolding ? low : null;
+  for (const { at, falling } of ends) {
+    if (falling && start !== null) spans.push([start, at]);
+    start = falling ? null : at;
+  }
+  if (start !== null) spans.push([start, high]);
+  return spans;
 }
 
 /**
