@@ -38,7 +38,7 @@ const raisedDigits = "⁰¹²³⁴⁵⁶⁷⁸⁹";
 const rowSigns = [
   [",", ";", ":"],
   ["=", "<", ">", "≤", "≥", "→"],
-  ["+", "−", "-", "±"],
+  ["+", "−", "±"],
 ] as const;
 
 /** Reads a line; what makes no sense as a formula stays in it as words. */
