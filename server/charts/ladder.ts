@@ -4,7 +4,7 @@ import type { Figure, Lane, LaneMark, Shape, Tone } from "./figure.js";
 import { celsius, temperatureAxis } from "./temperatureAxis.js";
 
 /** One of the four temperatures that a case is judged by. */
-interface Rung {
+export interface Rung {
   readonly name: string;
   readonly meaning: string;
   readonly value_K: number | null;
@@ -23,7 +23,8 @@ function intervalOf(percentiles: Percentiles | null | undefined): readonly [numb
   return p05 === null || p95 === null ? null : [p05, p95];
 }
 
-function rungsOf({ temperatures, uncertainty, heat }: Findings): Rung[] {
+/** The four of a case: planned, MTSR, MTT and T_D24. */
+export function rungsOf({ temperatures, uncertainty, heat }: Findings): Rung[] {
   return [
     {
       name: "Tp",
@@ -69,7 +70,8 @@ function rungsOf({ temperatures, uncertainty, heat }: Findings): Rung[] {
   ];
 }
 
-function inWords({ name, value_K, interval_K, rounding }: Rung): string {
+/** A rung with its value and its interval; nothing where it has no value. */
+export function inWords({ name, value_K, interval_K, rounding }: Rung): string {
   if (value_K === null) return "";
   const interval =
     interval_K === null
@@ -101,7 +103,8 @@ export function ladderLanes(findings: Findings): Lane[] {
   ];
 }
 
-function rungLane(label: string, marks: readonly LaneMark[], text: string | null): Lane {
+/** A thin lane for one rung. */
+export function rungLane(label: string, marks: readonly LaneMark[], text: string | null): Lane {
   return {
     label,
     detail: null,

@@ -41,7 +41,8 @@ function criterionLane(criterion: Criterion, { lowest_K, highest_K }: WindowFind
   };
 }
 
-function windowLane(window: WindowFindings): Lane {
+/** What all criteria leave, at the estimate and on the cautious side. */
+export function windowLane(window: WindowFindings): Lane {
   const { lower_K, upper_K, cautious, allowed } = window;
   const left = lower_K === null || upper_K === null ? null : ([lower_K, upper_K] as const);
   const others = allowed.filter((part) => left === null || part[0] !== left[0]);

@@ -9,6 +9,7 @@ import { jsonInterface } from "./api.js";
 import { loadAssets } from "./assets.js";
 import { endUnread, limitBodies } from "./bodies.js";
 import { casePages } from "./casePages.js";
+import { comparePages } from "./comparePages.js";
 import { compressedText } from "./compression.js";
 import { health } from "./health.js";
 import { homePages } from "./homePages.js";
@@ -47,7 +48,7 @@ export function createApp(settings: Settings, services: Services): Express {
   app.use(settings.accessHash === null ? unforwardedOnly() : signedInOnly(settings.accessHash));
   app.use("/api", jsonInterface(services));
   app.use(homePages(services), registerFiling(services), casePages(services), progressPages(services));
-  app.use(registerPages(services), registerVerify(services));
+  app.use(comparePages(services), registerPages(services), registerVerify(services));
   app.use((request, response) => {
     refuse(request, response, {
       status: 404,

@@ -2,6 +2,7 @@ import { type Response, Router, raw } from "express";
 import { readCaseText } from "../case/read.js";
 import { timeText } from "../words/timeText.js";
 import { renderCase } from "./casePage.js";
+import { compareChoices } from "./compareSides.js";
 import { refuse, tooLarge } from "./problems.js";
 import { type Sample, sampleOf } from "./sample.js";
 import type { Services } from "./services.js";
@@ -20,6 +21,7 @@ export function homePages(services: Services): Router {
         sample: await sample,
         title: "Cases",
         demos: services.demos,
+        choices: await compareChoices(services),
         cases: entries.filter((each) => !each.archived),
         archived: entries.filter((each) => each.archived),
         pasted: opening.pasted ?? "",

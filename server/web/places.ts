@@ -50,7 +50,9 @@ function addField(places: Map<string, Place>, field: FormField, within: string):
   places.set(field.pointer, place);
   places.set(field.name, place);
   for (const control of controlsOf(field)) {
-    places.set(control.name, { id: controlId(control.name), label: `${label}, ${lowered(control.label)}` });
+    // The control names its field as well, which the label has said already.
+    const part = control.label.split(":")[0] ?? "";
+    places.set(control.name, { id: controlId(control.name), label: `${label}, ${lowered(part)}` });
   }
 }
 
