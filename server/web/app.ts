@@ -3,16 +3,20 @@ import ejs from "ejs";
 import express, { type Express } from "express";
 import { notice } from "../screening/notice.js";
 import { projectRoot, type Settings } from "../settings.js";
+import { termNamed } from "../words/glossary.js";
 import { program } from "../words/program.js";
 import { signedInOnly, unforwardedOnly } from "./access.js";
 import { jsonInterface } from "./api.js";
 import { loadAssets } from "./assets.js";
 import { endUnread, limitBodies } from "./bodies.js";
 import { casePages } from "./casePages.js";
+import { checksPages } from "./checksPages.js";
 import { comparePages } from "./comparePages.js";
 import { compressedText } from "./compression.js";
+import { glossaryPages } from "./glossaryPages.js";
 import { health } from "./health.js";
 import { homePages } from "./homePages.js";
+import { interfacePage } from "./interfacePage.js";
 import { controlId } from "./places.js";
 import { answerErrors, refuse } from "./problems.js";
 import { progressPages } from "./progressPages.js";
@@ -38,6 +42,7 @@ export function createApp(settings: Settings, services: Services): Express {
   app.locals.notice = notice;
   app.locals.program = program;
   app.locals.controlId = controlId;
+  app.locals.termNamed = termNamed;
 
   // Behind a proxy on this machine, the client is whom the proxy names.
   if (settings.publicHosts.length > 0) app.set("trust proxy", "loopback");
@@ -49,6 +54,7 @@ export function createApp(settings: Settings, services: Services): Express {
   app.use("/api", jsonInterface(services));
   app.use(homePages(services), registerFiling(services), casePages(services), progressPages(services));
   app.use(comparePages(services), registerPages(services), registerVerify(services));
+  app.use(glossaryPages(), checksPages(), interfacePage(services));
   app.use((request, response) => {
     refuse(request, response, {
       status: 404,

@@ -134,7 +134,7 @@ async function screenDocument(
   const { model, digest } = read;
   const found =
     findings ?? screener.known(digest) ?? (await screener.screen({ model, digest, depth: "quick" }));
-  return { faults: [], findings: findingsView(found) };
+  return { faults: [], findings: findingsView(found, model) };
 }
 
 /** For links from a caution to the input it is about. */

@@ -2,6 +2,7 @@ import type { Figure } from "../charts/figure.js";
 import { figuresOf } from "../charts/figures.js";
 import { drawSvg } from "../charts/svg.js";
 import type { Caution, CautionLevel, Findings } from "../screening/findings.js";
+import type { CaseModel } from "../screening/model.js";
 import {
   actSentence,
   classSentence,
@@ -10,8 +11,11 @@ import {
   stopSentence,
   windowSentence,
 } from "../sheet/sentences.js";
+import type { Term } from "../words/glossary.js";
 import { type FailureLine, failureLines } from "./failuresView.js";
+import { figureTerms } from "./figureTerms.js";
 import { type KeyFigureGroup, keyFigures } from "./keyFigures.js";
+import { type MethodView, methodsView } from "./methodsView.js";
 
 /** Findings as the page shows them: words, and drawings ready to stand in it. */
 export interface FindingsView {
@@ -28,11 +32,13 @@ export interface FindingsView {
   readonly keyFigures: readonly KeyFigureGroup[];
   readonly figures: readonly (Pick<Figure, "id" | "title" | "sentence" | "table"> & {
     readonly svg: string;
+    readonly terms: readonly Term[];
   })[];
   readonly failures: readonly FailureLine[];
   readonly cautions: readonly CautionGroup[];
   /** how many there are: "2 warnings, 3 notes" */
   readonly counted: string;
+  readonly methods: readonly MethodView[];
 }
 
 export interface CautionGroup {
@@ -44,7 +50,7 @@ export interface CautionGroup {
 
 const levels: readonly CautionLevel[] = ["stop", "warn", "note"];
 
-export function findingsView(findings: Findings): FindingsView {
+export function findingsView(findings: Findings, model: CaseModel): FindingsView {
   const cautions = levels
     .map((level) => ({
       level,
@@ -70,10 +76,12 @@ export function findingsView(findings: Findings): FindingsView {
       sentence: figure.sentence,
       table: figure.table,
       svg: drawSvg(figure),
+      terms: figureTerms(figure.id, findings),
     })),
     failures: failureLines(findings),
     cautions,
     counted: cautions.map((group) => count(group.cautions.length, group.name)).join(", "),
+    methods: methodsView(model, findings),
   };
 }
 

@@ -21,11 +21,18 @@ export function tellWhen(response: Response, { retryAfter_s }: Unavailable): voi
 export function refuse(request: Request, response: Response, problem: Problem): void {
   response.status(problem.status).set("Cache-Control", "no-store");
   if (request.originalUrl.startsWith("/api/")) {
-    // Without a type of its own a problem is "about:blank", and its title the status in words (RFC 9457, 4.2.1).
-    response.type("application/problem+json").send(JSON.stringify({ type: "about:blank", ...problem }));
+    response.type("application/problem+json").send(JSON.stringify(problemDetails(problem)));
   } else {
     response.render("error", { page: { title: problem.title, problem } });
   }
+}
+
+/**
+ * What a program gets. Without a type of its own a problem is "about:blank", and its title the status in words
+ * (RFC 9457, 4.2.1).
+ */
+export function problemDetails(problem: Problem): object {
+  return { type: "about:blank", ...problem };
 }
 
 /** The problem of a case that holds faults. */
