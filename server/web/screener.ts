@@ -103,7 +103,7 @@ export function threadedScreener({
     sheet: async (input, signal = new AbortController().signal) =>
       Buffer.from(await pool.run<Uint8Array>("drawSheet", input, signal).result),
     load: pool.load,
-    responds: () => pool.run<void>("respond", null, new AbortController().signal).result,
+    responds: async () => pool.run<void>("respond", null, new AbortController().signal).result,
     close: pool.close,
   };
 }

@@ -88,7 +88,7 @@ const nowhere = "http://server.invalid";
 
 /** A page of this server, whatever was written; the first page where it is none. */
 function placeIn(text: unknown): string {
-  if (typeof text !== "string" || !URL.canParse(text, nowhere)) return "/";
+  if (typeof text !== "string" || !text.startsWith("/") || !URL.canParse(text, nowhere)) return "/";
   const { origin, pathname, search } = new URL(text, nowhere);
   // "//name" would lead to another server, and so would what a browser reads as that.
   return origin === nowhere && !/^\/[/\\]/.test(pathname) ? pathname + search : "/";
