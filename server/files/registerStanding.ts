@@ -12,7 +12,7 @@ export interface SheetStanding {
   readonly sentence: string;
   /** the sheet as it was filed; null unless `state` is "in" */
   readonly filed: FiledSheet | null;
-  /** what is wrong with the register up to this sheet, or with its own copy of it; none: it is whole up to there */
+  /** what is wrong with the register up to where this sheet stands or says it stands, or with its own copy of it */
   readonly faults: readonly string[];
 }
 
@@ -43,7 +43,8 @@ export async function standingOf(register: Register, file: Buffer): Promise<Shee
     index.sheet(filing.number) === null
       ? `${said} This register holds no sheet of that number: its entry was removed, or the sheet belongs to another register.`
       : `${said} The sheet of that number in this register is another file: this one was changed, or belongs to another register.`;
-  return { state: "against", sentence, ...none };
+  const { faults } = await register.check({ upTo: filing.number });
+  return { state: "against", sentence, filed: null, faults };
 }
 
 function inSentence({ sheet, supersededBy, reviews }: FiledSheet): string {

@@ -1,4 +1,4 @@
-import { type ErrorRequestHandler, type Request, type Response, Router, raw } from "express";
+import { type Request, type Response, Router, raw } from "express";
 import type { ChainCheck } from "../files/registerChain.js";
 import { type SheetStanding, standingOf } from "../files/registerStanding.js";
 import { parseRecord } from "../records/extract.js";
@@ -44,7 +44,6 @@ export function registerVerify(services: Services): Router {
     }
     return render(response, await verdictOn(Buffer.from(await file.arrayBuffer()), response));
   });
-  router.use("/verify", tooLong);
 
   router.post("/register/check", async (_request, response) => {
     checking ??= register.check({ sheet: "all" }).finally(() => {
@@ -102,14 +101,6 @@ function render(response: Response, verdict: Verdict | null, fault: string | nul
   });
 }
 
-/** A file too long is answered by the page that it was meant for. */
-const tooLong: ErrorRequestHandler = (error: unknown, _request, response, next) => {
-  const status = error instanceof Error && "status" in error ? error.status : null;
-  if (status !== 413 || response.headersSent) return next(error);
-  const fault = `The file is larger than any sheet: at most ${largestUpload.words} would do. It was not read.`;
-  render(response.status(413), null, fault);
-};
-
 const notVerified = "NOT verified: do not rely on this sheet.";
 
 const checkNames = { record: "Record", inputs: "Inputs", findings: "Findings", pages: "Pages" } as const;
@@ -126,7 +117,7 @@ function verdict({ verified, checks }: Verification, standing: SheetStanding): V
         passed: standing.state === "out" ? null : standing.state === "in",
         sentence: standing.sentence,
       },
-      ...(standing.filed === null ? [] : chainChecks(standing.filed.sheet.number, standing.faults)),
+      ...chainChecks(standing),
     ],
     address: standing.filed === null ? null : addressOfSheet(standing.filed.sheet.number),
   };
@@ -143,13 +134,13 @@ function goodTitle({ state, filed }: SheetStanding): string {
   return `${follows}${place}. That does not make the step safe.`;
 }
 
-function chainChecks(upTo: number, faults: readonly string[]): readonly ShownCheck[] {
-  return faults.length === 0
+function chainChecks({ filed, faults }: SheetStanding): readonly ShownCheck[] {
+  return faults.length === 0 && filed !== null
     ? [
         {
           name: "Chain",
           passed: true,
-          sentence: `The register is whole from its first entry to entry ${upTo}.`,
+          sentence: `The register is whole from its first entry to entry ${filed.sheet.number}.`,
         },
       ]
     : faults.map((sentence) => ({ name: "Chain", passed: false, sentence }));
