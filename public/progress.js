@@ -7,7 +7,7 @@ let followed = null;
 function follow() {
   const place = document.getElementById("progress");
   if (followed?.place === place) return;
-  followed?.source.close();
+  if (followed !== null) giveUp(followed);
   followed = place === null ? null : { place, source: new EventSource(place.dataset.events) };
   if (followed === null) return;
   const { source } = followed;
@@ -26,6 +26,17 @@ function show(place, { percent, text }) {
   if (percent === null) bar.removeAttribute("value");
   else bar.value = percent;
   place.querySelector(".progress-text").textContent = text;
+}
+
+/** Nobody waits any more for the screening of what stood in the fields before. */
+function giveUp({ place, source }) {
+  source.close();
+  ask(place.querySelector("form")).catch(() => undefined);
+}
+
+/** Asks for the end of a screening. */
+function ask(form) {
+  return fetch(form.action, { method: "POST", redirect: "manual" });
 }
 
 /** The page of a case takes the result over itself; the page of a screening asks for its own anew. */
@@ -47,7 +58,7 @@ async function cancel(event) {
   const form = event.currentTarget;
   form.querySelector("button").disabled = true;
   try {
-    await fetch(form.action, { method: "POST", redirect: "manual" });
+    await ask(form);
   } catch {
     form.submit();
   }
