@@ -10,6 +10,15 @@ export interface Margin {
   readonly alarm: number | null;
 }
 
+/**
+ * How long people and plant take together.
+ *
+ * @returns s
+ */
+export function responseTime({ detection, decision, action }: Response): number {
+  return detection + decision + action;
+}
+
 /** Readings of a run in each of its steps. */
 const readings = 8;
 
@@ -27,7 +36,7 @@ export function marginOf(
   response: Response,
   runs: readonly Run[],
 ): Margin {
-  const margin = timeToAct - response.detection - response.decision - response.action;
+  const margin = timeToAct - responseTime(response);
   if (margin < 0) return { margin, alarm: null };
   const alarm = Math.min(...runs.map((run) => highestUntil(run, margin)));
   return { margin, alarm: alarm > 0 ? vessel.contents.reference + alarm : null };

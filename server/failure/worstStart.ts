@@ -81,8 +81,18 @@ function goldenSection(harm: (start: number) => Harm, from: number, to: number):
   return 0.5 * (low + high);
 }
 
-/** Harm of a failure that starts at a moment, by the worse assumption on mixing. */
-function harmAt(vessel: Vessel, timeline: Timeline, startedAt: number, relativeTolerance: number): Harm {
+/**
+ * Harm of a failure that starts at a moment, by the worse assumption on mixing.
+ *
+ * @param startedAt s from the start of the feed
+ * @param relativeTolerance of every step
+ */
+export function harmAt(
+  vessel: Vessel,
+  timeline: Timeline,
+  startedAt: number,
+  relativeTolerance: number,
+): Harm {
   const { contents, integrator, hold } = vessel;
   const until = lastChange(timeline) + watch;
   let worst: Harm = { lostAt: Number.POSITIVE_INFINITY, peak: 0 };

@@ -1,4 +1,6 @@
 import { type Assessment, assess } from "../failure/assessment.js";
+import type { Judgement } from "../failure/judgement.js";
+import type { KnownStart } from "../failure/reusedStart.js";
 import { traceOf } from "../failure/trace.js";
 import { createVessel, type Vessel } from "../failure/vessel.js";
 import { vulnerableMoments } from "../failure/vulnerable.js";
@@ -8,24 +10,41 @@ import type { Caution, FailureFindings } from "./findings.js";
 import type { FailureModel } from "./model.js";
 import { ignored, type Progress } from "./progress.js";
 
+/** A failure at the estimates, ready to be drawn. */
+export interface SimulatedFailure {
+  readonly failure: FailureModel;
+  /** JSON pointer to it in the case */
+  readonly pointer: string;
+  readonly start: KnownStart;
+  readonly judgement: Judgement;
+}
+
+/** Failures at the estimates. One that could not be run is left out of both lists. */
+export interface SimulatedFailures {
+  /** in the order of the case; null where it has no kinetics to simulate */
+  readonly failures: FailureFindings[] | null;
+  readonly simulated: readonly SimulatedFailure[];
+  readonly cautions: Caution[];
+}
+
 /**
  * Simulates and judges the failures of a case.
  *
  * @param step at the estimates
  * @param failures of the case, in its order
  * @param onProgress told before each of them
- * @returns findings in the same order, null where the case has no kinetics to simulate; with their cautions
  */
 export function failureFindings(
   step: Step,
   failures: readonly FailureModel[],
   onProgress: Progress = ignored,
-): { readonly failures: FailureFindings[] | null; readonly cautions: Caution[] } {
+): SimulatedFailures {
   const { rate } = step.reaction;
-  if (failures.length === 0) return { failures: [], cautions: [] };
-  if (rate === null) return { failures: null, cautions: [withoutKinetics(failures)] };
+  if (failures.length === 0) return { failures: [], simulated: [], cautions: [] };
+  if (rate === null) return { failures: null, simulated: [], cautions: [withoutKinetics(failures)] };
   const vessels = new Map<number, Vessel | null>();
   const findings: FailureFindings[] = [];
+  const simulated: SimulatedFailure[] = [];
   const cautions: Caution[] = [];
   const { measuredExcess } = step.reaction;
   if (measuredExcess > 0) cautions.push(measuredBeyondKinetics(measuredExcess));
@@ -41,9 +60,12 @@ export function failureFindings(
       return;
     }
     findings.push(findingsOf(failure, vessel, assessment));
+    const start = { startedAt: assessment.start.startedAt, mtsrAt: vessel.hold.mtsrAt };
+    const { verdict, timeToAct } = assessment;
+    simulated.push({ failure, pointer, start, judgement: { verdict, timeToAct } });
     cautions.push(...failureCautions(failure, pointer, vessel, assessment));
   });
-  return { failures: findings, cautions };
+  return { failures: findings, simulated, cautions };
 }
 
 function findingsOf(failure: FailureModel, vessel: Vessel, assessment: Assessment): FailureFindings {

@@ -233,11 +233,28 @@ export interface FailureFindings {
         readonly verdict: "holds" | "act" | "lost";
       }[]
     | null;
+  /** what draws say about it; null without draws */
+  readonly drawn?: DrawnFailureFindings | null;
   readonly trace: readonly {
     readonly time_s: number;
     readonly temperature_K: number;
     readonly jacket_K: number;
   }[];
+}
+
+/** The time to act over draws. A failure that holds counts as an infinite time, one that is lost as 0. */
+export interface DrawnFailureFindings {
+  readonly draws: number;
+  /** null: so many draws hold that this percentile is one of them */
+  readonly p05_s: number | null;
+  readonly p50_s: number | null;
+  readonly p95_s: number | null;
+  /** that the time to act exceeds the response; null where none is stated */
+  readonly probabilityMarginPositive: number | null;
+  /** parts of the draws; they add up to 1 */
+  readonly probability: { readonly holds: number; readonly act: number; readonly lost: number };
+  /** whether the median tells what the estimates tell, to a tenth or a minute */
+  readonly estimateAgrees: boolean;
 }
 
 export interface Percentiles {

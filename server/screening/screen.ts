@@ -7,12 +7,13 @@ import { td24 } from "../thermal/td24.js";
 import { type Study, studyOf } from "../window/study.js";
 import { temperatureWindow } from "../window/window.js";
 import { program } from "../words/program.js";
-import { byLevel, caution } from "./cautions/catalogue.js";
+import { byLevel } from "./cautions/catalogue.js";
 import { inputCautions } from "./cautions/inputs.js";
 import { kineticsCautions } from "./cautions/kinetics.js";
 import { cautiousSideCautions, errorCautions } from "./cautions/uncertainty.js";
 import { verdictCautions } from "./cautions/verdicts.js";
 import { drawnFindings, windowWithDraws } from "./drawn.js";
+import { failuresWithDraws } from "./drawnFailures.js";
 import { failureFindings } from "./failureFindings.js";
 import type { Caution, Findings } from "./findings.js";
 import { type KnownRates, knownRates } from "./known.js";
@@ -79,7 +80,13 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
       })
     : null;
   const window = allowed === null ? null : windowWithDraws(windowFindings(study, allowed, full), drawn);
-  const failed = full ? failureFindings(step, model.failures, partOf(onProgress, partDone.draws, 1)) : null;
+  const simulated = full
+    ? failureFindings(step, model.failures, partOf(onProgress, partDone.draws, partDone.failures))
+    : null;
+  const failed =
+    simulated === null
+      ? null
+      : failuresWithDraws(model, known, simulated, partOf(onProgress, partDone.failures, 1));
   const criticality: Findings["criticality"] = {
     class: mtsr === null || t24 === null ? null : criticalityClass(process, mtsr, temperatures.mtt_K, t24),
     probability: drawn?.criticalityProbability ?? null,
@@ -101,7 +108,6 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
     ...workings.flatMap((working) => working.cautions),
     ...inputCautions(model),
     ...errorCautions(model, known),
-    ...notBuilt(options.depth, model),
   ];
   return {
     format: "thermal-window/findings-1",
@@ -117,14 +123,14 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
     cooling,
     window,
     failures: failed?.failures ?? null,
-    uncertainty: drawn?.uncertainty ?? null,
+    uncertainty: drawn === null ? null : { ...drawn.uncertainty, timeToAct_s: failed?.timeToAct ?? null },
     workings,
     cautions: byLevel(cautions),
   };
 }
 
-/** What is done of a full screening after its first two parts, by the time that they usually take. */
-const partDone = { estimates: 0.05, draws: 0.6 };
+/** What is done of a full screening after each of its first parts, by the time that they usually take. */
+const partDone = { estimates: 0.02, draws: 0.2, failures: 0.45 };
 
 /** Temperatures over which curves are drawn: the study, and what the case can reach. */
 function curveSpan(step: Step, mtsr: number | null, t24: number | null): readonly [number, number] {
@@ -182,15 +188,4 @@ function historyRatio(study: Study): number | null {
   const fresh = timeToMaximumRate(runaway, process).time;
   const careful = carefulTimeToMaximumRate(runaway, process, study.heldAt(process));
   return Number.isFinite(fresh) && fresh > 0 ? careful / fresh : null;
-}
-
-function notBuilt(depth: ScreenOptions["depth"], model: CaseModel): Caution[] {
-  if (depth === "quick" || model.failures.length === 0) return [];
-  return [
-    caution(
-      "NOT_BUILT",
-      "/failures",
-      "The time to act is given at the estimates only: how uncertain it is, is not part of this version.",
-    ),
-  ];
 }

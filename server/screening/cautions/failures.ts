@@ -1,7 +1,10 @@
 import type { Assessment } from "../../failure/assessment.js";
+import type { Judgement } from "../../failure/judgement.js";
+import { responseTime } from "../../failure/response.js";
 import { momentOf } from "../../failure/run.js";
 import type { Vessel } from "../../failure/vessel.js";
 import { allAtOnceTemperature } from "../../thermal/balance.js";
+import { failingText } from "../../uncertainty/probabilitySentence.js";
 import {
   differenceText,
   durationText,
@@ -9,7 +12,7 @@ import {
   powerText,
   temperatureText,
 } from "../../words/numbers.js";
-import type { Caution } from "../findings.js";
+import type { Caution, DrawnFailureFindings } from "../findings.js";
 import type { FailureModel } from "../model.js";
 import { caution } from "./catalogue.js";
 
@@ -33,6 +36,42 @@ export function failureCautions(
     ...courseOf(failure, pointer, vessel, assessment),
     ...quenchesOf(failure, pointer, vessel, assessment),
   ];
+}
+
+/**
+ * The caution that a failure leaves enough time at the estimates, but not in 95 of 100 draws. Without a stated
+ * response it is raised only where it is lost in that many draws, since then no response is fast enough. A failure
+ * that is too late at the estimates already has its stop.
+ *
+ * @param failure as the case states it
+ * @param pointer to it in the case
+ * @param judgement of it at the estimates
+ * @param drawn what the draws say about it
+ */
+export function drawnFailureCautions(
+  failure: FailureModel,
+  pointer: string,
+  { verdict, timeToAct }: Judgement,
+  { draws, p05_s: low, probability, probabilityMarginPositive }: DrawnFailureFindings,
+): Caution[] {
+  const needed = failure.response === null ? null : responseTime(failure.response);
+  if (verdict === "lost" || low === null) return [];
+  if (needed !== null && timeToAct !== null && timeToAct < needed) return [];
+  const isUnsure = needed === null ? low === 0 : low < needed;
+  if (!isUnsure) return [];
+  const estimate =
+    timeToAct === null
+      ? "holds by itself at the estimates"
+      : `leaves ${durationText(timeToAct, "down")} to act at the estimates`;
+  const inDraws =
+    low === 0
+      ? `in ${failingText(1 - probability.lost, draws)} draws it is lost`
+      : `in 5 of 100 draws it leaves less than ${durationText(low, "down")}`;
+  const response =
+    needed === null || probabilityMarginPositive === null
+      ? ""
+      : ` Detection, decision and action take ${durationText(needed, "up")}: they come too late in ${failingText(probabilityMarginPositive, draws)} draws.`;
+  return [caution("ACT_UNSURE", pointer, `“${failure.name}” ${estimate}, but ${inDraws}.${response}`)];
 }
 
 /** A case without a rate constant has nothing to simulate. */
