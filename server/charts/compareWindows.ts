@@ -2,7 +2,7 @@ import type { Findings } from "../screening/findings.js";
 import { temperatureText } from "../words/numbers.js";
 import { compareSentence, windowCell } from "./compareWords.js";
 import type { Area, Figure, Lane, LaneMark, LanesPanel, Rule } from "./figure.js";
-import { inWords, ladderReach, type Rung, rungLane, rungsOf } from "./ladder.js";
+import { inWords, ladderCaptions, ladderReach, type Rung, rungLane, rungsOf } from "./ladder.js";
 import { celsius, temperatureAxis } from "./temperatureAxis.js";
 import { windowLane } from "./window.js";
 
@@ -70,6 +70,11 @@ function keyOf(cases: readonly [ComparedCase, ComparedCase]): LanesPanel["key"] 
   ];
 }
 
+/** What the bars mean, once where it is the same for both. */
+function barsOf(first: ComparedCase, second: ComparedCase): string[] {
+  return [...new Set([...ladderCaptions(first.findings), ...ladderCaptions(second.findings)])];
+}
+
 /** The temperatures and the windows of two cases on one axis. */
 export function compareWindows(first: ComparedCase, second: ComparedCase): Figure {
   const cases = [first, second] as const;
@@ -102,7 +107,7 @@ export function compareWindows(first: ComparedCase, second: ComparedCase): Figur
         key: keyOf(cases),
       },
     ],
-    captions: [`First: ${first.title}`, `Second: ${second.title}`],
+    captions: [`First: ${first.title}`, `Second: ${second.title}`, ...barsOf(first, second)],
     table: {
       columns: ["Temperature", "First", "Second"],
       rows: [
