@@ -2,8 +2,8 @@ import { setTimeout as pause } from "node:timers/promises";
 import type { Order } from "../../server/web/pool.js";
 import { reportTo } from "../../server/web/poolControl.js";
 
-/** Functions that a pool is tried with. `turns` is shared with the test, which sees in it whether one still runs. */
-export interface Turns {
+/** Shared with the test, which sees in it whether the work still goes on. */
+interface Turns {
   readonly turns: SharedArrayBuffer;
 }
 
