@@ -65,9 +65,10 @@ export function collectWindows(
       coverage: createCoverage(),
       met: 0,
     }));
+  const checked = checkedDraws(count).map(drawn);
   const followers = lanes.map((each) => ({
     ...each,
-    trail: reliable(each.lane, each.trail, count, drawn) ? each.trail : null,
+    trail: reliable(each.lane, each.trail, checked) ? each.trail : null,
   }));
   const joint = createCoverage();
 
@@ -115,15 +116,18 @@ export function collectWindows(
   };
 }
 
-function reliable(lane: Lane, trail: Trail, count: number, drawn: (index: number) => Study): boolean {
-  for (let i = 0; i < checks; i += 1) {
-    const index = Math.floor(((i + 0.5) * count) / checks);
-    const draw = drawn(index);
-    const margin = (at: number): number => lane.criterion.margin(draw, at);
+/** Evenly spaced: a Latin hypercube's draws stand in random order. */
+function checkedDraws(count: number): number[] {
+  const number = Math.min(checks, count);
+  return Array.from({ length: number }, (_, i) => Math.floor(((i + 0.5) * count) / number));
+}
+
+function reliable({ criterion }: Lane, trail: Trail, draws: readonly Study[]): boolean {
+  return draws.every((draw) => {
+    const margin = (at: number): number => criterion.margin(draw, at);
     const searched = spansWhere(margin, trail.low, trail.high);
-    if (!alike(heldAlong(trail, margin, trail.low, trail.high), searched, agreement)) return false;
-  }
-  return true;
+    return alike(heldAlong(trail, margin, trail.low, trail.high), searched, agreement);
+  });
 }
 
 function drawIn(spans: readonly Span[], low: number, high: number): readonly Span[] {
