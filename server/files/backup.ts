@@ -1,3 +1,4 @@
+import { inGroups } from "./inGroups.js";
 import { checkChain } from "./registerChain.js";
 import { digestOfFile, noEntry, places, readEntry } from "./registerEntry.js";
 import { entryNumbers } from "./registerStart.js";
@@ -34,7 +35,7 @@ const together = 16;
 export async function backUp(from: Storage, to: Storage, begun: Date): Promise<Backup> {
   const numbers = await entryNumbers(from);
   const entries = new Map<number, Buffer>();
-  await inGroups(numbers, async (number) => {
+  await inGroups(numbers, together, async (number) => {
     const content = await from.readBytes(places.entry(number));
     if (content !== null) entries.set(number, content);
   });
@@ -43,10 +44,9 @@ export async function backUp(from: Storage, to: Storage, begun: Date): Promise<B
     return read.state === "whole" && read.entry.kind === "sheet" ? [read.entry] : [];
   });
   const aside = (await from.list(places.aside)).map((name) => `${places.aside}/${name}`);
-  await inGroups([...files.flatMap((sheet) => [places.pdf(sheet), places.record(sheet)]), ...aside], (path) =>
-    copied(from, to, path),
-  );
-  await inGroups([...entries], ([number, content]) => to.write(places.entry(number), content));
+  const paths = [...files.flatMap((sheet) => [places.pdf(sheet), places.record(sheet)]), ...aside];
+  await inGroups(paths, together, (path) => copied(from, to, path));
+  await inGroups([...entries], together, ([number, content]) => to.write(places.entry(number), content));
   const cases = await copyCases(from, to);
   const { faults } = await checkChain(to, { sheet: "all" });
   const last = entries.get(numbers.at(-1) ?? 0);
@@ -69,7 +69,7 @@ async function copyCases(from: Storage, to: Storage): Promise<number> {
   for (let settled = false; !settled; ) {
     const names = (await from.list("cases")).filter((name) => !done.has(name));
     settled = true;
-    await inGroups(names, async (name) => {
+    await inGroups(names, together, async (name) => {
       if (await copied(from, to, `cases/${name}`)) done.add(name);
       else settled = false;
     });
@@ -83,10 +83,4 @@ async function copied(from: Storage, to: Storage, path: string): Promise<boolean
   if (content === null) return false;
   await to.write(path, content);
   return true;
-}
-
-async function inGroups<Item>(items: readonly Item[], work: (item: Item) => Promise<unknown>): Promise<void> {
-  for (let first = 0; first < items.length; first += together) {
-    await Promise.all(items.slice(first, first + together).map(work));
-  }
 }

@@ -1,5 +1,6 @@
 import { digestOf } from "../case/canonical.js";
 import type { Filing } from "../records/filing.js";
+import { inGroups } from "./inGroups.js";
 import { type ChainCheck, type ChainScope, checkChain } from "./registerChain.js";
 import {
   digestOfFile,
@@ -104,14 +105,11 @@ export function register(storage: Storage, now: () => Date = () => new Date()): 
 
   async function readAll(): Promise<void> {
     const numbers = (await entryNumbers(storage)).filter((number) => number > index.last());
-    for (let first = 0; first < numbers.length; first += together) {
-      const some = numbers.slice(first, first + together);
-      const texts = await Promise.all(some.map((number) => storage.read(places.entry(number))));
-      some.forEach((number, position) => {
-        const text = texts[position] ?? null;
-        if (text !== null) index.add(number, text);
-      });
-    }
+    const texts = await inGroups(numbers, together, (number) => storage.read(places.entry(number)));
+    numbers.forEach((number, position) => {
+      const text = texts[position] ?? null;
+      if (text !== null) index.add(number, text);
+    });
   }
 
   /** One after the other: each entry of this process carries the digest of the one before. */

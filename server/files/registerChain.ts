@@ -1,3 +1,4 @@
+import { inGroups } from "./inGroups.js";
 import {
   digestOfFile,
   noEntry,
@@ -45,6 +46,7 @@ export async function checkChain(storage: Storage, scope: ChainScope = {}): Prom
   const found = new Map<number, Found>();
   await inGroups(
     numbers.filter((number) => number <= upTo + 2),
+    together,
     async (number) => {
       const content = await storage.readBytes(places.entry(number));
       if (content === null) return;
@@ -59,9 +61,7 @@ export async function checkChain(storage: Storage, scope: ChainScope = {}): Prom
     const wanted = each.number <= upTo && (scope.sheet === "all" || scope.sheet === each.number);
     return (wanted ? sheetIn(each) : null) ?? [];
   });
-  await inGroups(sheets, async (sheet) => {
-    faults.push(...(await sheetFaults(storage, sheet)));
-  });
+  faults.push(...(await inGroups(sheets, together, (sheet) => sheetFaults(storage, sheet))).flat());
   return { upTo, faults };
 }
 
@@ -161,10 +161,4 @@ function entryIn(found: Found | undefined): RegisterEntry | null {
 function sheetIn(found: Found): SheetEntry | null {
   const entry = entryIn(found);
   return entry?.kind === "sheet" ? entry : null;
-}
-
-async function inGroups<Item>(items: readonly Item[], work: (item: Item) => Promise<void>): Promise<void> {
-  for (let first = 0; first < items.length; first += together) {
-    await Promise.all(items.slice(first, first + together).map(work));
-  }
 }

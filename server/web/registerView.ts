@@ -43,7 +43,7 @@ export function addressOfSheet(number: number): string {
   return `/register/${number}`;
 }
 
-export function classText(found: SheetEntry["class"]): string {
+function classText(found: SheetEntry["class"]): string {
   return found === null ? "not assessed" : String(found);
 }
 
