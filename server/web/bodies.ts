@@ -57,13 +57,20 @@ export function limitBodies(): RequestHandler {
  */
 export function endUnread(linger_ms = 5000): RequestHandler {
   return (request, response, next) => {
+    const { socket, headers } = request;
+    if (headers["content-length"] === undefined && headers["transfer-encoding"] === undefined) return next();
+    // Node closes a connection that is not to be kept right after the answer; here, that is left to what follows.
+    const keeps = response.shouldKeepAlive;
+    response.shouldKeepAlive = true;
     response.on("finish", () => {
-      if (request.complete) return;
-      const { socket } = request;
-      request.resume();
-      const timer = setTimeout(() => {
+      const close = () => {
         if (!request.complete) socket.destroy();
-      }, linger_ms);
+        else if (!keeps) socket.end();
+      };
+      if (request.complete) return close();
+      request.resume();
+      const timer = setTimeout(close, linger_ms);
+      request.on("end", close);
       request.on("close", () => clearTimeout(timer));
     });
     next();

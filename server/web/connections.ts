@@ -8,8 +8,14 @@ export interface Patience {
 
 const usual: Patience = { head_ms: 10_000, whole_ms: 20_000 };
 
-/** More connections at once are closed unanswered: each takes memory before anything is known of it. */
-const mostConnections = 2000;
+/** More connections at once are closed unanswered: each takes some 20 kB before anything is known of it. */
+const mostConnections = 10_000;
+
+/** Longer than proxies keep a connection that waits for the next request: theirs must be the end that closes it. */
+const idle_ms = 65_000;
+
+/** Enough for addresses and cookies; the head of a request that has not all come is held in memory. */
+const largestHead_bytes = 8192;
 
 /** A server that does not wait for ever, for many at once. A request that comes too slowly is answered with 408. */
 export function serverOf(answer: RequestListener, { head_ms, whole_ms }: Patience = usual): Server {
@@ -17,6 +23,8 @@ export function serverOf(answer: RequestListener, { head_ms, whole_ms }: Patienc
     {
       headersTimeout: head_ms,
       requestTimeout: whole_ms,
+      maxHeaderSize: largestHead_bytes,
+      keepAliveTimeout: idle_ms,
       connectionsCheckingInterval: Math.min(1000, head_ms / 4),
     },
     answer,

@@ -73,7 +73,7 @@ function groupsOf(address: string): readonly string[] {
 }
 
 /** Pages: ten colleagues behind one address do not notice it. */
-const reading: Allowance = { burst: 600, perSecond: 30 };
+const reading: Allowance = { burst: 300, perSecond: 20 };
 
 /** Screenings, sheets, saves and what follows the typing: each takes milliseconds to seconds. */
 const sending: Allowance = { burst: 400, perSecond: 20 };
