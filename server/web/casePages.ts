@@ -9,7 +9,6 @@ import {
   isWorking,
   pastedIn,
   pasteRows,
-  stillWaiting,
   workField,
 } from "../case/form.js";
 import { titleOf } from "../files/cases.js";
@@ -18,6 +17,7 @@ import { fileName } from "./fileName.js";
 import { refuse } from "./problems.js";
 import { renderScreened } from "./progressPages.js";
 import type { Services } from "./services.js";
+import { waitingRows } from "./waitingRows.js";
 
 /** Pages of single cases. The form carries the whole case, so every action starts from what was typed. */
 export function casePages(services: Services): Router {
@@ -77,12 +77,10 @@ export function casePages(services: Services): Router {
     const before = beforeOf(body);
     const pasted = pastedIn(body);
     const kept = { origin, before, pasted };
-    if (leavesPage(action)) {
-      const waiting = stillWaiting(document, pasted);
-      if (waiting.size > 0) {
-        response.status(422);
-        return renderCase(services, response, { ...kept, document, pasted: waiting, changed: true });
-      }
+    const waiting = leavesPage(action) ? waitingRows(document, body) : null;
+    if (waiting !== null) {
+      response.status(422);
+      return renderCase(services, response, { ...kept, ...waiting, document, changed: true });
     }
     if (action === "save") return save(response, document, origin, Number(body.revision));
     if (action === "copy") {

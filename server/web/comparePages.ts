@@ -37,7 +37,7 @@ export function comparePages(services: Services): Router {
     return render(response, 200, {
       ...shared,
       fault: null,
-      refresh: screened.kind === "running" ? 2 : null,
+      ...(screened.kind === "running" ? { running: true, script: "/compare.js" } : {}),
       compared: comparedOf(first, second, screened),
     });
   });
@@ -51,7 +51,7 @@ function addressIn(request: Request, which: "first" | "second"): string {
 }
 
 function render(response: Response, status: number, page: Readonly<Record<string, unknown>>): void {
-  response.status(status).render("compare", { page: { refresh: null, compared: null, ...page } });
+  response.status(status).render("compare", { page: { compared: null, ...page } });
 }
 
 /** What the page says about the two. */

@@ -8,7 +8,7 @@ import { recordBytes } from "../records/attach.js";
 import { filingText } from "../records/filing.js";
 import { timeText } from "../words/timeText.js";
 import { abandoned } from "./abandoned.js";
-import { type Origin, renderCase } from "./casePage.js";
+import { type CaseToShow, type Origin, renderCase } from "./casePage.js";
 import { controlId } from "./places.js";
 import { tellWhen } from "./problems.js";
 import { diskRefusal } from "./registerRefusal.js";
@@ -16,6 +16,7 @@ import type { FilingTrouble } from "./registerTrouble.js";
 import { addressOfSheet, numberIn } from "./registerView.js";
 import type { Services } from "./services.js";
 import { Unavailable } from "./unavailable.js";
+import { waitingRows } from "./waitingRows.js";
 
 /** Files the sheet of a case as it stands in the form, saved or not. */
 export function registerFiling(services: Services): Router {
@@ -37,8 +38,10 @@ export function registerFiling(services: Services): Router {
     const paper = body.paper === "Letter" ? "Letter" : "A4";
     const changed =
       origin.kind === "saved" && canonicalJson(document) !== canonicalJson(origin.saved.document);
-    const again = (status: number, trouble: { readonly filing?: FilingTrouble } = {}) =>
+    const again = (status: number, trouble: Pick<CaseToShow, "filing" | "pasted"> = {}) =>
       renderCase(services, response.status(status), { document, origin, paper, changed, ...trouble });
+    const waiting = waitingRows(document, body);
+    if (waiting !== null) return again(422, waiting);
     const read = readCase(document);
     if (!read.ok) return again(422);
     const typed = read.document;

@@ -17,18 +17,22 @@ export async function violations(page: Page): Promise<readonly string[]> {
 /** What axe-core finds on the pages, in both colour schemes. */
 export function accessibility(visit: Visit): void {
   describe.each(["light", "dark"] as const)("axe-core finds nothing in the %s scheme", (colorScheme) => {
-    test.each(["/", "/cases/new", "/demos/ring-closure", "/demos/acylation", "/cases/none"])(
-      "on %s",
-      async (path) => {
-        const page = await visit(path, { colorScheme });
-        await settled(page);
-        await page.evaluate(() => {
-          for (const each of document.querySelectorAll("details")) each.open = true;
-        });
-        expect(await violations(page)).toEqual([]);
-        await page.context().close();
-      },
-    );
+    test.each([
+      "/",
+      "/cases/new",
+      "/demos/ring-closure",
+      "/demos/acylation",
+      "/cases/none",
+      "/compare?first=demos/ring-closure&second=demos/acylation",
+    ])("on %s", async (path) => {
+      const page = await visit(path, { colorScheme });
+      await settled(page);
+      await page.evaluate(() => {
+        for (const each of document.querySelectorAll("details")) each.open = true;
+      });
+      expect(await violations(page)).toEqual([]);
+      await page.context().close();
+    });
 
     test("on a case with faults, and on one that a newer copy stands against", async () => {
       const page = await visit("/demos/hydrolysis", { colorScheme });
