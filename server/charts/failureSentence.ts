@@ -1,5 +1,6 @@
 import type { FailureFindings } from "../screening/findings.js";
 import { durationText, temperatureText } from "../words/numbers.js";
+import { medianSentence } from "./drawnWords.js";
 
 /**
  * A failure in words for those who run the plant: what to put right and by when, what is left after the
@@ -8,7 +9,13 @@ import { durationText, temperatureText } from "../words/numbers.js";
  * @param mtt_K maximum technical temperature
  */
 export function failureSentence(failure: FailureFindings, mtt_K: number): string {
-  return [fate(failure, mtt_K), feedAlone(failure), response(failure), mixing(failure)]
+  return [
+    fate(failure, mtt_K),
+    feedAlone(failure),
+    response(failure),
+    mixing(failure),
+    medianSentence(failure),
+  ]
     .filter((part) => part !== "")
     .join(" ");
 }

@@ -6,6 +6,7 @@ import {
   temperatureNumber,
   temperatureText,
 } from "../words/numbers.js";
+import { drawnResponseWords, drawnTimeWords } from "./drawnWords.js";
 
 const verdictOrder = { lost: 0, act: 1, holds: 2 } as const;
 
@@ -79,6 +80,8 @@ export function failureRow(failure: FailureFindings, at: number): string[] {
     beyondModel ? "beyond the model" : `${numberText(60 * failure.maximumRate_K_s)} K/min`,
     percentText(failure.conversion),
     decomposed === null ? "not known" : percentText(decomposed, "up"),
+    drawnTimeWords(failure),
+    drawnResponseWords(failure) ?? "not given",
   ];
 }
 
@@ -96,4 +99,6 @@ export const failureColumns = [
   "Fastest rise",
   "Conversion",
   "Decomposed",
+  "Time to act in the draws",
+  "Response in the draws",
 ] as const;

@@ -1,3 +1,4 @@
+import { drawnWords } from "../charts/drawnWords.js";
 import type { Caution, Findings } from "../screening/findings.js";
 import type { TitleBlock } from "../sheet/front.js";
 import {
@@ -99,9 +100,10 @@ function failureLines(findings: Findings): string[] {
   const widest = Math.max(0, ...verdicts.map((verdict) => verdict.length));
   return [
     ...paragraph(actSentence(findings)),
-    ...failures.flatMap((failure, index) =>
-      hanging(`  ${(verdicts[index] ?? "").padEnd(widest)}   `, failure.name),
-    ),
+    ...failures.flatMap((failure, index) => [
+      ...hanging(`  ${(verdicts[index] ?? "").padEnd(widest)}   `, failure.name),
+      ...((failure.drawn ?? null) === null ? [] : hanging(" ".repeat(widest + 5), drawnWords(failure))),
+    ]),
   ];
 }
 

@@ -1,3 +1,4 @@
+import { drawnWords } from "../charts/drawnWords.js";
 import type { FailureFindings, Findings } from "../screening/findings.js";
 import { durationText, temperatureText } from "../words/numbers.js";
 import { type Cursor, paragraph, styles, subheading } from "./page.js";
@@ -12,8 +13,9 @@ export function writeFailures(cursor: Cursor, findings: Findings): void {
   table(
     cursor,
     [
-      { heading: "Failure, the most pressing first", share: 34 },
-      { heading: "Verdict", share: 20 },
+      { heading: "Failure, the most pressing first", share: 30 },
+      { heading: "Verdict", share: 18 },
+      { heading: "In the draws", share: 22 },
       { heading: "Margin", share: 12, align: "right" },
       { heading: "Begins", share: 12, align: "right" },
       { heading: "Peak", share: 13, align: "right" },
@@ -29,6 +31,7 @@ function failureRow(failure: FailureFindings): string[] {
   return [
     `${failure.name}${mixing}`,
     verdictText(failure),
+    drawnWords(failure),
     failure.margin_s === null
       ? "–"
       : `${failure.margin_s < 0 ? "−" : ""}${durationText(Math.abs(failure.margin_s), failure.margin_s < 0 ? "up" : "down")}`,

@@ -104,11 +104,17 @@ export function actSentence(findings: Findings): string {
   if (findings.failures === null) return "Cooling failures were not simulated; the time to act is not known.";
   const [worst] = failuresByUrgency(findings.failures);
   if (worst === undefined) return "No cooling failure was given; the time to act is not known.";
-  if (worst.verdict === "holds") return "Every failure that was simulated holds by itself.";
+  const low = findings.uncertainty?.timeToAct_s?.p05 ?? null;
+  if (worst.verdict === "holds") {
+    const drawn =
+      low === null
+        ? ""
+        : ` At the estimates only: 5th percentile of the time to act over the draws: ${durationText(low)}.`;
+    return `Every failure that was simulated holds by itself.${drawn}`;
+  }
   if (worst.verdict === "lost") {
     return `“${worst.name}” is lost: restoring the cooling does not help, however soon.`;
   }
-  const low = findings.uncertainty?.timeToAct_s?.p05 ?? null;
   const cautious = low === null ? "" : ` 5th percentile over the draws: ${durationText(low)}.`;
   return `Least time to act: ${durationText(worst.timeToAct_s ?? 0)} (“${worst.name}”).${cautious}`;
 }

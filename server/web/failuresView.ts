@@ -1,3 +1,4 @@
+import { drawnWords } from "../charts/drawnWords.js";
 import { failureSentence } from "../charts/failureSentence.js";
 import { byTimeToAct, verdictWords } from "../charts/failuresWords.js";
 import type { FailureFindings, Findings } from "../screening/findings.js";
@@ -12,6 +13,8 @@ export interface FailureLine {
   /** the verdict with its time */
   readonly words: string;
   readonly sentence: string;
+  /** time to act and response over the draws */
+  readonly drawn: string;
   /** left after the response; null where none was given, or nothing has to be done */
   readonly margin: string | null;
   readonly alarm: string | null;
@@ -25,6 +28,7 @@ export function failureLines({ failures, temperatures }: Findings): readonly Fai
     verdict: failure.verdict,
     words: verdictWords(failure),
     sentence: failureSentence(failure, temperatures.mtt_K),
+    drawn: drawnWords(failure),
     margin: failure.margin_s === null ? null : marginText(failure.margin_s),
     alarm: failure.alarm_K === null ? null : temperatureText(failure.alarm_K, "down"),
   }));
