@@ -40,8 +40,8 @@ export function failureCautions(
 
 /**
  * The caution that a failure leaves enough time at the estimates, but not in 95 of 100 draws. Without a stated
- * response it is raised only where it is lost in that many draws, since then no response is fast enough. A failure
- * that is too late at the estimates already has its stop.
+ * response it is raised where the failure holds at the estimates but not in that many draws, and where it is lost in
+ * too many, since then no response is fast enough. A failure that is too late at the estimates already has its stop.
  *
  * @param failure as the case states it
  * @param pointer to it in the case
@@ -57,7 +57,7 @@ export function drawnFailureCautions(
   const needed = failure.response === null ? null : responseTime(failure.response);
   if (verdict === "lost" || low === null) return [];
   if (needed !== null && timeToAct !== null && timeToAct < needed) return [];
-  const isUnsure = needed === null ? low === 0 : low < needed;
+  const isUnsure = needed === null ? low === 0 || timeToAct === null : low < needed;
   if (!isUnsure) return [];
   const estimate =
     timeToAct === null
