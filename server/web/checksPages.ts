@@ -17,10 +17,12 @@ export function checksPages(run: () => readonly CheckedGroup[] = runChecks): Rou
         kinds: [
           {
             title: "Against published figures",
+            theirs: "Published",
             groups: groups.filter((group) => group.kind === "published").map(shown),
           },
           {
             title: "Against an independent implementation",
+            theirs: "Independent",
             groups: groups.filter((group) => group.kind === "independent").map(shown),
           },
         ],
@@ -36,12 +38,11 @@ function shown({ title, source, fromMemory, checks }: CheckedGroup) {
 
 function row(check: Checked) {
   const { what, printed, unit, computed, difference, allowed, because, agrees } = check;
-  const digits = printed.replace(/e.*$/iu, "").replace(/^-?0?\.?0*|\D/gu, "").length;
   return {
     what,
     unit,
     printed: printedText(printed),
-    computed: Number.isFinite(computed) ? numberText(computed, Math.min(16, digits + 2)) : "no number",
+    computed: computedText(computed, printed),
     difference: Number.isFinite(difference) ? signed(difference) : "no number",
     allowed: `± ${numberText(allowed, 2)}, ${because}`,
     agrees,
@@ -52,6 +53,18 @@ function row(check: Checked) {
 function printedText(printed: string): string {
   const [mantissa = "", exponent] = printed.replace("-", "−").split("e");
   return exponent === undefined ? mantissa : `${mantissa}×10${superscript(Number(exponent))}`;
+}
+
+/** Beside the printed figure: the same power of ten, two digits more, as far as there are any. */
+function computedText(computed: number, printed: string): string {
+  if (!Number.isFinite(computed)) return "no number";
+  if (Number.isInteger(computed) && !printed.includes(".")) return String(computed).replace("-", "−");
+  const [mantissa = "", exponent] = printed.split("e");
+  const scaled = computed / 10 ** Number(exponent ?? 0);
+  const before = Math.max(1, Math.ceil(Math.log10(Math.abs(scaled))));
+  const decimals = Math.min((mantissa.split(".")[1]?.length ?? 0) + 2, 16 - before);
+  const text = scaled.toFixed(decimals).replace("-", "−");
+  return exponent === undefined ? text : `${text}×10${superscript(Number(exponent))}`;
 }
 
 function signed(difference: number): string {

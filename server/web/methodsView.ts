@@ -1,7 +1,7 @@
 import type { Findings } from "../screening/findings.js";
 import type { CaseModel } from "../screening/model.js";
 import { methodsOf } from "../sheet/working.js";
-import { mathMl } from "../words/mathml.js";
+import { mathMl, proseWithScripts } from "../words/mathml.js";
 
 /** A method as a reviewer redoes it by hand: equation, this case's numbers, and the two together, drawn. */
 export interface MethodView {
@@ -19,6 +19,6 @@ export function methodsView(model: CaseModel, findings: Findings): readonly Meth
     equation: mathMl(equation),
     numbers: mathMl(numbers),
     worked: worked.map(mathMl),
-    reference: mathMl(reference),
+    reference: proseWithScripts(reference),
   }));
 }

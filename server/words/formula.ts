@@ -102,7 +102,8 @@ export function readFormula(line: string): Formula {
     if (token.kind === "sign" && closing[token.text] !== undefined) return scripted(group(token.text));
     if (token.kind === "symbol") return called(scripted({ kind: "symbol", text: token.text }));
     let text = token.text;
-    for (let next = peek(); token.kind === "words" && next?.kind === "words"; next = peek()) {
+    for (let next = peek(); token.kind === "words" && isWord(next, tokens[at + 1]); next = peek()) {
+      if (next === undefined) break;
       text += (next.spaced ? " " : "") + next.text;
       at += 1;
     }
@@ -157,6 +158,13 @@ export function readFormula(line: string): Formula {
   const [only] = parts;
   if (parts.length === 1 && only !== undefined) return only;
   return { kind: "product", factors: parts, signs: parts.map(() => "" as const) };
+}
+
+/** "a" between two words is the article, not a symbol. */
+function isWord(token: Token | undefined, after: Token | undefined): boolean {
+  return (
+    token?.kind === "words" || token?.kind === "unit" || (token?.text === "a" && after?.kind === "words")
+  );
 }
 
 /** Divides the product so far, back to the last words or integral sign, by one factor. */

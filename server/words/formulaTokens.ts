@@ -37,7 +37,8 @@ export function tokensOf(line: string): readonly Token[] {
     tokens.push({ ...found, spaced });
     at += found.text.length;
     spaced = false;
-    const measured = found.kind === "number" ? matchAt(unitsAfterNumber, line, at) : null;
+    const measured =
+      found.kind === "number" || found.text === "in" ? matchAt(unitsAfterNumber, line, at) : null;
     if (measured !== null) {
       tokens.push({ kind: "unit", text: measured.trim(), spaced: true });
       at += measured.length;

@@ -25,8 +25,14 @@ test("the brackets of a divisor become the bar of the fraction", () => {
   expect(mathMl("a/(b + c)")).not.toContain("<mo>(</mo>");
 });
 
-test("an equation may break before its signs, words are text", () => {
-  expect(mathMl("a = b, or more")).toBe("<math><mi>a</mi></math> <math><mo>=</mo><mi>b</mi></math>, or more");
+test("a short clause stays together, what stands between clauses is text", () => {
+  expect(mathMl("a = b, or more")).toBe('<math><mi>a</mi><mo form="infix">=</mo><mi>b</mi></math>, or more');
+});
+
+test("a long equation may break before its signs", () => {
+  const drawn = mathMl("k = κ (k_{B} T/h) c_{0}^{1−n} exp(ΔS‡/R) exp(−ΔH‡/(R T))");
+  expect(drawn.split("</math> <math>").length).toBeGreaterThan(4);
+  expect(drawn).toContain('<math><mo form="infix">=</mo><mi>κ</mi></math>');
 });
 
 test("anything typed comes out as text in well-formed markup", () => {
