@@ -72,7 +72,7 @@ describe("an identifier that is a path", () => {
     const cases = caseStore(storage);
     const { id } = await cases.create({ ...demoDocument(), title: secret });
     // The same outside the folder of cases, where only a path would lead.
-    const stray = { format: "thermal-window/saved-1", savedAt: "", document: { title: secret } };
+    const stray = { format: "thermal-window/saved-1", savedAt: "", document: { title: "Stray secret" } };
     for (const place of [folder, join(folder, "data")]) {
       await writeFile(join(place, "abcdefghjkmn-000001.json"), JSON.stringify(stray));
     }
@@ -128,8 +128,12 @@ describe("an identifier that is a path", () => {
       const path = filledIn(route, identifier);
       const { status, text } = await ask(route.method, path);
       expect.soft([route.method, path, status]).toEqual([route.method, path, status === 400 ? 400 : 404]);
-      expect.soft(text).not.toMatch(/root:|not for everyone|node_modules|server\/web/);
+      expect.soft(text).not.toMatch(/root:|secret|not for everyone|node_modules|server\/web/);
     }
+    const sides = `first=cases/${identifier}&second=demos/${identifier}`;
+    const { status, text } = await ask("get", `/compare?${sides}`);
+    expect(status).toBe(404);
+    expect(text).not.toMatch(/root:|secret/);
   });
 
   test.each([
