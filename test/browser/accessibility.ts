@@ -20,6 +20,9 @@ export function accessibility(visit: Visit): void {
     test.each([
       "/",
       "/cases/new",
+      "/glossary",
+      "/checks",
+      "/interface",
       "/demos/ring-closure",
       "/demos/acylation",
       "/cases/none",

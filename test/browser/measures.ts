@@ -2,7 +2,17 @@ import { describe, expect, test } from "vitest";
 import { settled, type Visit } from "./visit.js";
 
 const comparison = "/compare?first=demos/ring-closure&second=demos/acylation&parts=quick";
-const paths = ["/", "/cases/new", "/demos/ring-closure", "/demos/acylation", "/demos/hydrolysis", comparison];
+const paths = [
+  "/",
+  "/cases/new",
+  "/demos/ring-closure",
+  "/demos/acylation",
+  "/demos/hydrolysis",
+  "/glossary",
+  "/checks",
+  "/interface",
+  comparison,
+];
 
 /** Sizes that pages keep: of the window they fit in, and of what they send. */
 export function measures(visit: Visit): void {
