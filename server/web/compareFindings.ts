@@ -1,3 +1,4 @@
+import { drawnWords } from "../charts/drawnWords.js";
 import { failureSentence } from "../charts/failureSentence.js";
 import { byTimeToAct, verdictWords } from "../charts/failuresWords.js";
 import type { Caution, FailureFindings, Findings } from "../screening/findings.js";
@@ -94,6 +95,8 @@ export interface FailureCell {
   readonly verdict: FailureFindings["verdict"];
   readonly words: string;
   readonly sentence: string;
+  /** what the draws say */
+  readonly drawn: string;
 }
 
 /** The failures of two cases by their names, those that leave the least time in either first. */
@@ -135,6 +138,7 @@ function cellOf(failure: FailureFindings, { temperatures }: Findings): FailureCe
     verdict: failure.verdict,
     words: verdictWords(failure),
     sentence: failureSentence(failure, temperatures.mtt_K),
+    drawn: drawnWords(failure),
   };
 }
 

@@ -46,6 +46,7 @@ describe("the page of two cases", () => {
     expect(text).toContain("Reaction: process temperature");
     expect(text).toContain("MTSR reached when cooling fails");
     expect(text).toContain("not in this case");
+    expect(text).toMatch(/In the draws: [^<]*\d/);
     expect(text).toContain(String(others[0]?.name));
     expect(text).not.toMatch(wrongNumbers);
     expect(text).toContain(`<option value="cases/${id}" selected>`);
