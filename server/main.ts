@@ -8,6 +8,7 @@ import { isOpen, projectRoot, readSettings } from "./settings.js";
 import { createApp } from "./web/app.js";
 import { serverOf } from "./web/connections.js";
 import { readiness } from "./web/health.js";
+import { createLog } from "./web/log.js";
 import { longScreenings } from "./web/longScreenings.js";
 import { threadedScreener } from "./web/screener.js";
 
@@ -21,7 +22,7 @@ if (!read.ok) {
   process.exit(2);
 }
 const { settings } = read;
-const log = pino({ level: "info" }, pino.destination({ fd: 2, sync: true }));
+const log = createLog(pino.destination({ fd: 2, sync: true }));
 const storage = folderStorage(settings.dataFolder);
 await storage.sweep("cases");
 const sheets = register(storage);
@@ -57,7 +58,8 @@ server.listen(settings.port, settings.host, () => {
 /** Finishes what is under way, gives up on the rest after a few seconds. */
 function stop(): void {
   server.close(() => screener.close().then(() => process.exit(0)));
-  server.closeIdleConnections();
+  // Connections that are kept for a next request become idle one after the other.
+  setInterval(() => server.closeIdleConnections(), 50).unref();
   setTimeout(() => process.exit(0), grace_ms).unref();
 }
 

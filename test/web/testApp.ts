@@ -1,11 +1,11 @@
 import { join } from "node:path";
-import { pino } from "pino";
 import { type CaseStore, caseStore } from "../../server/files/cases.js";
 import { readDemos } from "../../server/files/demos.js";
 import { type Register, register } from "../../server/files/register.js";
 import { folderStorage } from "../../server/files/storage.js";
 import { projectRoot, type Settings } from "../../server/settings.js";
 import { createApp } from "../../server/web/app.js";
+import { createLog } from "../../server/web/log.js";
 import { longScreenings } from "../../server/web/longScreenings.js";
 import { directScreener, type Screener } from "../../server/web/screener.js";
 import { memoryStorage } from "../files/memoryStorage.js";
@@ -37,7 +37,7 @@ export function testApp(
   changed: Partial<Settings> = {},
 ) {
   const logged: string[] = [];
-  const log = pino({ level: "info" }, { write: (line: string) => logged.push(line) });
+  const log = createLog({ write: (line: string) => logged.push(line) });
   const screenings = longScreenings(screener, log);
   const ready = async () => ({ storage: true, screenings: true });
   const services = { cases, demos, register: sheets, screener, screenings, ready, log };
