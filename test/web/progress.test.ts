@@ -274,3 +274,35 @@ describe("the ceiling", () => {
     expect(text).toContain('value="Too long for the page"');
   });
 });
+
+test("more than may wait is refused with a time to come back, for programs and for people", async () => {
+  const gone = new AbortController();
+  const refused: Response[] = [];
+  const asked = Array.from({ length: 75 }, async (_, i) => {
+    const answer = await fetch(`${address}/api/screen`, {
+      method: "POST",
+      headers: { "content-type": "application/json" },
+      body: JSON.stringify(timedCase(`Burst ${i}`)),
+      signal: gone.signal,
+    });
+    if (answer.status === 503) refused.push(answer);
+  });
+  const ended = Promise.allSettled(asked);
+  for (let i = 0; i < 200 && refused.length === 0; i += 1) await pause(20);
+  const [first] = refused;
+  expect(first.headers.get("retry-after")).toBe("60");
+  expect(await first.json()).toMatchObject({ status: 503, detail: expect.stringContaining("Too many") });
+  const shown = await fetch(`${address}/cases/new`, {
+    method: "POST",
+    body: form(timedCase("One too many"), { do: "screen" }),
+  });
+  expect(shown.status).toBe(503);
+  expect(shown.headers.get("retry-after")).toBe("60");
+  const text = await shown.text();
+  expect(text).toContain("Too many screenings are under way.");
+  expect(text).toContain('value="One too many"');
+  gone.abort();
+  await ended;
+  await idle(screener);
+  expect(screener.load()).toEqual({ running: 0, waiting: 0 });
+});
