@@ -75,7 +75,7 @@ export const interruption: CheckGroup = {
   fromMemory: false,
   title: "Ten minutes without cooling, o-nitrochlorobenzene and ammonia at 175 °C",
   source:
-    "Fogler, Elements of Chemical Reaction Engineering, 3rd ed., Example 9-2, pp. 574–576; volume from memory",
+    "Fogler, Elements of Chemical Reaction Engineering, 3rd ed., Example 9-2, pp. 574 and 576; volume from memory",
   checks: [
     {
       what: "temperature at their end",
