@@ -62,6 +62,8 @@ export function signInPages(check: PasswordCheck, sessions: Sessions): Router {
 
   router.post("/sign-out", (request, response) => {
     sessions.end(sessionOf(request));
+    // Otherwise going back would show pages that the browser keeps.
+    response.set("Clear-Site-Data", '"cache"');
     response.clearCookie(cookieName, cookieOptions(request)).redirect(303, "/sign-in");
   });
 

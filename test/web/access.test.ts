@@ -103,6 +103,7 @@ describe("signing in", () => {
     const out = await request(app).post("/sign-out").set("Cookie", cookie).expect(303);
     expect(out.headers.location).toBe("/sign-in");
     expect(cookieOf(out)).toBe("thermal-window-access=");
+    expect(out.headers["clear-site-data"]).toBe('"cache"');
     await request(app).get("/").set("Cookie", cookie).expect(303);
   });
 
