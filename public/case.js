@@ -20,6 +20,8 @@ async function send(address, fields) {
   running.abort();
   running = new AbortController();
   const response = await fetch(address, { method: "POST", body: fields, signal: running.signal });
+  // 422 comes with the page and its faults; any other refusal is not what was asked for.
+  if (!response.ok && response.status !== 422) throw new Error("refused", { cause: response.status });
   return new DOMParser().parseFromString(await response.text(), "text/html");
 }
 
@@ -81,7 +83,11 @@ async function refresh(parts) {
     if (error.name === "AbortError") return;
     noteStale(true);
     const pending = document.getElementById("pending");
-    if (pending !== null) pending.textContent = "The server did not answer. “Screen” asks again.";
+    if (error.cause === 403) {
+      state.textContent = "You are signed out: sign in in another tab, then go on here";
+    } else if (pending !== null) {
+      pending.textContent = "The server did not answer. “Screen” asks again.";
+    }
   }
 }
 

@@ -11,7 +11,7 @@ import { directScreener, type Screener } from "../../server/web/screener.js";
 import { memoryStorage } from "../files/memoryStorage.js";
 
 /** A server for this machine alone. */
-export const settings: Settings = {
+const settings: Settings = {
   port: 0,
   host: "127.0.0.1",
   publicHosts: [],
