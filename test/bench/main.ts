@@ -1,12 +1,20 @@
 import { cpus } from "node:os";
 import { dosingBench } from "./dosing.js";
 import { drawsBench } from "./draws.js";
+import { failuresBench } from "./failures.js";
 import type { Bench } from "./measure.js";
 import { registerBench } from "./register.js";
 import { runawayBench } from "./runaway.js";
 import { screeningBench } from "./screening.js";
 
-const benches: readonly Bench[] = [runawayBench, dosingBench, screeningBench, drawsBench, registerBench];
+const benches: readonly Bench[] = [
+  runawayBench,
+  dosingBench,
+  screeningBench,
+  drawsBench,
+  failuresBench,
+  registerBench,
+];
 
 /** Prints the bench page; the exit status tells whether every bound was met. */
 async function main(): Promise<void> {
