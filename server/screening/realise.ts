@@ -6,6 +6,7 @@ import {
   type ModifiedArrhenius,
 } from "../kinetics/rateConstant.js";
 import { largestLawValue, type RateLaw } from "../kinetics/rateLaw.js";
+import type { Estimate } from "../numeric/estimate.js";
 import { decompositionRise } from "../thermal/balance.js";
 import { timeToMaximumRate } from "../thermal/runaway.js";
 import type { Decomposition, Step } from "../thermal/step.js";
@@ -25,6 +26,9 @@ export const estimates: Sample = {
 
 /** An order drawn at or below zero would turn the rate law over. */
 const lowestOrder = 0.01;
+
+/** So is a temperature drawn at or below 0 K none. */
+const coldest = 1;
 
 /**
  * Puts a parsed case into plain numbers. Temperatures, energies, entropies, the heat of reaction and orders are
@@ -47,7 +51,7 @@ export function realise(model: CaseModel, known: KnownRates, sample: Sample): St
       thermalInertia: Math.max(1, sample.logNormal("/mixture/thermalInertia", mixture.thermalInertia)),
     },
     reaction: {
-      temperature: sample.normal("/reaction/temperature", reaction.temperature),
+      temperature: temperatureIn(sample, "/reaction/temperature", reaction.temperature),
       amountA: sample.logNormal("/reaction/reactants/A/amount", reaction.a.amount),
       orderA: Math.max(lowestOrder, sample.normal("/reaction/reactants/A/order", reaction.a.order)),
       b:
@@ -66,7 +70,7 @@ export function realise(model: CaseModel, known: KnownRates, sample: Sample): St
               mass: sample.logNormal("/reaction/feed/mass", feed.mass),
               density: sample.logNormal("/reaction/feed/density", feed.density),
               heatCapacity: sample.logNormal("/reaction/feed/heatCapacity", feed.heatCapacity),
-              temperature: sample.normal("/reaction/feed/temperature", feed.temperature),
+              temperature: temperatureIn(sample, "/reaction/feed/temperature", feed.temperature),
               duration: sample.logNormal("/reaction/feed/duration", feed.duration),
             },
       // A heat drawn on the endothermic side would be another reaction.
@@ -88,9 +92,9 @@ export function realise(model: CaseModel, known: KnownRates, sample: Sample): St
           ? null
           : {
               coefficient: sample.logNormal("/vessel/heatGain/coefficient", vessel.heatGain.coefficient),
-              ambient: sample.normal("/vessel/heatGain/ambient", vessel.heatGain.ambient),
+              ambient: temperatureIn(sample, "/vessel/heatGain/ambient", vessel.heatGain.ambient),
             },
-      coolantTemperature: sample.normal("/vessel/coolant/temperature", vessel.coolant.temperature),
+      coolantTemperature: temperatureIn(sample, "/vessel/coolant/temperature", vessel.coolant.temperature),
       flowing:
         flowing === null
           ? null
@@ -102,7 +106,8 @@ export function realise(model: CaseModel, known: KnownRates, sample: Sample): St
     },
     limits: {
       ...limits,
-      maximumTechnicalTemperature: sample.normal(
+      maximumTechnicalTemperature: temperatureIn(
+        sample,
         "/limits/maximumTechnicalTemperature",
         limits.maximumTechnicalTemperature,
       ),
@@ -110,6 +115,10 @@ export function realise(model: CaseModel, known: KnownRates, sample: Sample): St
   };
   if (model.decomposition === null) return step;
   return { ...step, decomposition: decompositionOf(model.decomposition, known.decomposition, step, sample) };
+}
+
+function temperatureIn(sample: Sample, pointer: string, estimate: Estimate): number {
+  return Math.max(coldest, sample.normal(pointer, estimate));
 }
 
 function rateOf(
@@ -120,7 +129,7 @@ function rateOf(
 ): ModifiedArrhenius {
   if (parameters.form === "reference") {
     const k = sample.logNormal(`${pointer}/rateConstant`, parameters.rateConstant);
-    const at = sample.normal(`${pointer}/at`, parameters.at);
+    const at = temperatureIn(sample, `${pointer}/at`, parameters.at);
     const energy = sample.normal(`${pointer}/activationEnergy`, parameters.activationEnergy);
     return fromReference(Math.log(k), at, energy);
   }
@@ -194,13 +203,13 @@ function decompositionRate(
   switch (parameters.form) {
     case "heatRate": {
       const released = sample.logNormal(`${pointer}/heatReleaseRate`, parameters.heatReleaseRate);
-      const at = sample.normal(`${pointer}/at`, parameters.at);
+      const at = temperatureIn(sample, `${pointer}/at`, parameters.at);
       const energy = sample.normal(`${pointer}/activationEnergy`, parameters.activationEnergy);
       const largest = law.autocatalytic ? largestLawValue(law) : 1;
       return fromReference(Math.log(released / (heat * largest)), at, energy);
     }
     case "td24": {
-      const at = sample.normal(`${pointer}/temperature`, parameters.temperature);
+      const at = temperatureIn(sample, `${pointer}/temperature`, parameters.temperature);
       const energy = sample.normal(`${pointer}/activationEnergy`, parameters.activationEnergy);
       const unit = fromReference(0, at, energy);
       const rise = decompositionRise(step, { heat, law, rate: unit });

@@ -42,7 +42,7 @@ type Rule = (typeof rules)[Accuracy];
  * @param start T0, K
  * @param alpha0 progress at the start, 0 for fresh material
  * @param accuracy "full" is good to 1e-11, "draws" to 1e-6
- * @returns time in s with the progress at the maximum
+ * @returns time in s with the progress at the maximum; NaN where T0 is no temperature
  * @see Townsend & Tou 1980, Thermochim. Acta 37:1; Keller et al. 1997, J. Loss Prev. Process Ind. 10:31
  */
 export function timeToMaximumRate(
@@ -51,6 +51,7 @@ export function timeToMaximumRate(
   alpha0 = 0,
   accuracy: Accuracy = "full",
 ): TimeToMaximum {
+  if (!(start > 0)) return { time: Number.NaN, alphaAtMaximum: alpha0, accelerates: false };
   const alphaAtMaximum = alphaAtLargestRate(runaway, start, alpha0);
   if (!(alphaAtMaximum > alpha0)) {
     return { time: zeroOrderTime(runaway, start, alpha0), alphaAtMaximum: alpha0, accelerates: false };
