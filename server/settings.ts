@@ -6,7 +6,7 @@ import { type PasswordHash, readPasswordHash } from "./password.js";
 
 /** What the environment decides, read once at the start. */
 export interface Settings {
-  /** 0: any free port */
+  /** 0 lets the system choose a free one */
   readonly port: number;
   readonly host: string;
   /** names under which a proxy, or the network, makes the server known */

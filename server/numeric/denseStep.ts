@@ -14,9 +14,14 @@ export interface DenseStep {
  * A step is stored flat, so that it can be copied to a trajectory in one move:
  * [start, end, length, y at the start (n), y at start + length (n), three rows of the dense output (n each)].
  */
+
+/** Place of the start of a stored step. */
 export const START = 0;
+/** Place of the end of the part that counts. */
 export const END = 1;
+/** Place of the length of the step proper. */
 export const LENGTH = 2;
+/** Place of the first state. */
 export const STATES = 3;
 
 /** Numbers that one stored step takes, for n unknowns. */

@@ -181,7 +181,7 @@ export const paperTerms: readonly Term[] = [
     id: "digest",
     name: "digest",
     meaning:
-      "A fingerprint of the case document: any change of it gives another one. Two cases with the same digest are the same case.",
+      "A fingerprint of the case document, which every change of it turns into another one. Two cases with the same digest are the same case.",
     source: "SHA-256 (FIPS 180-4) of the document in canonical JSON (RFC 8785)",
   },
   {
