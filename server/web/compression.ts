@@ -8,6 +8,8 @@ export function compressedText(): RequestHandler {
   return (request, response, next) => {
     const send = response.send.bind(response);
     response.send = (body?: unknown) => {
+      // A page is made in a moment of its own; what was answered meanwhile is not answered again.
+      if (response.headersSent) return response;
       if (typeof body !== "string" || body.length < worthwhile_bytes) return send(body);
       if (response.get("Content-Type") === undefined) response.type("html");
       response.vary("Accept-Encoding");

@@ -11,7 +11,7 @@ import type { Services } from "./services.js";
 import { readForm } from "./upload.js";
 
 /** Many times the size of a sheet; what is longer is not read. */
-const largestUpload = { bytes: 16 * 1024 * 1024, words: "16 MB" };
+const largestUpload = { bytes: 4 * 1024 * 1024, words: "4 MB" };
 
 /** One thing that was checked, in one plain sentence. */
 interface ShownCheck {
