@@ -65,6 +65,19 @@ function showFaults() {
   }
 }
 
+/** Tells beside each quantity what it was understood as; nothing where it was not. */
+function showReads(source) {
+  const reads = new Map(
+    [...source.querySelectorAll("#reads [data-pointer]")].map((each) => [
+      each.dataset.pointer,
+      each.textContent,
+    ]),
+  );
+  for (const place of form.querySelectorAll(".read")) {
+    place.textContent = reads.get(place.dataset.pointer) ?? "";
+  }
+}
+
 /** Asks for findings of what stands in the form; the full ones take seconds, and say so meanwhile. */
 async function refresh(parts) {
   clearTimeout(timer);
@@ -73,6 +86,7 @@ async function refresh(parts) {
     const fresh = await send(`/findings?parts=${parts}`, body());
     take(fresh, "outcome");
     document.dispatchEvent(new Event("outcome"));
+    showReads(fresh);
     for (const working of form.querySelectorAll("[data-working]")) take(fresh, working.id);
     const found = fresh.querySelector("#findings > *") !== null;
     if (found) take(fresh, "findings");

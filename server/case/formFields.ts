@@ -1,11 +1,13 @@
-import { rateConstantDimension } from "./dimensions.js";
+import { type Dimension, rateConstantDimension } from "./dimensions.js";
 import type { FaultBook } from "./faultBook.js";
 import { pointerOf } from "./faults.js";
 import type { Pasted } from "./formPaste.js";
 import type { FormChoice, FormControl, FormField, FormStart, FormWorking } from "./formShape.js";
 import type { Leaf } from "./leaves.js";
 import { memberOf, type Place } from "./outline.js";
+import { readBack } from "./readBack.js";
 import { bases, isGroup } from "./typedParts.js";
+import { typicalText } from "./typicalRanges.js";
 
 /** What every part of the form is built with. */
 export interface FormContext {
@@ -51,6 +53,8 @@ export function fieldOf(
       : {}),
     ...optional("unitHint", unitHintOf(leaf, path, context)),
     ...optional("hint", hint === "" ? undefined : hint),
+    ...optional("typical", leaf.typical === undefined ? undefined : typicalText(leaf.typical)),
+    ...optional("readBack", readBackOf(leaf, text, path, context)),
     required: place.required,
     ...optional("fault", fault),
     ...(detailed ? { detail: detailOf(leaf, value, path, holder, context) } : {}),
@@ -117,13 +121,28 @@ export function choicesOf(
   return [{ value: "", label: blank }, ...known, ...strange];
 }
 
-function unitHintOf(leaf: Leaf, path: readonly string[], { order }: FormContext): string | undefined {
-  if (leaf.kind === "quantity") return `such as ${leaf.dimension.example}`;
+function unitHintOf(leaf: Leaf, path: readonly string[], context: FormContext): string | undefined {
+  const dimension = dimensionOf(leaf, path, context);
+  if (dimension === undefined) return undefined;
+  return `such as ${leaf.kind === "rateUnit" ? dimension.unit : dimension.example}`;
+}
+
+function readBackOf(
+  leaf: Leaf,
+  text: string,
+  path: readonly string[],
+  context: FormContext,
+): string | undefined {
+  const dimension = leaf.kind === "rateUnit" ? undefined : dimensionOf(leaf, path, context);
+  return dimension === undefined || text === "" ? undefined : readBack(text, dimension);
+}
+
+/** What a field must hold; that of a rate constant follows from its order, as far as that can be read. */
+function dimensionOf(leaf: Leaf, path: readonly string[], { order }: FormContext): Dimension | undefined {
+  if (leaf.kind === "quantity") return leaf.dimension;
   if (leaf.kind !== "rate" && leaf.kind !== "rateUnit") return undefined;
   const of = path[0] === "decomposition" ? 1 : order;
-  if (of === null) return undefined;
-  const dimension = rateConstantDimension(of);
-  return `such as ${leaf.kind === "rate" ? dimension.example : dimension.unit}`;
+  return of === null ? undefined : rateConstantDimension(of);
 }
 
 /** A value as the text of its control; groups and lists are shown elsewhere. */

@@ -30,6 +30,10 @@ export interface FormField {
   /** a text that would do: "such as 150 kg" */
   readonly unitHint?: string;
   readonly hint?: string;
+  /** where most values lie: "Typically 0.7 to 1.5 kg/L, most liquids" */
+  readonly typical?: string;
+  /** what a quantity was understood as, in the SI: "= 308.15 K" */
+  readonly readBack?: string;
   /** must be filled wherever its group is used */
   readonly required: boolean;
   readonly fault?: string;

@@ -14,6 +14,7 @@ import {
   type TypedQuantity,
   type TypedRate,
 } from "./typedQuantities.js";
+import type { TypicalRange } from "./typicalRanges.js";
 
 /** More about a field than its label. */
 interface About {
@@ -22,6 +23,8 @@ interface About {
   readonly alone?: string;
   /** its name where it stands alone, before that of its group: "lowest fitted temperature" */
   readonly short?: string;
+  /** where most values of a quantity lie */
+  readonly typical?: TypicalRange;
   /** what a choice that was not made means: "As it was" */
   readonly blank?: string;
 }

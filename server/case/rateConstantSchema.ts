@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { group, list, variants } from "./groups.js";
 import { choice, estimatedNumber, plain, quantity, rate, rateUnit, text } from "./leaves.js";
+import { typicalRanges } from "./typicalRanges.js";
 
 const fittedRange = z
   .tuple([
@@ -30,11 +31,13 @@ const fitted = {
   ).optional(),
   viscosity: quantity("viscosity", "Viscosity of the medium", {
     hint: "For the diffusion limit; that of water where empty",
+    typical: typicalRanges.viscosity,
   }).optional(),
 };
 
 const activationEnergy = quantity("molarEnergy", "Activation energy", {
   sign: "any",
+  typical: typicalRanges.activationEnergy,
 });
 
 const eyring = group(
@@ -43,9 +46,11 @@ const eyring = group(
     form: z.literal("eyring"),
     activationEnthalpy: quantity("molarEnergy", "Activation enthalpy", {
       sign: "any",
+      typical: typicalRanges.activationEnergy,
     }),
     activationEntropy: quantity("molarEntropy", "Activation entropy", {
       sign: "any",
+      typical: typicalRanges.activationEntropy,
     }),
     standardConcentration: quantity("concentration", "Standard concentration of the entropy", {
       short: "standard concentration",

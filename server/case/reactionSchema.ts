@@ -1,6 +1,7 @@
 import { group, list } from "./groups.js";
 import { choice, estimatedNumber, plain, quantity, text } from "./leaves.js";
 import { decompositionRateConstant, rateConstant, rateLaw } from "./rateConstantSchema.js";
+import { typicalRanges } from "./typicalRanges.js";
 
 const reactionOrder = { above: 0, atMost: 3 };
 
@@ -45,8 +46,8 @@ const feed = group(
   {
     reactant: choice("Fed reactant", { A: "A", B: "B" }),
     mass: quantity("mass", "Mass"),
-    density: quantity("density", "Density"),
-    heatCapacity: quantity("heatCapacity", "Specific heat capacity"),
+    density: quantity("density", "Density", { typical: typicalRanges.density }),
+    heatCapacity: quantity("heatCapacity", "Specific heat capacity", { typical: typicalRanges.heatCapacity }),
     temperature: quantity("temperature", "Temperature"),
     duration: quantity("time", "Duration"),
   },
@@ -103,6 +104,7 @@ export const reaction = group(
       sign: "exothermic",
       alone: "heat of reaction",
       hint: "Per mol of A; negative, because heat leaves",
+      typical: typicalRanges.heatOfReaction,
     }),
     rateConstant: rateConstant.optional(),
     measuredAccumulation: measuredAccumulation.optional(),
@@ -121,6 +123,7 @@ export const decomposition = group(
     heat: quantity("specificEnergy", "Heat of decomposition", {
       alone: "heat of decomposition",
       hint: "Per mass of mixture; positive",
+      typical: typicalRanges.heatOfDecomposition,
     }),
     rateLaw,
     rateConstant: decompositionRateConstant,

@@ -2,6 +2,7 @@ import { z } from "zod";
 import { group, list } from "./groups.js";
 import { choice, estimatedNumber, plain, quantity, text, timeOrWorst } from "./leaves.js";
 import { decomposition, reaction } from "./reactionSchema.js";
+import { typicalRanges } from "./typicalRanges.js";
 import { limits, vessel } from "./vesselSchema.js";
 
 /** The one format there is. */
@@ -14,8 +15,8 @@ const quench = group(
   { title: "Quench", of: "of the quench", adding: "Add a quench" },
   {
     mass: quantity("mass", "Mass"),
-    heatCapacity: quantity("heatCapacity", "Specific heat capacity"),
-    density: quantity("density", "Density"),
+    heatCapacity: quantity("heatCapacity", "Specific heat capacity", { typical: typicalRanges.heatCapacity }),
+    density: quantity("density", "Density", { typical: typicalRanges.density }),
     temperature: quantity("temperature", "Temperature"),
   },
 );
@@ -142,8 +143,10 @@ export const caseSchema = group(
       },
       {
         mass: quantity("mass", "Mass"),
-        density: quantity("density", "Density"),
-        heatCapacity: quantity("heatCapacity", "Specific heat capacity"),
+        density: quantity("density", "Density", { typical: typicalRanges.density }),
+        heatCapacity: quantity("heatCapacity", "Specific heat capacity", {
+          typical: typicalRanges.heatCapacity,
+        }),
         thermalInertia: estimatedNumber(
           "Thermal inertia",
           { atLeast: 1 },

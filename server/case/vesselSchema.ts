@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { group, variants } from "./groups.js";
 import { choice, estimatedNumber, limit, plain, quantity } from "./leaves.js";
+import { typicalRanges } from "./typicalRanges.js";
 
 const level = {
   innerDiameter: quantity("length", "Inner diameter"),
@@ -40,7 +41,7 @@ const area = variants(
       {
         bottom: z.literal("kloepper"),
         ...level,
-        wallThickness: quantity("length", "Wall thickness"),
+        wallThickness: quantity("length", "Wall thickness", { typical: typicalRanges.wallThickness }),
       },
     ),
     group(
@@ -48,7 +49,7 @@ const area = variants(
       {
         bottom: z.literal("korbbogen"),
         ...level,
-        wallThickness: quantity("length", "Wall thickness"),
+        wallThickness: quantity("length", "Wall thickness", { typical: typicalRanges.wallThickness }),
       },
     ),
   ],
@@ -63,10 +64,16 @@ const coefficient = group(
   {
     insideFilm: quantity("heatTransferCoefficient", "Film coefficient inside"),
     outsideFilm: quantity("heatTransferCoefficient", "Film coefficient in the jacket"),
-    wallThickness: quantity("length", "Wall thickness"),
-    wallConductivity: quantity("conductivity", "Conductivity of the wall"),
-    liningThickness: quantity("length", "Lining thickness").optional(),
-    liningConductivity: quantity("conductivity", "Conductivity of the lining").optional(),
+    wallThickness: quantity("length", "Wall thickness", { typical: typicalRanges.wallThickness }),
+    wallConductivity: quantity("conductivity", "Conductivity of the wall", {
+      typical: typicalRanges.wallConductivity,
+    }),
+    liningThickness: quantity("length", "Lining thickness", {
+      typical: typicalRanges.liningThickness,
+    }).optional(),
+    liningConductivity: quantity("conductivity", "Conductivity of the lining", {
+      typical: typicalRanges.liningConductivity,
+    }).optional(),
     insideFouling: quantity("fouling", "Fouling resistance inside", {
       sign: "notNegative",
     }).optional(),
@@ -106,7 +113,9 @@ const boiling = variants(
       {
         method: z.literal("clausius-clapeyron"),
         normalBoilingPoint: quantity("temperature", "Normal boiling point"),
-        heatOfVaporisation: quantity("molarEnergy", "Heat of vaporisation"),
+        heatOfVaporisation: quantity("molarEnergy", "Heat of vaporisation", {
+          typical: typicalRanges.heatOfVaporisation,
+        }),
         pressure: quantity("pressure", "Pressure", { hint: "Absolute" }),
       },
     ),
@@ -137,7 +146,9 @@ const boiling = variants(
 export const vessel = group(
   { title: "Vessel" },
   {
-    heatTransferCoefficient: quantity("heatTransferCoefficient", "Heat transfer coefficient"),
+    heatTransferCoefficient: quantity("heatTransferCoefficient", "Heat transfer coefficient", {
+      typical: typicalRanges.heatTransferCoefficient,
+    }),
     heatTransferCoefficientFrom: coefficient.optional(),
     heatTransferArea: quantity("area", "Heat transfer area"),
     heatTransferAreaFrom: area.optional(),
@@ -162,7 +173,9 @@ export const vessel = group(
       {
         temperature: quantity("temperature", "Temperature"),
         flow: quantity("massFlow", "Flow").optional(),
-        heatCapacity: quantity("heatCapacity", "Specific heat capacity").optional(),
+        heatCapacity: quantity("heatCapacity", "Specific heat capacity", {
+          typical: typicalRanges.heatCapacity,
+        }).optional(),
         holdup: quantity("mass", "Mass in the jacket", {
           alone: "coolant in the jacket",
         }).optional(),
@@ -189,6 +202,7 @@ export const limits = group(
     controlBand: quantity("temperatureDifference", "Control band", {
       sign: "notNegative",
       hint: "How far the temperature swings to each side of its set point",
+      typical: typicalRanges.controlBand,
     }).prefault("0 K"),
   },
 );

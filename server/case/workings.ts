@@ -1,7 +1,7 @@
-import type { Working } from "../screening/workingsOutline.js";
 import { areaWorking } from "../screening/workingsArea.js";
 import { boilingWorking } from "../screening/workingsBoiling.js";
 import { coefficientWorking } from "../screening/workingsCoefficient.js";
+import type { Working } from "../screening/workingsOutline.js";
 import type { Kind } from "./dimensions.js";
 import { pathOf, pointerOf } from "./faults.js";
 import { memberOf, valueAt } from "./outline.js";

@@ -1,4 +1,4 @@
-import { numberText, superscript, temperatureText } from "../words/numbers.js";
+import { plainNumberText, superscript, temperatureText } from "../words/numbers.js";
 import type { Caution } from "./findings.js";
 
 /** A number of a working, in the SI and as it is read. */
@@ -58,9 +58,7 @@ const hottest = 1e6;
  */
 export function valueText(value: number, unit: string, significant = 4): string {
   if (unit === "K" && value < hottest) return temperatureText(value, "nearest", 2);
-  const [number = "", power] = numberText(value, significant).split("×");
-  const short = number.includes(".") ? number.replace(/\.?0+$/, "") : number;
-  return `${power === undefined ? short : `${short}×${power}`} ${printedUnit(unit)}`.trim();
+  return `${plainNumberText(value, significant)} ${printedUnit(unit)}`.trim();
 }
 
 /** "W/(m^2 K)" as W/(m² K). */

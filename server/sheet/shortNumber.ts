@@ -1,6 +1,6 @@
-import { numberText } from "../words/numbers.js";
+import { plainNumberText } from "../words/numbers.js";
 
 /** A number as one would type it: up to four significant digits, no zeros behind the last that counts. */
 export function shortNumber(value: number): string {
-  return numberText(value, 4).replace(/(\.\d*?)0+(?=×|$)/u, (_, kept: string) => (kept === "." ? "" : kept));
+  return plainNumberText(value, 4);
 }

@@ -1,6 +1,6 @@
 import { readFormula } from "../words/formula.js";
 import { formulaText, withNumbers } from "../words/formulaText.js";
-import { numberText } from "../words/numbers.js";
+import { plainNumberText } from "../words/numbers.js";
 
 /** Exact (SI 2019); R to the digits of a pocket calculator. */
 const constants = { R: "8.314462618", "k_{B}": "1.380649×10⁻²³", h: "6.62607015×10⁻³⁴" };
@@ -26,5 +26,5 @@ export function worked(
 
 /** Up to eight digits, so that a calculator comes to the same figure; no noughts behind the last that counts. */
 export function typeable(value: number): string {
-  return numberText(value, 8).replace(/(\.\d*?)0+(?=×|$)/u, (_, kept: string) => (kept === "." ? "" : kept));
+  return plainNumberText(value, 8);
 }

@@ -73,3 +73,15 @@ const ranges: Readonly<Record<WallMaterial, Record<JacketMedium, Record<Contents
 export function typicalTransfer(wall: WallMaterial, jacket: JacketMedium, contents: Contents): Range {
   return ranges[wall][jacket][contents];
 }
+
+/**
+ * From the lowest to the highest coefficient in the whole table, whatever wall, medium and contents.
+ *
+ * @returns W/(m^2 K)
+ */
+export function typicalTransferSpan(): Range {
+  const all = Object.values(ranges).flatMap((byMedium) =>
+    Object.values(byMedium).flatMap((byContents) => Object.values(byContents).flat()),
+  );
+  return [Math.min(...all), Math.max(...all)];
+}

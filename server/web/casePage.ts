@@ -1,5 +1,13 @@
 import type { Response } from "express";
-import { type Before, formOf, type Pasted, workingsShown } from "../case/form.js";
+import {
+  type Before,
+  type FormField,
+  type FormSection,
+  fieldsOf,
+  formOf,
+  type Pasted,
+  workingsShown,
+} from "../case/form.js";
 import { type Fault, readCase } from "../case/read.js";
 import { type SavedCase, titleOf } from "../files/cases.js";
 import type { DemoCase } from "../files/demos.js";
@@ -121,7 +129,17 @@ export async function renderOutcome(
     progress: screening !== null && course?.kind === "running" ? progressView(screening) : null,
     told: course === null ? null : endOf(course),
   };
-  response.render("fragment", { outcome, workings: workingsShown(sections), targetOf: targets(places) });
+  response.render("fragment", {
+    outcome,
+    workings: workingsShown(sections),
+    reads: readsOf(sections),
+    targetOf: targets(places),
+  });
+}
+
+/** What each quantity of a form was understood as. */
+function readsOf(sections: readonly FormSection[]): FormField[] {
+  return fieldsOf(sections).filter(({ readBack }) => readBack !== undefined);
 }
 
 async function screenDocument(

@@ -107,6 +107,12 @@ export function numberText(value: number, significant = 3): string {
   return `${mantissa.replace("-", "−")}×10${superscript(Number(exponent))}`;
 }
 
+/** `numberText` without noughts behind the last digit that counts: 1950 and not 1950.00. */
+export function plainNumberText(value: number, significant: number): string {
+  const text = numberText(value, significant);
+  return text.replace(/(\.\d*?)0+(?=×|$)/u, (_, kept: string) => (kept === "." ? "" : kept));
+}
+
 /** A heat flow, W or kW. */
 export function powerText(watts: number, rounding: Rounding = "nearest"): string {
   return Math.abs(watts) < 1000

@@ -51,6 +51,18 @@ export function editing(visit: Visit): void {
       await page.context().close();
     });
 
+    test("a quantity is read back in the SI as it is typed, and not where it cannot be read", async () => {
+      const page = await visit("/demos/ring-closure");
+      const read = page.locator("#at-reaction-temperature-read");
+      const temperature = page.locator('[name="/reaction/temperature"]');
+      expect(await read.textContent()).toMatch(/^= 3\d\d\.15 K$/);
+      await temperature.fill("36.5 degC");
+      await read.getByText("= 309.65 K", { exact: true }).waitFor();
+      await temperature.fill("36.5");
+      await page.locator("#at-reaction-temperature-read:empty").waitFor({ state: "attached" });
+      await page.context().close();
+    });
+
     test("a failure is added without a new page, and the cursor stands in its first field", async () => {
       const page = await visit("/demos/hydrolysis");
       await page.locator('[name="/mixture/mass"]').fill("801 kg");
