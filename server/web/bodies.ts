@@ -1,5 +1,5 @@
 import type { Request, RequestHandler, Response } from "express";
-import { type Problem, refuse, tooLarge } from "./problems.js";
+import { type Problem, refuse } from "./problems.js";
 
 const MiB = 2 ** 20;
 
