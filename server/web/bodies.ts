@@ -52,8 +52,10 @@ function stopBeyond(allowed_bytes: number, request: Request, response: Response)
 }
 
 const tooLong: Problem = {
-  ...tooLarge,
-  detail: "This is longer than anything that is read at this address.",
+  status: 413,
+  title: "Content Too Large",
+  detail: "This is longer than anything that is read here. A case is at most 256 KiB.",
+  faults: [],
 };
 
 const tooMuch: Problem = {
