@@ -1,4 +1,3 @@
-import { drawnSearch } from "./judgement.js";
 import { feedStaysStopped, type Timeline } from "./timeline.js";
 import type { Vessel } from "./vessel.js";
 import { type Harm, harmAt, isWorse } from "./worstStart.js";
@@ -11,6 +10,9 @@ export interface KnownStart {
 
 /** Parts of the feed tried besides what is known: which of two maxima of harm is higher changes between draws. */
 const coarseSteps = 4;
+
+/** Of every step: only which start is worse has to come out right. */
+const relativeTolerance = 1e-3;
 
 /** Times that the distance to the neighbours of the worst start is halved. */
 const halvings = 3;
@@ -41,7 +43,7 @@ export function reusedStart(vessel: Vessel, timeline: Timeline, known: KnownStar
     const within = Math.min(Math.max(start, 0), duration);
     if (tried.has(within)) return;
     tried.add(within);
-    const found = harmAt(vessel, timeline, within, drawnSearch.relativeTolerance);
+    const found = harmAt(vessel, timeline, within, relativeTolerance, harm.lostAt);
     if (isWorse(found, harm)) [worst, harm] = [within, found];
   };
   const { startedAt, mtsrAt } = known;

@@ -86,23 +86,28 @@ function goldenSection(harm: (start: number) => Harm, from: number, to: number):
  *
  * @param startedAt s from the start of the feed
  * @param relativeTolerance of every step
+ * @param within s after the failure; nobody asks what is lost later, which counts as not lost
  */
 export function harmAt(
   vessel: Vessel,
   timeline: Timeline,
   startedAt: number,
   relativeTolerance: number,
+  within = Number.POSITIVE_INFINITY,
 ): Harm {
   const { contents, integrator, hold } = vessel;
-  const until = lastChange(timeline) + watch;
+  const watched = lastChange(timeline) + watch;
   let worst: Harm = { lostAt: Number.POSITIVE_INFINITY, peak: 0 };
   const start = startAt(contents, hold, startedAt);
   if (start === null) return worst;
   for (const mixing of assumptionsFor(timeline)) {
     const observer = hottest(contents);
     const options = { relativeTolerance, mixing, td24: null, untilLost: true, observer };
+    const until = Math.min(watched, within, worst.lostAt);
     const followed = follow(contents, integrator, start, timeline.changes, until, options);
-    const loss = lossOf(contents, followed);
+    const found = lossOf(contents, followed);
+    // Whether it still rises is only asked at the end of the watch.
+    const loss = until < watched && found?.by === "rising" ? null : found;
     const harm = { lostAt: loss?.at ?? Number.POSITIVE_INFINITY, peak: observer.peak.value };
     if (isWorse(harm, worst)) worst = harm;
   }

@@ -89,7 +89,7 @@ function unlessTooLong(
 }
 
 /** Largest error of an unknown, as a part of its scale. */
-export function errorOf({ exact, scale }: Problem, { y }: Outcome): number {
+function errorOf({ exact, scale }: Problem, { y }: Outcome): number {
   return Math.max(...exact.map((value, i) => Math.abs(y[i] - value) / scale[i]));
 }
 

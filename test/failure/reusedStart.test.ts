@@ -3,7 +3,7 @@ import { fullSearch, judgeAt } from "../../server/failure/judgement.js";
 import { reusedStart } from "../../server/failure/reusedStart.js";
 import type { Timeline } from "../../server/failure/timeline.js";
 import type { Vessel } from "../../server/failure/vessel.js";
-import { worstStart } from "../../server/failure/worstStart.js";
+import { harmAt, worstStart } from "../../server/failure/worstStart.js";
 import { knownRates } from "../../server/screening/known.js";
 import { estimates, realise } from "../../server/screening/realise.js";
 import { createDraws } from "../../server/uncertainty/draws.js";
@@ -86,6 +86,17 @@ describe("the start of a failure in a draw", () => {
     const model = modelOf(documentOf("batch-hydrolysis"));
     const batch = realise(model, knownRates(model), estimates);
     expect(reusedStart(vesselFor(batch, feedRunsOn), feedRunsOn, known)).toBe(0);
+  });
+
+  test("is looked for without following what is lost too late to matter", () => {
+    const { nominal } = cold("15 degC");
+    const vessel = vesselFor(nominal, feedRunsOn);
+    const whole = harmAt(vessel, feedRunsOn, 3600, 1e-5);
+    expect(whole.lostAt).toBeLessThan(7200);
+    const inTime = harmAt(vessel, feedRunsOn, 3600, 1e-5, whole.lostAt + 1);
+    expect(Math.abs(inTime.lostAt - whole.lostAt)).toBeLessThan(0.1);
+    // Still rising there, but its watch is not over.
+    expect(harmAt(vessel, feedRunsOn, 3600, 1e-5, 0.5 * whole.lostAt).lostAt).toBe(Number.POSITIVE_INFINITY);
   });
 
   test("stays within a feed that a draw makes shorter", () => {
