@@ -1,4 +1,3 @@
-import type { Step } from "../thermal/step.js";
 import { drawnIsothermal } from "../uncertainty/drawnIsothermal.js";
 import { collectWindows, type DrawnWindow } from "../uncertainty/drawnWindow.js";
 import { createDraws, usualCount } from "../uncertainty/draws.js";
@@ -59,9 +58,13 @@ export function drawnFindings(
 ): DrawnFindings {
   const draws = createDraws(options.draws ?? usualCount, options.seed);
   const isothermal = drawnIsothermal(nominal.study.step);
-  const drawn = (index: number): Study => {
-    const step: Step = realise(model, known, draws.sample(index));
-    return studyOf(step, "draws", isothermal(step));
+  const limit = nominal.td24 ?? 400;
+  const drawn = (index: number) => {
+    const step = realise(model, known, draws.sample(index));
+    const study = studyOf(step, "draws", isothermal(step));
+    const outcome = outcomeOf(study, model.reaction.measuredAccumulation, limit);
+    const shift = (outcome.td24 ?? limit) - limit;
+    return { study, outcome, shift: Number.isFinite(shift) ? shift : 0 };
   };
   const count = uncertainInputs((sample) => realise(model, known, sample)).length > 0 ? draws.count : 1;
   const windows =
@@ -70,9 +73,9 @@ export function drawnFindings(
   const upper = new Float64Array(windows === null ? 0 : count);
   for (let i = 0; i < count; i += 1) {
     if (i % reportEvery === 0) options.onProgress?.(i / count);
-    const study = drawn(i);
-    outcomes.push(outcomeOf(study, model.reaction.measuredAccumulation, nominal.td24 ?? 400));
-    if (windows !== null) upper[i] = windows.add(study);
+    const draw = drawn(i);
+    outcomes.push(draw.outcome);
+    if (windows !== null) upper[i] = windows.add(draw);
   }
   const percentiles = (figure: (outcome: DrawnOutcome) => number | null): Percentiles | null => {
     const values = outcomes.map(figure).filter((value) => value !== null);

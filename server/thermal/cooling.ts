@@ -117,18 +117,26 @@ export function coolingDutyFrom(
   if (decomposingAtEnd > negligible * largest) {
     const rate = course();
     if (rate === null) return Number.NaN;
-    const released = (time: number): number =>
-      rate.rateAt(time) * perMol + decompositionHeat(step, temperature, time);
-    largest = Math.max(largest, largestOver(rate.times, released));
+    const released = (time: number, reacting: number): number =>
+      reacting * perMol + decompositionHeat(step, temperature, time);
+    largest = Math.max(largest, largestOver(rate, released));
   }
   return Math.max(largest - feedTerm, end) + vessel.agitatorPower;
 }
 
 /** Largest value over a course, refined about the best of its times. */
-function largestOver(times: readonly number[], value: (time: number) => number): number {
-  const values = times.map(value);
+function largestOver(
+  { times, rates, rateAt }: RateCourse,
+  value: (time: number, rate: number) => number,
+): number {
+  const values = times.map((time, i) => value(time, rates[i]));
   const best = values.indexOf(Math.max(...values));
   if (best === 0 || best === values.length - 1) return values[best];
-  const refined = maximise(value, times[best - 1], times[best + 1], 1e-5 * times[best]);
+  const refined = maximise(
+    (time) => value(time, rateAt(time)),
+    times[best - 1],
+    times[best + 1],
+    1e-5 * times[best],
+  );
   return Math.max(values[best], refined.value);
 }

@@ -31,6 +31,8 @@ export interface DosingFigures {
 export interface RateCourse {
   /** s, ascending from 0 to the end of the feed, close enough that the rate turns at most once between two */
   readonly times: readonly number[];
+  /** at `times`, mol/s */
+  readonly rates: ArrayLike<number>;
   /** mol/s */
   rateAt(time: number): number;
 }
@@ -148,6 +150,7 @@ export function courseOf({ balance, run }: Dosing): RateCourse | null {
   if (run === null) return null;
   return {
     times: run.times,
+    rates: run.times.map((time, i) => balance.limiting * balance.rate(time, run.extents[i])),
     rateAt: (time) => balance.limiting * balance.rate(time, run.extentAt(time)),
   };
 }

@@ -1,6 +1,7 @@
 import { lnRateConstant } from "../kinetics/rateConstant.js";
 import { lawValue, type RateLaw } from "../kinetics/rateLaw.js";
 import { gaussLegendre } from "../numeric/quadrature.js";
+import { alphaAtLargestRate } from "./largestRate.js";
 import { type Accuracy, type Runaway, timeToMaximumRate } from "./runaway.js";
 
 /**
@@ -95,8 +96,9 @@ export function carefulTimeToMaximumRate(
   held: number,
   accuracy: Accuracy = "full",
 ): number {
-  const fresh = timeToMaximumRate(runaway, start, 0, accuracy);
-  if (held <= 0) return fresh.time;
+  if (held <= 0) return timeToMaximumRate(runaway, start, 0, accuracy).time;
   const later = timeToMaximumRate(runaway, start, held, accuracy);
-  return fresh.accelerates && !later.accelerates ? 0 : Math.min(fresh.time, later.time);
+  // The fresh one is a quadrature: not made where only its beginning matters.
+  if (!later.accelerates && start > 0 && alphaAtLargestRate(runaway, start, 0) > 0) return 0;
+  return Math.min(timeToMaximumRate(runaway, start, 0, accuracy).time, later.time);
 }

@@ -12,10 +12,16 @@ import type { Runaway } from "./runaway.js";
  * @param runaway decomposition kinetics and rise
  * @param start T0, K
  * @param alpha0 progress at the start
+ * @param tolerance of alpha*
  * @returns alpha*; equal to `alpha0` where the rate falls from the start
  * @see Keller et al. 1997, J. Loss Prev. Process Ind. 10:31 (autocatalytic laws)
  */
-export function alphaAtLargestRate(runaway: Runaway, start: number, alpha0: number): number {
+export function alphaAtLargestRate(
+  runaway: Runaway,
+  start: number,
+  alpha0: number,
+  tolerance = 1e-13,
+): number {
   const { law, rate, rise } = runaway;
   if (alpha0 >= 1) return alpha0;
   const slope = (alpha: number): number => {
@@ -34,7 +40,7 @@ export function alphaAtLargestRate(runaway: Runaway, start: number, alpha0: numb
   // Here the slope falls monotonically, from +infinity at alpha = 0 where m < 1, to -infinity at 1.
   const inside = law.autocatalytic && law.productOrder < 1 ? Math.max(alpha0, 1e-300) : alpha0;
   if (slope(inside) <= 0) return alpha0;
-  return findRoot((alpha) => slope(alpha) * (1 - alpha), inside, 1 - 1e-15, { tolerance: 1e-13 });
+  return findRoot((alpha) => slope(alpha) * (1 - alpha), inside, 1 - 1e-15, { tolerance });
 }
 
 /** Edges that crowd at both ends, where a narrow maximum can hide. */

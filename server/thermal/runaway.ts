@@ -23,12 +23,12 @@ export interface TimeToMaximum {
 }
 
 /**
- * Points per panel, and the s from which exp(-s) adds nothing to the integral: to the last digits, and to 1e-6 for
- * the many evaluations of the draws.
+ * Points per panel, the s from which exp(-s) adds nothing to the integral, and how well its end is located: to the
+ * last digits, and to 1e-6 for the many evaluations of the draws.
  */
 const rules = {
-  full: { points: 14, negligible: 45 },
-  draws: { points: 5, negligible: 20 },
+  full: { points: 14, negligible: 45, end: 1e-13 },
+  draws: { points: 5, negligible: 20, end: 1e-8 },
 } as const;
 export type Accuracy = keyof typeof rules;
 type Rule = (typeof rules)[Accuracy];
@@ -52,7 +52,7 @@ export function timeToMaximumRate(
   accuracy: Accuracy = "full",
 ): TimeToMaximum {
   if (!(start > 0)) return { time: Number.NaN, alphaAtMaximum: alpha0, accelerates: false };
-  const alphaAtMaximum = alphaAtLargestRate(runaway, start, alpha0);
+  const alphaAtMaximum = alphaAtLargestRate(runaway, start, alpha0, rules[accuracy].end);
   if (!(alphaAtMaximum > alpha0)) {
     return { time: zeroOrderTime(runaway, start, alpha0), alphaAtMaximum: alpha0, accelerates: false };
   }

@@ -56,6 +56,7 @@ export function courseBetween(sampled: SampledCourses, weights: Float64Array, fa
   });
   return {
     times,
+    rates,
     rateAt(time) {
       const before = time <= times[bend];
       const first = before ? 0 : bend;

@@ -20,13 +20,20 @@ export interface DrawnWindow {
   readonly cautious: Span | null;
 }
 
+/** One draw of a step. */
+export interface DrawnStudy {
+  readonly study: Study;
+  /** K by which its T_D24 lies above that of the estimates; 0 where there is none. Some ends move with it */
+  readonly shift: number;
+}
+
 /** A window that draws are laid into, one after the other. */
 export interface WindowCollector {
   /**
-   * @param study of one draw
+   * @param draw of the step
    * @returns upper end of its window, K; -Infinity where nothing is left of it
    */
-  add(study: Study): number;
+  add(draw: DrawnStudy): number;
   /** @param count of draws that were added */
   result(count: number): DrawnWindow;
 }
@@ -47,13 +54,13 @@ const drawnIn = 0.005;
  * @param study of the step at its estimates
  * @param window of that study
  * @param count of the draws
- * @param drawn study of one draw by its index, for the check
+ * @param drawn one draw by its index, for the check
  */
 export function collectWindows(
   study: Study,
   window: TemperatureWindow,
   count: number,
-  drawn: (index: number) => Study,
+  drawn: (index: number) => DrawnStudy,
 ): WindowCollector {
   const { lowestTemperature: low, highestTemperature: high, controlBand: band } = study.step.limits;
   const [bottom, top] = [low - band, high + band];
@@ -66,30 +73,41 @@ export function collectWindows(
       met: 0,
     }));
   const checked = checkedDraws(count).map(drawn);
-  const followers = lanes.map((each) => ({
-    ...each,
-    trail: reliable(each.lane, each.trail, checked) ? each.trail : null,
-  }));
+  const followers = lanes.map((each) => ({ ...each, ...checkedTrail(each.lane, each.trail, checked) }));
   const joint = createCoverage();
 
-  function add(draw: Study): number {
+  function add({ study: draw, shift }: DrawnStudy): number {
     const process = draw.step.reaction.temperature;
     const inside = process >= low && process <= high;
     let common: readonly Span[] = [[low, high]];
     for (const follower of followers) {
       const { criterion } = follower.lane;
       const margin = (at: number): number => criterion.margin(draw, at);
-      const allowed = narrowBy(heldAlong(follower.trail, margin, bottom, top), band, low, high);
+      const held = heldAlong(follower.trail, margin, bottom, top, follower.shifts ? shift : 0);
+      const allowed = narrowBy(held, band, low, high);
       follower.coverage.add(allowed);
       if (inside ? holds(allowed, process) : holdsOverBand(margin, process, band)) follower.met += 1;
       if (criterion.binding) common = intersect(common, allowed);
     }
     joint.add(common);
-    return choosePart(common, process)?.[1] ?? Number.NEGATIVE_INFINITY;
+    return upperOf(common, process);
+  }
+
+  function upperIn(draw: Study): number {
+    let common: readonly Span[] = [[low, high]];
+    for (const { lane, trail } of followers) {
+      if (!lane.criterion.binding) continue;
+      common = intersect(
+        common,
+        allowedIn(trail, (at) => lane.criterion.margin(draw, at)),
+      );
+    }
+    return upperOf(common, draw.step.reaction.temperature);
   }
 
   return {
     add,
+    upperIn,
     result(added) {
       const needed = Math.ceil(cautiousPart * added - 1e-9);
       // A single draw is the estimates themselves: there is nothing to resolve.
@@ -122,12 +140,31 @@ function checkedDraws(count: number): number[] {
   return Array.from({ length: number }, (_, i) => Math.floor(((i + 0.5) * count) / number));
 }
 
-function reliable({ criterion }: Lane, trail: Trail, draws: readonly Study[]): boolean {
-  return draws.every((draw) => {
-    const margin = (at: number): number => criterion.margin(draw, at);
+/**
+ * A trail held against a search of the whole range in some draws: null where it differs in any, and whether its ends
+ * keep closer to where T_D24 moves than to where they were.
+ */
+function checkedTrail(
+  { criterion }: Lane,
+  trail: Trail,
+  draws: readonly DrawnStudy[],
+): { readonly trail: Trail | null; readonly shifts: boolean } {
+  let still = 0;
+  let moved = 0;
+  for (const { study, shift } of draws) {
+    const margin = (at: number): number => criterion.margin(study, at);
     const searched = spansWhere(margin, trail.low, trail.high);
-    return alike(heldAlong(trail, margin, trail.low, trail.high), searched, agreement);
-  });
+    if (!alike(heldAlong(trail, margin, trail.low, trail.high), searched, agreement)) {
+      return { trail: null, shifts: false };
+    }
+    const ends = searched.flat().filter((end) => end > trail.low && end < trail.high);
+    if (ends.length !== trail.ends.length) continue;
+    ends.forEach((end, i) => {
+      still += Math.abs(end - trail.ends[i].at);
+      moved += Math.abs(end - trail.ends[i].at - shift);
+    });
+  }
+  return { trail, shifts: moved < still };
 }
 
 function drawIn(spans: readonly Span[], low: number, high: number): readonly Span[] {

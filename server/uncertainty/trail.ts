@@ -85,11 +85,12 @@ interface End {
  *
  * @param trail at the estimates
  * @param margin in the draw
+ * @param shift by which the ends are thought to have moved, K
  * @returns null where the ends do not follow: then only a search of the whole range tells
  */
-export function followed(trail: Trail, margin: Margin): readonly Span[] | null {
+export function followed(trail: Trail, margin: Margin, shift = 0): readonly Span[] | null {
   const { low, high } = trail;
-  const found = followedEnds(trail, margin);
+  const found = followedEnds(trail, margin, shift);
   if (found === null) return null;
   const { ends } = found;
   const atLow = careful(margin(low)) >= 0;
@@ -117,12 +118,16 @@ export function followed(trail: Trail, margin: Margin): readonly Span[] | null {
 /** So far beside an end its side is certain, K. */
 const besides = 2 * endTolerance;
 
-function followedEnds(trail: Trail, margin: Margin): { ends: End[]; startsHolding: boolean } | null {
+function followedEnds(
+  trail: Trail,
+  margin: Margin,
+  shift: number,
+): { ends: End[]; startsHolding: boolean } | null {
   const ends: End[] = [];
   let startsHolding = trail.startsHolding;
   let last = Number.NEGATIVE_INFINITY;
   for (const end of trail.ends) {
-    const at = followEnd(trail, end, margin);
+    const at = followEnd(trail, end, margin, shift);
     // Two ends may both have left on the same side; inside the range their order must stay.
     if (at === null || at < last || (at === last && Number.isFinite(at))) return null;
     last = at;
@@ -154,11 +159,11 @@ function spansBetween(ends: readonly End[], startsHolding: boolean, low: number,
  *
  * @returns K; -Infinity or Infinity where the end lies below or above the range; null where it does not follow
  */
-function followEnd(trail: Trail, end: TrailEnd, margin: Margin): number | null {
+function followEnd(trail: Trail, end: TrailEnd, margin: Margin, shift: number): number | null {
   const { low, high } = trail;
   let below = Number.NEGATIVE_INFINITY;
   let above = Number.POSITIVE_INFINITY;
-  let x = end.at;
+  let x = Math.min(Math.max(end.at + shift, low), high);
   let y = careful(margin(x));
   let slope = end.slope;
   for (let i = 0; i < 40; i += 1) {
@@ -199,9 +204,16 @@ function careful(value: number): number {
  * @param margin in the draw
  * @param low K
  * @param high K
+ * @param shift by which the ends are thought to have moved, K
  */
-export function heldAlong(trail: Trail | null, margin: Margin, low: number, high: number): readonly Span[] {
-  const found = trail === null ? null : followed(trail, margin);
+export function heldAlong(
+  trail: Trail | null,
+  margin: Margin,
+  low: number,
+  high: number,
+  shift = 0,
+): readonly Span[] {
+  const found = trail === null ? null : followed(trail, margin, shift);
   return found ?? spansWhere(margin, low, high);
 }
 
