@@ -31,7 +31,7 @@ export function lawValue(law: RateLaw, alpha: number): number {
     if (law.order > 0) return 0;
     return law.autocatalytic ? law.initiation + 1 : 1;
   }
-  const progress = alpha > 0 ? alpha : 0;
+  const progress = Math.max(alpha, 0);
   const left = power(1 - progress, law.order);
   return law.autocatalytic ? left * (law.initiation + power(progress, law.productOrder)) : left;
 }
