@@ -34,6 +34,8 @@ export interface WindowCollector {
    * @returns upper end of its window, K; -Infinity where nothing is left of it
    */
   add(draw: DrawnStudy): number;
+  /** Upper end as `add` gives it, of a draw that does not count. */
+  upperIn(draw: DrawnStudy): number;
   /** @param count of draws that were added */
   result(count: number): DrawnWindow;
 }
@@ -76,33 +78,36 @@ export function collectWindows(
   const followers = lanes.map((each) => ({ ...each, ...checkedTrail(each.lane, each.trail, checked) }));
   const joint = createCoverage();
 
-  function add({ study: draw, shift }: DrawnStudy): number {
-    const process = draw.step.reaction.temperature;
+  const allowedIn = (follower: (typeof followers)[number], { study: draw, shift }: DrawnStudy) => {
+    const margin = (at: number): number => follower.lane.criterion.margin(draw, at);
+    const held = heldAlong(follower.trail, margin, bottom, top, follower.shifts ? shift : 0);
+    return { margin, allowed: narrowBy(held, band, low, high) };
+  };
+  const upperOf = (common: readonly Span[], process: number): number =>
+    choosePart(common, process)?.[1] ?? Number.NEGATIVE_INFINITY;
+
+  function add(draw: DrawnStudy): number {
+    const process = draw.study.step.reaction.temperature;
     const inside = process >= low && process <= high;
     let common: readonly Span[] = [[low, high]];
     for (const follower of followers) {
-      const { criterion } = follower.lane;
-      const margin = (at: number): number => criterion.margin(draw, at);
-      const held = heldAlong(follower.trail, margin, bottom, top, follower.shifts ? shift : 0);
-      const allowed = narrowBy(held, band, low, high);
+      const { margin, allowed } = allowedIn(follower, draw);
       follower.coverage.add(allowed);
       if (inside ? holds(allowed, process) : holdsOverBand(margin, process, band)) follower.met += 1;
-      if (criterion.binding) common = intersect(common, allowed);
+      if (follower.lane.criterion.binding) common = intersect(common, allowed);
     }
     joint.add(common);
     return upperOf(common, process);
   }
 
-  function upperIn(draw: Study): number {
-    let common: readonly Span[] = [[low, high]];
-    for (const { lane, trail } of followers) {
-      if (!lane.criterion.binding) continue;
-      common = intersect(
-        common,
-        allowedIn(trail, (at) => lane.criterion.margin(draw, at)),
+  function upperIn(draw: DrawnStudy): number {
+    const common = followers
+      .filter(({ lane }) => lane.criterion.binding)
+      .reduce<readonly Span[]>(
+        (spans, each) => intersect(spans, allowedIn(each, draw).allowed),
+        [[low, high]],
       );
-    }
-    return upperOf(common, draw.step.reaction.temperature);
+    return upperOf(common, draw.study.step.reaction.temperature);
   }
 
   return {
