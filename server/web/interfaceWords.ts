@@ -15,7 +15,8 @@ const meanings: Readonly<Record<keyof Findings, string>> = {
   criticality: "class 1 to 5 or none, and how probable each is",
   cooling: "duty, capacity, use, stability, no return, critical coolant temperature",
   window: "its ends, what sets them, the cautious side, and each criterion",
-  failures: "each failure: peak, times, verdict, time to act, alarm temperature, trace",
+  failures:
+    "each failure: peak, times, verdict, time to act and what draws say of it, alarm temperature, trace",
   uncertainty: "percentiles from the draws and what drives them",
   workings: "how fields were worked out from other figures",
   cautions: "code, level (stop, warn, note), sentence, and the field it is about",
