@@ -2,6 +2,7 @@ import type { AccumulationFindings, Findings } from "../screening/findings.js";
 import { durationText, percentText, temperatureNumber, temperatureText } from "../words/numbers.js";
 import { timeUnit } from "./durationAxis.js";
 import type { Axis, Dash, Figure, Line, Mark, Tone, Weight } from "./figure.js";
+import { tableReadings } from "./readings.js";
 import { celsius, evenly, roomyDomain } from "./temperatureAxis.js";
 
 type CurvePoint = AccumulationFindings["curve"][number];
@@ -179,6 +180,17 @@ export function dosing(findings: Findings): Figure | null {
     label: `Time from the start of the feed, ${unit.name}`,
   };
   const highest = 100 * Math.max(1, ...all.map((point) => point.fed));
+  const rows = evenly(curve, 25);
+  const table = {
+    columns: ["Time", "Fed", "Reacted", "Accumulated", "MTSR(t), °C"],
+    rows: rows.map((point) => [
+      durationText(point.time_s, "nearest"),
+      percentText(point.fed),
+      percentText(point.reacted),
+      percentText(point.accumulated, "up"),
+      temperatureNumber(point.mtsr_K, "up"),
+    ]),
+  };
   return {
     id: "dosing",
     title: "Feed, accumulation and MTSR",
@@ -212,15 +224,11 @@ export function dosing(findings: Findings): Figure | null {
     captions: [
       "Shares of the limiting reactant. The lower panel assumes that the feed stops with the cooling.",
     ],
-    table: {
-      columns: ["Time", "Fed", "Reacted", "Accumulated", "MTSR(t), °C"],
-      rows: evenly(curve, 25).map((point) => [
-        durationText(point.time_s, "nearest"),
-        percentText(point.fed),
-        percentText(point.reacted),
-        percentText(point.accumulated, "up"),
-        temperatureNumber(point.mtsr_K, "up"),
-      ]),
-    },
+    table,
+    readings: tableReadings(
+      xAxis,
+      rows.map((point) => point.time_s / unit.seconds),
+      table,
+    ),
   };
 }

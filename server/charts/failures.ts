@@ -1,6 +1,7 @@
 import type { FailureFindings, Findings } from "../screening/findings.js";
 import { temperatureText } from "../words/numbers.js";
 import { durationAxis, timeUnit } from "./durationAxis.js";
+import { failureReadings, temperatureAt } from "./failureReadings.js";
 import { byTimeToAct, failureColumns, failureRow, failuresSentence, verdictWords } from "./failuresWords.js";
 import type { Area, Axis, Dash, Figure, Line, Points, Rule, Tone } from "./figure.js";
 import { celsius } from "./temperatureAxis.js";
@@ -41,16 +42,6 @@ function timeAxis(failures: readonly FailureFindings[]): {
     label: `Time since the failure, ${unit.name}`,
   };
   return { axis, per: unit.seconds };
-}
-
-/** Temperature of a failure at a moment, K; null beyond its trace. */
-function temperatureAt({ trace }: FailureFindings, time: number): number | null {
-  const after = trace.findIndex((point) => point.time_s >= time);
-  const [before, next] = [trace[Math.max(0, after - 1)], trace[after]];
-  if (before === undefined || next === undefined) return null;
-  const width = next.time_s - before.time_s;
-  const part = width === 0 ? 0 : (time - before.time_s) / width;
-  return before.temperature_K + part * (next.temperature_K - before.temperature_K);
 }
 
 type Course = readonly (readonly [number, number])[];
@@ -216,5 +207,6 @@ export function failures(findings: Findings): Figure | null {
       columns: failureColumns,
       rows: sorted.map(failureRow),
     },
+    readings: failureReadings(sorted, axis, per),
   };
 }

@@ -1,3 +1,5 @@
+import type { Reading } from "./readings.js";
+
 /**
  * A figure as plain data: what it shows, in which panels, and the same numbers as a table. Nothing here knows
  * how wide the paper is; `layout` turns a figure into rectangles, paths and texts for one width.
@@ -12,6 +14,8 @@ export interface Figure {
   /** what a reader must know to read the marks, one line each, printed under the panels */
   readonly captions: readonly string[];
   readonly table: Table;
+  /** what a pointer is answered with; absent where every value stands beside its mark */
+  readonly readings?: readonly Reading[];
 }
 
 interface Table {

@@ -1,7 +1,8 @@
 import type { RateFindings } from "../screening/findings.js";
 import { numberText, temperatureNumber } from "../words/numbers.js";
-import type { Figure, Mark, Rule } from "./figure.js";
+import type { Axis, Figure, Mark, Rule } from "./figure.js";
 import { reciprocal, reciprocalAxis } from "./rate.js";
+import { tableReadings } from "./readings.js";
 import { roomyDomain } from "./temperatureAxis.js";
 
 /**
@@ -52,6 +53,25 @@ export function fitResiduals(rate: RateFindings, id: string, title: string): Fig
     fit.curvatureP === null
       ? "There are too few rows to test for curvature."
       : `The test for curvature gives p = ${numberText(fit.curvatureP, 2)}${fit.curvatureP < 0.05 ? ": a straight line may not be enough." : "."}`;
+  const xAxis: Axis = reciprocalAxis(rate);
+  const table = {
+    columns: [
+      "Temperature, °C",
+      `k, ${rate.atProcess.unit}`,
+      "Fitted",
+      "ln(k/fitted)",
+      "Leverage",
+      "Left out",
+    ],
+    rows: fit.rows.map(({ temperature_K, k, fitted, residual, leverage, leftOut: reason }) => [
+      temperatureNumber(temperature_K),
+      numberText(k),
+      fitted === null ? "none" : numberText(fitted),
+      residual === null ? "none" : numberText(residual, 2),
+      leverage === null ? "none" : numberText(leverage, 2),
+      reason ?? "no",
+    ]),
+  };
   return {
     id,
     title,
@@ -60,7 +80,7 @@ export function fitResiduals(rate: RateFindings, id: string, title: string): Fig
       {
         type: "plot",
         height: 120,
-        xAxis: reciprocalAxis(rate),
+        xAxis,
         yAxis: {
           scale: "linear",
           domain: roomyDomain([...rows.map((row) => row.residual), 1.4 * scatter, -1.4 * scatter], 1e-6),
@@ -70,23 +90,11 @@ export function fitResiduals(rate: RateFindings, id: string, title: string): Fig
       },
     ],
     captions: [],
-    table: {
-      columns: [
-        "Temperature, °C",
-        `k, ${rate.atProcess.unit}`,
-        "Fitted",
-        "ln(k/fitted)",
-        "Leverage",
-        "Left out",
-      ],
-      rows: fit.rows.map(({ temperature_K, k, fitted, residual, leverage, leftOut: reason }) => [
-        temperatureNumber(temperature_K),
-        numberText(k),
-        fitted === null ? "none" : numberText(fitted),
-        residual === null ? "none" : numberText(residual, 2),
-        leverage === null ? "none" : numberText(leverage, 2),
-        reason ?? "no",
-      ]),
-    },
+    table,
+    readings: tableReadings(
+      xAxis,
+      fit.rows.map((row) => reciprocal(row.temperature_K)),
+      table,
+    ),
   };
 }

@@ -1,6 +1,7 @@
 import type { CoolingFindings, Findings } from "../screening/findings.js";
 import { numberText, percentText, powerText, temperatureNumber, temperatureText } from "../words/numbers.js";
-import type { Figure, Mark } from "./figure.js";
+import type { Axis, Figure, Mark } from "./figure.js";
+import { tableReadings } from "./readings.js";
 import { celsius, evenly } from "./temperatureAxis.js";
 
 type CurvePoint = CoolingFindings["curve"][number];
@@ -103,6 +104,20 @@ export function heat(findings: Findings): Figure | null {
   const curve = [...cooling.curve].sort((a, b) => a.temperature_K - b.temperature_K);
   const top = ceiling(cooling) / 1000;
   const bottom = Math.min(0, ...curve.map((point) => point.removal_W / 1000));
+  const xAxis: Axis = {
+    scale: "linear",
+    domain: [celsius(curve[0]?.temperature_K ?? 0), celsius(curve.at(-1)?.temperature_K ?? 0)],
+    label: "Temperature of the contents, °C",
+  };
+  const rows = evenly(curve, 25);
+  const table = {
+    columns: ["Temperature, °C", "Released", "Removed at full cooling"],
+    rows: rows.map((point) => [
+      temperatureNumber(point.temperature_K),
+      powerText(point.release_W, "up"),
+      powerText(point.removal_W, "down"),
+    ]),
+  };
   return {
     id: "heat",
     title: "Heat released and heat removed",
@@ -111,11 +126,7 @@ export function heat(findings: Findings): Figure | null {
       {
         type: "plot",
         height: 260,
-        xAxis: {
-          scale: "linear",
-          domain: [celsius(curve[0]?.temperature_K ?? 0), celsius(curve.at(-1)?.temperature_K ?? 0)],
-          label: "Temperature of the contents, °C",
-        },
+        xAxis,
         yAxis: {
           scale: "linear",
           domain: [Math.max(bottom, -0.4 * top), top],
@@ -148,13 +159,11 @@ export function heat(findings: Findings): Figure | null {
     captions: [
       "Released: reaction, decomposition and agitator at the moment of the largest reaction heat, the composition held; cooling by the feed left out.",
     ],
-    table: {
-      columns: ["Temperature, °C", "Released", "Removed at full cooling"],
-      rows: evenly(curve, 25).map((point) => [
-        temperatureNumber(point.temperature_K),
-        powerText(point.release_W, "up"),
-        powerText(point.removal_W, "down"),
-      ]),
-    },
+    table,
+    readings: tableReadings(
+      xAxis,
+      rows.map((point) => celsius(point.temperature_K)),
+      table,
+    ),
   };
 }

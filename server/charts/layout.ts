@@ -1,4 +1,5 @@
 import type { Figure, Panel } from "./figure.js";
+import type { Box } from "./geometry.js";
 import { lanesLeft, lanesRight, layoutLanes } from "./layoutLanes.js";
 import { layoutPlot } from "./layoutPlot.js";
 import { textSizes } from "./palette.js";
@@ -25,6 +26,7 @@ export function layout(figure: Figure, width: Width = "wide"): Layout {
   const left = Math.max(...figure.panels.map((panel) => leftOf(panel, labelsAbove)));
   const right = whole - Math.max(...figure.panels.map((panel) => rightOf(panel, labelsAbove)));
   const primitives: Primitive[] = [];
+  const frames: Box[] = [];
   let y = 0;
   for (const panel of figure.panels) {
     const joined = panel.type === "lanes" && !panel.axisShown;
@@ -33,6 +35,7 @@ export function layout(figure: Figure, width: Width = "wide"): Layout {
         ? layoutPlot(panel, left, right, y, whole)
         : layoutLanes(panel, labelsAbove ? left : 2, left, right, y);
     primitives.push(...done.primitives);
+    if (done.frame !== undefined) frames.push(done.frame);
     y = done.bottom + (joined ? 0 : panelGap);
   }
   for (const caption of figure.captions)
@@ -40,7 +43,22 @@ export function layout(figure: Figure, width: Width = "wide"): Layout {
       primitives.push(textAt(2, y + 5, line));
       y += captionRow;
     }
-  return { width: whole, height: rounded(y), primitives };
+  return { width: whole, height: rounded(y), primitives, frame: around(frames) };
+}
+
+/** The smallest box round others; null without any. */
+function around(boxes: readonly Box[]): Box | null {
+  const [first, ...others] = boxes;
+  if (first === undefined) return null;
+  return others.reduce(
+    (box, { left, right, top, bottom }) => ({
+      left: Math.min(box.left, left),
+      right: Math.max(box.right, right),
+      top: Math.min(box.top, top),
+      bottom: Math.max(box.bottom, bottom),
+    }),
+    first,
+  );
 }
 
 function leftOf(panel: Panel, labelsAbove: boolean): number {

@@ -13,6 +13,8 @@ import { rectangle, strokeAlong, textAt, textBox } from "./strokes.js";
 export interface LaidOutPanel {
   readonly primitives: readonly Primitive[];
   readonly bottom: number;
+  /** of a plot, without axes and labels */
+  readonly frame?: Box;
 }
 
 const flagRow = 15;
@@ -67,6 +69,7 @@ export function layoutPlot(
   return {
     primitives: [...primitives, ...named.primitives],
     bottom: named.bottom,
+    frame: box,
   };
 }
 

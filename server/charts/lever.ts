@@ -1,6 +1,7 @@
 import type { Findings, WindowFindings } from "../screening/findings.js";
 import { durationText, temperatureNumber, temperatureText } from "../words/numbers.js";
 import type { Axis, Band, Figure, Line, Mark } from "./figure.js";
+import { tableReadings } from "./readings.js";
 import { celsius, roomyDomain } from "./temperatureAxis.js";
 
 type Step = NonNullable<WindowFindings["feedLever"]>[number];
@@ -129,6 +130,15 @@ export function lever(findings: Findings): Figure | null {
     planned === undefined
       ? ""
       : `As planned, in ${durationText(planned.duration_s, "nearest")}: ${spanOf(planned)}. `;
+  const xAxis: Axis = durationsAxis(steps);
+  const table = {
+    columns: ["Duration of the feed", "Times the planned one", "Window, °C"],
+    rows: steps.map((step) => [
+      durationText(step.duration_s, "nearest"),
+      String(step.durationFactor),
+      spanOf(step),
+    ]),
+  };
   return {
     id: "feed-lever",
     title: "What a slower feed buys",
@@ -137,7 +147,7 @@ export function lever(findings: Findings): Figure | null {
       {
         type: "plot",
         height: 170,
-        xAxis: durationsAxis(steps),
+        xAxis,
         yAxis: {
           scale: "linear",
           domain: roomyDomain([process_K, ...ends].map(celsius)),
@@ -147,13 +157,11 @@ export function lever(findings: Findings): Figure | null {
       },
     ],
     captions: [],
-    table: {
-      columns: ["Duration of the feed", "Times the planned one", "Window, °C"],
-      rows: steps.map((step) => [
-        durationText(step.duration_s, "nearest"),
-        String(step.durationFactor),
-        spanOf(step),
-      ]),
-    },
+    table,
+    readings: tableReadings(
+      xAxis,
+      steps.map((step) => step.duration_s),
+      table,
+    ),
   };
 }

@@ -1,4 +1,5 @@
 import type { Dash, Tone, Weight } from "./figure.js";
+import type { Box } from "./geometry.js";
 import type { TextSize } from "./palette.js";
 
 /** What both drawers can draw; coordinates from the top left corner of the figure, y downwards. */
@@ -50,6 +51,8 @@ export interface Layout {
   readonly width: number;
   readonly height: number;
   readonly primitives: readonly Primitive[];
+  /** round all plots, without axes and labels; null without a plot */
+  readonly frame: Box | null;
 }
 
 /** Two decimals are a fiftieth of a pixel: enough, and the pages stay small. */

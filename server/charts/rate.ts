@@ -7,6 +7,7 @@ import {
   temperatureText,
 } from "../words/numbers.js";
 import type { Axis, Figure, Mark, Tick, Tone } from "./figure.js";
+import { tableReadings } from "./readings.js";
 import { celsius, evenly, roomyDomain } from "./temperatureAxis.js";
 
 /** 1000/T, 1/K */
@@ -236,6 +237,18 @@ export function rateFigure(
   const xAxis = reciprocalAxis(rate);
   const yAxis = logarithmAxis(rate);
   const { unit } = rate.atProcess;
+  const rows = evenly(rate.table, 25);
+  const table = {
+    columns: ["Temperature, °C", "1000/T, K⁻¹", `k, ${unit}`, "95 % low", "95 % high", "Fitted range"],
+    rows: rows.map((row) => [
+      temperatureNumber(row.temperature_K),
+      numberText(reciprocal(row.temperature_K), 4),
+      numberText(row.k),
+      row.low95 === null ? "not known" : numberText(row.low95),
+      row.high95 === null ? "not known" : numberText(row.high95),
+      row.extrapolated === null ? "not given" : row.extrapolated ? "outside" : "inside",
+    ]),
+  };
   return {
     id,
     title,
@@ -252,16 +265,11 @@ export function rateFigure(
       },
     ],
     captions: [],
-    table: {
-      columns: ["Temperature, °C", "1000/T, K⁻¹", `k, ${unit}`, "95 % low", "95 % high", "Fitted range"],
-      rows: evenly(rate.table, 25).map((row) => [
-        temperatureNumber(row.temperature_K),
-        numberText(reciprocal(row.temperature_K), 4),
-        numberText(row.k),
-        row.low95 === null ? "not known" : numberText(row.low95),
-        row.high95 === null ? "not known" : numberText(row.high95),
-        row.extrapolated === null ? "not given" : row.extrapolated ? "outside" : "inside",
-      ]),
-    },
+    table,
+    readings: tableReadings(
+      xAxis,
+      rows.map((row) => reciprocal(row.temperature_K)),
+      table,
+    ),
   };
 }

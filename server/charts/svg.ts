@@ -1,6 +1,7 @@
 import type { Figure } from "./figure.js";
+import type { Box } from "./geometry.js";
 import { layout, type Width, widths } from "./layout.js";
-import type { Primitive, Stroke } from "./primitive.js";
+import { type Primitive, rounded, type Stroke } from "./primitive.js";
 
 const entities: Readonly<Record<string, string>> = {
   "&": "&amp;",
@@ -39,13 +40,20 @@ function drawPrimitive(primitive: Primitive): string {
   }
 }
 
+/** Where the plots of a figure with readings stand: left, right, top, bottom. */
+function framed({ readings = [] }: Figure, frame: Box | null): string {
+  if (frame === null || readings.length === 0) return "";
+  const sides = [frame.left, frame.right, frame.top, frame.bottom].map(rounded);
+  return ` data-frame="${sides.join(" ")}"`;
+}
+
 /** A figure at one width as an SVG element, named by its title and described by its sentence. */
 export function drawSvgAt(figure: Figure, width: Width): string {
-  const { width: across, height, primitives } = layout(figure, width);
+  const { width: across, height, primitives, frame } = layout(figure, width);
   const id = escaped(`${figure.id}-${width}`);
   return [
     `<svg class="figure figure-${width}" role="img" aria-labelledby="${id}-title" aria-describedby="${id}-desc"`,
-    ` viewBox="0 0 ${across} ${height}" xmlns="http://www.w3.org/2000/svg">`,
+    ` viewBox="0 0 ${across} ${height}"${framed(figure, frame)} xmlns="http://www.w3.org/2000/svg">`,
     `<title id="${id}-title">${escaped(figure.title)}</title>`,
     `<desc id="${id}-desc">${escaped(figure.sentence)}</desc>`,
     ...primitives.map(drawPrimitive),

@@ -1,7 +1,8 @@
 import type { Findings, TmradFindings } from "../screening/findings.js";
 import { durationText, temperatureNumber, temperatureText } from "../words/numbers.js";
 import { durationAxis } from "./durationAxis.js";
-import type { Figure, Mark, Rule, Tone } from "./figure.js";
+import type { Axis, Figure, Mark, Rule, Tone } from "./figure.js";
+import { tableReadings } from "./readings.js";
 import { celsius, evenly, temperatureAxis } from "./temperatureAxis.js";
 
 const eightHours = 8 * 3600;
@@ -155,10 +156,28 @@ export function tmrad(findings: Findings): Figure | null {
     return null;
   const marked = markedOf(times, temperatures);
   const shownTimes = times.curve.flatMap((row) => (row.time_s === null ? [] : [row.time_s]));
-  const xAxis = temperatureAxis(
+  const roomy = temperatureAxis(
     times.curve.map((row) => row.temperature_K),
     "Temperature at the loss of cooling, °C",
   );
+  const xAxis: Axis = {
+    ...roomy,
+    domain: [celsius(times.curve[0]?.temperature_K ?? 0), roomy.domain[1]],
+  };
+  const rows = evenly(times.curve, 25);
+  const table = {
+    columns: ["Temperature, °C", "TMRad", "Closed form, zero order", "Closed form on the careful side"],
+    rows: rows.map(({ temperature_K, time_s, zeroOrder_s }) => [
+      temperatureNumber(temperature_K),
+      time_s === null ? "not computed" : durationText(time_s),
+      zeroOrder_s === null ? "not computed" : durationText(zeroOrder_s),
+      time_s === null || zeroOrder_s === null
+        ? "not known"
+        : zeroOrder_s <= time_s * (1 + 1e-9)
+          ? "yes"
+          : "no",
+    ]),
+  };
   return {
     id: "tmrad",
     title: "Time to maximum rate",
@@ -167,27 +186,17 @@ export function tmrad(findings: Findings): Figure | null {
       {
         type: "plot",
         height: 270,
-        xAxis: {
-          ...xAxis,
-          domain: [celsius(times.curve[0]?.temperature_K ?? 0), xAxis.domain[1]],
-        },
+        xAxis,
         yAxis: durationAxis([...shownTimes, eightHours, day], "TMRad (logarithmic)"),
         marks: marksOf(times, marked),
       },
     ],
     captions: ["Adiabatic, from fresh material; the time rounded down."],
-    table: {
-      columns: ["Temperature, °C", "TMRad", "Closed form, zero order", "Closed form on the careful side"],
-      rows: evenly(times.curve, 25).map(({ temperature_K, time_s, zeroOrder_s }) => [
-        temperatureNumber(temperature_K),
-        time_s === null ? "not computed" : durationText(time_s),
-        zeroOrder_s === null ? "not computed" : durationText(zeroOrder_s),
-        time_s === null || zeroOrder_s === null
-          ? "not known"
-          : zeroOrder_s <= time_s * (1 + 1e-9)
-            ? "yes"
-            : "no",
-      ]),
-    },
+    table,
+    readings: tableReadings(
+      xAxis,
+      rows.map((row) => celsius(row.temperature_K)),
+      table,
+    ),
   };
 }

@@ -1,7 +1,8 @@
 import type { FailureFindings } from "../screening/findings.js";
 import { durationText } from "../words/numbers.js";
 import { durationAxis, timeUnit } from "./durationAxis.js";
-import type { Figure, Mark } from "./figure.js";
+import type { Axis, Figure, Mark } from "./figure.js";
+import { tableReadings } from "./readings.js";
 
 /** One moment of the batch at which a failure was made to begin. */
 type VulnerableMoment = NonNullable<FailureFindings["vulnerable"]>[number];
@@ -89,6 +90,15 @@ export function vulnerable(
   const begins = durationText(worst.startedAt_s, "nearest");
   const verdict =
     worst.verdict === "lost" ? "lost, no delay is short enough" : `act within ${verdictWords(worst)}`;
+  const xAxis: Axis = {
+    scale: "linear",
+    domain: [0, last / unit.seconds],
+    label: `Moment at which the failure begins, ${unit.name}`,
+  };
+  const table = {
+    columns: ["Begins at", "Time to act"],
+    rows: sorted.map((moment) => [durationText(moment.startedAt_s, "nearest"), verdictWords(moment)]),
+  };
   return {
     id: `vulnerable-${number}`,
     title: `When the batch is most vulnerable: ${name}`,
@@ -97,19 +107,17 @@ export function vulnerable(
       {
         type: "plot",
         height: 150,
-        xAxis: {
-          scale: "linear",
-          domain: [0, last / unit.seconds],
-          label: `Moment at which the failure begins, ${unit.name}`,
-        },
+        xAxis,
         yAxis,
         marks,
       },
     ],
     captions: [],
-    table: {
-      columns: ["Begins at", "Time to act"],
-      rows: sorted.map((moment) => [durationText(moment.startedAt_s, "nearest"), verdictWords(moment)]),
-    },
+    table,
+    readings: tableReadings(
+      xAxis,
+      sorted.map((moment) => moment.startedAt_s / unit.seconds),
+      table,
+    ),
   };
 }

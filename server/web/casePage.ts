@@ -84,7 +84,7 @@ export async function renderCase(services: Services, response: Response, shown: 
     page: {
       title: titleOf(document),
       wide: true,
-      script: ["/case.js", "/progress.js"],
+      script: ["/case.js", "/figures.js", "/progress.js"],
       state: stateOf(shown),
       action: saved === null ? "/cases/new" : `/cases/${saved.id}`,
       revision: shown.conflict?.revision ?? saved?.revision ?? null,

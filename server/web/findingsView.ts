@@ -30,7 +30,7 @@ export interface FindingsView {
   };
   readonly sentences: readonly string[];
   readonly keyFigures: readonly KeyFigureGroup[];
-  readonly figures: readonly (Pick<Figure, "id" | "title" | "sentence" | "table"> & {
+  readonly figures: readonly (Pick<Figure, "id" | "title" | "sentence" | "table" | "readings"> & {
     readonly svg: string;
     readonly terms: readonly Term[];
   })[];
@@ -75,6 +75,7 @@ export function findingsView(findings: Findings, model: CaseModel): FindingsView
       title: figure.title,
       sentence: figure.sentence,
       table: figure.table,
+      readings: figure.readings ?? [],
       svg: drawSvg(figure),
       terms: figureTerms(figure.id, findings),
     })),
