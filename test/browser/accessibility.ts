@@ -23,6 +23,8 @@ export function accessibility(visit: Visit): void {
       "/glossary",
       "/checks",
       "/interface",
+      "/register",
+      "/verify",
       "/demos/ring-closure",
       "/demos/acylation",
       "/cases/none",

@@ -11,6 +11,8 @@ const paths = [
   "/glossary",
   "/checks",
   "/interface",
+  "/register",
+  "/verify",
   comparison,
 ];
 
