@@ -48,14 +48,15 @@ export function outcomeOf(study: Study, measured: MeasuredAccumulation | null, g
  * T_D24 of a draw. Beyond the range in which it is looked for it counts as infinitely high only where TMRad is
  * longer than a day at both ends of that range; else as infinitely low, which makes the class "none".
  */
-function limitTemperature(runaway: Runaway, guess: number): number {
+export function limitTemperature(runaway: Runaway, guess: number): number {
   const found = td24(runaway, guess, "draws");
   if (found !== null) return found;
   const slow = td24Range.every((at) => timeToMaximumRate(runaway, at, 0, "draws").time > day);
   return slow ? Number.POSITIVE_INFINITY : Number.NEGATIVE_INFINITY;
 }
 
-function mtsrOf(study: Study, measured: MeasuredAccumulation | null): number | null {
+/** MTSR of a draw, K; null where neither kinetics nor a measurement tell it. One that cannot be had counts as infinite. */
+export function mtsrOf(study: Study, measured: MeasuredAccumulation | null): number | null {
   const { temperature, rate } = study.step.reaction;
   if (rate !== null) return study.mtsrAt(temperature) ?? Number.POSITIVE_INFINITY;
   return measured === null ? null : temperature + measuredDosing(study.step, measured).rise.value;
@@ -74,4 +75,18 @@ function coolingUse(study: Study): number | null {
   if (!(capacity > 0)) return Number.POSITIVE_INFINITY;
   const duty = study.dutyAt(temperature);
   return Number.isNaN(duty) ? Number.POSITIVE_INFINITY : duty / capacity;
+}
+
+/** Whether two decompositions are the same to the last digit. */
+export function sameRunaway(a: Runaway, b: Runaway): boolean {
+  return (
+    a.rise === b.rise &&
+    a.rate.lnPreExponential === b.rate.lnPreExponential &&
+    a.rate.temperaturePower === b.rate.temperaturePower &&
+    a.rate.activationEnergy === b.rate.activationEnergy &&
+    a.law.autocatalytic === b.law.autocatalytic &&
+    a.law.order === b.law.order &&
+    a.law.productOrder === b.law.productOrder &&
+    a.law.initiation === b.law.initiation
+  );
 }

@@ -1,3 +1,4 @@
+import type { DriverFindings, NextMeasurements } from "./decisionFindings.js";
 import type { Working } from "./workingsOutline.js";
 
 /** The document that a screening gives: SI, full precision, every number finite or null. */
@@ -275,8 +276,9 @@ export interface UncertaintyFindings {
   /** cooling duty over capacity at the planned temperature */
   readonly coolingUse: Percentiles | null;
   readonly timeToAct_s: Percentiles | null;
-  readonly drivers: readonly unknown[] | null;
-  readonly nextMeasurement: unknown;
+  /** null without draws */
+  readonly drivers: readonly DriverFindings[] | null;
+  readonly nextMeasurement: NextMeasurements | null;
 }
 
 export type CautionLevel = "stop" | "warn" | "note";

@@ -14,11 +14,13 @@ import { cautiousSideCautions, errorCautions } from "./cautions/uncertainty.js";
 import { verdictCautions } from "./cautions/verdicts.js";
 import { drawnFindings, windowWithDraws } from "./drawn.js";
 import { failuresWithDraws } from "./drawnFailures.js";
+import { driverFindings } from "./drivers.js";
 import { failureFindings } from "./failureFindings.js";
 import type { Caution, Findings } from "./findings.js";
 import { type KnownRates, knownRates } from "./known.js";
 import { measuredCautions, measuredFindings, measuredOf, withMeasured } from "./measured.js";
 import type { CaseModel } from "./model.js";
+import { nextMeasurements } from "./nextMeasurement.js";
 import { notice } from "./notice.js";
 import { ignored, type Progress, partOf } from "./progress.js";
 import { rateFindings } from "./rateFindings.js";
@@ -79,9 +81,14 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
         onProgress: partOf(onProgress, partDone.estimates, partDone.draws),
       })
     : null;
+  const drivers = full
+    ? driverFindings(model, known, nominal, {
+        onProgress: partOf(onProgress, partDone.draws, partDone.drivers),
+      })
+    : null;
   const window = allowed === null ? null : windowWithDraws(windowFindings(study, allowed, full), drawn);
   const simulated = full
-    ? failureFindings(step, model.failures, partOf(onProgress, partDone.draws, partDone.failures))
+    ? failureFindings(step, model.failures, partOf(onProgress, partDone.drivers, partDone.failures))
     : null;
   const failed =
     simulated === null
@@ -123,14 +130,22 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
     cooling,
     window,
     failures: failed?.failures ?? null,
-    uncertainty: drawn === null ? null : { ...drawn.uncertainty, timeToAct_s: failed?.timeToAct ?? null },
+    uncertainty:
+      drawn === null
+        ? null
+        : {
+            ...drawn.uncertainty,
+            timeToAct_s: failed?.timeToAct ?? null,
+            drivers,
+            nextMeasurement: nextMeasurements(model, known, temperatures),
+          },
     workings,
     cautions: byLevel(cautions),
   };
 }
 
 /** What is done of a full screening after each of its first parts, by the time that they usually take. */
-const partDone = { estimates: 0.02, draws: 0.2, failures: 0.45 };
+const partDone = { estimates: 0.02, draws: 0.15, drivers: 0.25, failures: 0.5 };
 
 /** Temperatures over which curves are drawn: the study, and what the case can reach. */
 function curveSpan(step: Step, mtsr: number | null, t24: number | null): readonly [number, number] {

@@ -45,3 +45,42 @@ export function uncertainInputs(walk: (sample: Sample) => unknown): readonly str
   });
   return found;
 }
+
+/**
+ * JSON pointers of the inputs that carry no error although they could, in the order in which the case is walked. An
+ * error typed as zero says that the input is exact.
+ *
+ * @param walk puts the case into plain numbers by the sample it is given
+ */
+export function errorFreeInputs(walk: (sample: Sample) => unknown): readonly string[] {
+  const found: string[] = [];
+  const single = (pointer: string, estimate: Estimate): number => {
+    if (estimate.standardError === null) found.push(pointer);
+    return estimate.value;
+  };
+  walk({
+    normal: single,
+    logNormal: single,
+    pair(pointer, covariance) {
+      if (covariance === null) found.push(pointer);
+      return [0, 0];
+    },
+  });
+  return found;
+}
+
+/**
+ * The estimates but for one input, to see what depends on it.
+ *
+ * @param only its pointer
+ * @param factor by which it is multiplied; of an activation pair, k
+ */
+export function moved(only: string, factor: number): Sample {
+  const single = (pointer: string, { value }: Estimate): number =>
+    pointer === only ? value * factor : value;
+  return {
+    normal: single,
+    logNormal: single,
+    pair: (pointer) => [pointer === only ? Math.log(factor) : 0, 0],
+  };
+}
