@@ -150,7 +150,7 @@ function outputsOf(
       valueIn: (draw) => mtsrOf(draw.study, measuredAccumulation) ?? Number.POSITIVE_INFINITY,
     });
   }
-  if (window !== null) {
+  if (window !== null && window.chosen !== null) {
     const { upperIn } = collectWindows(study, window, count, drawn);
     outputs.push({ key: "upper_K", beyond: "nothing is left of the window", valueIn: upperIn });
   }

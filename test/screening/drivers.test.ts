@@ -126,11 +126,22 @@ describe("T_D24", () => {
 });
 
 test("an error that alone leaves nothing of the window is named, and no shares are told", () => {
-  const document = changed(batch, "/reaction/heat", { value: "-84 kJ/mol", standardError: "60 kJ/mol" });
+  const { heat } = estimatesOf(documentOf("batch-hydrolysis")).step.reaction;
+  const document = changed(documentOf("batch-hydrolysis"), "/reaction/heat", {
+    value: `${heat} J/mol`,
+    standardError: `${-heat} J/mol`,
+  });
   const upper = driversOf(document).find(({ output }) => output === "upper_K");
   expect(upper?.why).toContain("nothing is left of the window");
   expect(upper?.why).toContain("heat of reaction");
   expect(upper?.shares.every(({ share }) => share === null)).toBe(true);
+});
+
+test("a window that is empty at the estimates has no upper end to be moved", () => {
+  expect(driversOf(documentOf("batch-ring-closure")).map(({ output }) => output)).toEqual([
+    "td24_K",
+    "mtsr_K",
+  ]);
 });
 
 test("the same case has the same drivers to the last digit", () => {
