@@ -1,4 +1,5 @@
 import { type Filing, filingText } from "../records/filing.js";
+import { checksLine } from "../screening/checks/all.js";
 import type { Caution, Findings } from "../screening/findings.js";
 import { timeText } from "../words/timeText.js";
 import { drawLine, lineHeight } from "./lines.js";
@@ -69,6 +70,8 @@ export function writeSignatures(
   );
   paragraph(cursor, digest, styles.body);
   if (filing !== undefined) writeFiling(cursor, filing);
+  subheading(cursor, "Checks of the program");
+  paragraph(cursor, `${checksLine()} The program's page of checks names each with its source.`, styles.body);
 }
 
 /** Who holds this paper can tell whether the register it names was rewritten since. */

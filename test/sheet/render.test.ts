@@ -2,6 +2,7 @@ import { spawnSync } from "node:child_process";
 import { createHash } from "node:crypto";
 import { describe, expect, test } from "vitest";
 import { recordBytes, recordName } from "../../server/records/attach.js";
+import { checksLine } from "../../server/screening/checks/all.js";
 import { notice, noticeFirstSentence } from "../../server/screening/notice.js";
 import { renderSheet } from "../../server/sheet/render.js";
 import { built } from "../build.js";
@@ -140,6 +141,17 @@ test("the record travels inside, whole and canonical", async () => {
   );
   await pdf.destroy();
 });
+
+test.each(sheets)(
+  "the last page of the sheet, %s, says in one line what the checks of this build came to",
+  async (_name, rendered) => {
+    const pages = await pageTexts(await rendered);
+    const { length } = pages;
+    expect(pages.map((page) => page.replace(/\s+/g, " ").includes(checksLine()))).toEqual(
+      pages.map((_, at) => at === length - 1),
+    );
+  },
+);
 
 describe("the same inputs give the same bytes", () => {
   test("when rendered twice", async () => {
