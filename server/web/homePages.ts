@@ -8,6 +8,11 @@ import { type Sample, sampleOf } from "./sample.js";
 import type { Services } from "./services.js";
 import { readUpload } from "./upload.js";
 
+/** Whether a file was text, and not a picture or a PDF that was chosen by mistake. */
+function isText(content: string): boolean {
+  return !/[\0\uFFFD]/.test(content);
+}
+
 /** The first page: what this is, cases to start from, cases that were saved, a file to open. */
 export function homePages(services: Services): Router {
   const router = Router();
@@ -36,7 +41,6 @@ export function homePages(services: Services): Router {
   router.post("/open", raw({ type: "multipart/form-data", limit: "600kb" }), async (request, response) => {
     const upload = await readUpload(request);
     const text = upload?.text ?? "";
-    const pasted = upload?.pasted ? text : "";
     if (text.trim() === "") {
       response.status(400);
       return renderHome(response, { fault: "Choose a file, or paste the text of a case document." });
@@ -46,7 +50,8 @@ export function homePages(services: Services): Router {
     if (!read.ok && read.kind === "json") {
       response.status(400);
       const fault = read.faults.map((each) => each.message).join(" ");
-      return renderHome(response, { pasted, fault });
+      // What came from a file can be mended in the page too, unless it is no text at all.
+      return renderHome(response, { pasted: upload?.pasted || isText(text) ? text : "", fault });
     }
     const document: unknown = read.ok ? read.document : JSON.parse(text);
     return renderCase(services, response, { document, origin: { kind: "opened" } });
