@@ -71,7 +71,7 @@ describe("the cautious end by brute force", () => {
     expect(countHolding(opened, count, upper + 0.02, only) / count).toBeLessThan(0.95);
   });
 
-  test("where the recipe carries errors too, so that each draw is integrated by itself", () => {
+  test("of the cooling where the recipe carries errors too: 200 draws, each integrated", () => {
     const opened = drawnCase(
       altered(acylation, {
         "/reaction/reactants/A/amount": { value: "2.9 kmol", standardError: "0.05 kmol" },

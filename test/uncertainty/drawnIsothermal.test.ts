@@ -76,26 +76,128 @@ describe("the tabulated isothermal step of a dosed case agrees with its integrat
     }
   });
 
-  test("where a draw changes the recipe it is integrated instead", () => {
-    const { feed, amountA } = dosed.reaction;
-    if (feed === null) throw new Error("The acylation is dosed");
-    const others: Step[] = [
-      { ...dosed, reaction: { ...dosed.reaction, amountA: amountA * 1.02 } },
-      { ...dosed, reaction: { ...dosed.reaction, feed: { ...feed, duration: feed.duration * 1.1 } } },
-      { ...dosed, mixture: { ...dosed.mixture, mass: dosed.mixture.mass * 0.97 } },
-      { ...dosed, mixture: { ...dosed.mixture, density: dosed.mixture.density * 0.97 } },
-      { ...dosed, reaction: { ...dosed.reaction, orderA: 1.1 } },
-    ];
-    for (const step of others) {
-      const got = source(step).figuresAt(308.15);
-      expect((got?.rise ?? 0) / directly(step, 308.15).rise.value).toBeCloseTo(1, 5);
-    }
-  });
-
   test("a step that cannot be integrated gives nothing, not a number", () => {
     const broken = moved(dosed, Number.NaN, 1, 1, 1);
     expect(source(broken).figuresAt(308.15)).toBeNull();
     expect(source(broken).completionAt(308.15)).toBeNaN();
+  });
+});
+
+/** The step with other amounts, masses, densities and another duration. */
+function recipe(step: Step, [a, b, mass, density, duration]: readonly number[]): Step {
+  const { mixture, reaction } = step;
+  const { feed } = reaction;
+  return {
+    ...step,
+    mixture: { ...mixture, mass: mixture.mass * mass, density: mixture.density * density },
+    reaction: {
+      ...reaction,
+      amountA: reaction.amountA * a,
+      b: reaction.b === null ? null : { ...reaction.b, amount: reaction.b.amount * b },
+      feed: feed === null ? null : { ...feed, duration: feed.duration * duration },
+    },
+  };
+}
+
+const changes = [
+  [1, 1, 1, 1, 1.13],
+  [1.012, 1, 1, 1, 1],
+  [1, 0.987, 1, 1, 1],
+  [1, 1, 0.96, 1.03, 1],
+  [1.03, 1.01, 1.02, 0.98, 0.9],
+  // The excess of 5 % turns into a lack of B.
+  [1.1, 1, 1, 1, 1],
+] as const;
+
+/** Against an integration: the largest rate and the rise to 1e-5, the time to the target to 1e-3. */
+function expectAlike(nominal: Step, draws: readonly Step[]): void {
+  const source = drawnIsothermal(nominal);
+  for (const step of draws) {
+    const isothermal = source(step);
+    for (let temperature = 268.15; temperature <= 358; temperature += 7.1) {
+      const want = directly(step, temperature);
+      const got = isothermal.figuresAt(temperature);
+      expect(Math.abs((got?.rise ?? 0) / want.rise.value - 1)).toBeLessThan(1e-5);
+      expect(Math.abs((got?.fastest.value ?? 0) / want.fastest.value - 1)).toBeLessThan(1e-5);
+      expect(Math.abs((got?.endRate ?? 0) - want.endRate)).toBeLessThan(3e-3 * want.fastest.value);
+      const time = timeToConversion(want, step.limits.targetConversion);
+      expect(Math.abs(isothermal.completionAt(temperature) / time - 1)).toBeLessThan(1.5e-3);
+    }
+  }
+}
+
+describe("a dosed draw with another recipe, read from neighbouring recipes, agrees with its integration", () => {
+  test("in amounts, masses, densities and the duration of the feed, heats changed as well", () => {
+    expectAlike(
+      dosed,
+      changes.map((change) => moved(recipe(dosed, change), 0.4, 1.05, 0.97, 1.1)),
+    );
+  });
+
+  test("about equal amounts of both reactants, where the limiting one changes", () => {
+    const { b, amountA } = dosed.reaction;
+    if (b === null) throw new Error("The acylation has two reactants");
+    const equal = { ...dosed, reaction: { ...dosed.reaction, b: { ...b, amount: amountA } } };
+    expectAlike(
+      equal,
+      changes.map((change) => recipe(equal, change)),
+    );
+  });
+
+  test("where the other reactant is fed, two of B meet one of A, and orders are broken", () => {
+    const { b, feed } = dosed.reaction;
+    if (b === null || feed === null) throw new Error("The acylation is dosed");
+    const other: Step = {
+      ...dosed,
+      reaction: {
+        ...dosed.reaction,
+        orderA: 1.4,
+        b: { amount: b.amount * 2.2, perA: 2, order: 0.8 },
+        feed: { ...feed, reactant: "A" },
+      },
+    };
+    expectAlike(
+      other,
+      changes.slice(0, 5).map((change) => recipe(other, change)),
+    );
+  });
+
+  test("without a second reactant", () => {
+    const { feed } = dosed.reaction;
+    if (feed === null) throw new Error("The acylation is dosed");
+    const alone: Step = {
+      ...dosed,
+      reaction: { ...dosed.reaction, b: null, orderA: 2, feed: { ...feed, reactant: "A" } },
+    };
+    expectAlike(
+      alone,
+      changes.slice(0, 5).map((change) => recipe(alone, change)),
+    );
+  });
+
+  test("in the duty, also where the decomposition takes part in it", () => {
+    const { decomposition } = dosed;
+    if (decomposition === null) throw new Error("The acylation has a decomposition");
+    const lnPreExponential = decomposition.rate.lnPreExponential + Math.log(1e4);
+    const hot = {
+      ...dosed,
+      decomposition: { ...decomposition, rate: { ...decomposition.rate, lnPreExponential } },
+    };
+    const source = drawnIsothermal(hot);
+    for (const change of changes) {
+      const step = recipe(hot, change);
+      const study = studyOf(step, "draws", source(step));
+      for (let temperature = 303; temperature <= 340; temperature += 5.3) {
+        const want = coolingDuty(step, temperature, directly(step, temperature));
+        expect(Math.abs(study.dutyAt(temperature) / want - 1)).toBeLessThan(1e-4);
+      }
+    }
+  });
+
+  test("and one with other orders of reaction is integrated itself", () => {
+    const step = { ...dosed, reaction: { ...dosed.reaction, orderA: 1.1 } };
+    const got = drawnIsothermal(dosed)(step).figuresAt(308.15);
+    expect((got?.rise ?? 0) / directly(step, 308.15).rise.value).toBeCloseTo(1, 5);
   });
 });
 
