@@ -1,7 +1,6 @@
 import type { Browser, Page } from "playwright-core";
 import request from "supertest";
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
-import { formOf, formValues } from "../../server/case/form.js";
 import { readCase } from "../../server/case/read.js";
 import { figuresOf } from "../../server/charts/figures.js";
 import { drawSvg } from "../../server/charts/svg.js";
@@ -9,6 +8,7 @@ import type { Findings } from "../../server/screening/findings.js";
 import { startBrowser } from "../browser/browser.js";
 import { completeCase, edited, everyChoice } from "../case/completeCases.js";
 import { openPdf, pageTexts } from "../sheet/readPdf.js";
+import { filled } from "./filled.js";
 import { testApp } from "./testApp.js";
 
 /** Breaks out of attributes, elements and PDF strings, where something lets it; the number tells the field. */
@@ -31,10 +31,6 @@ function attacked(document: unknown, pointers: readonly string[]): unknown {
 /** Texts that may say anything: the case is still whole with an attack in them. */
 function freeTexts(document: unknown): readonly string[] {
   return textsIn(document).filter((pointer) => readCase(edited(document, pointer, attack(0))).ok);
-}
-
-function filled(document: unknown, extra: Readonly<Record<string, string>> = {}): string {
-  return new URLSearchParams([...formValues(formOf(document)), ...Object.entries(extra)]).toString();
 }
 
 const { app, cases } = testApp();

@@ -1,9 +1,10 @@
 import request from "supertest";
 import { describe, expect, test } from "vitest";
-import { blankCase, editForm, formOf, formValues } from "../../server/case/form.js";
+import { blankCase, editForm } from "../../server/case/form.js";
 import { readCase } from "../../server/case/read.js";
 import { failureLines } from "../../server/web/failuresView.js";
 import { inventedWhole } from "../charts/inventedWhole.js";
+import { filled } from "./filled.js";
 import { demoDocument, testApp } from "./testApp.js";
 
 const keys = [
@@ -16,10 +17,6 @@ const keys = [
   "half-transfer",
   "quench",
 ];
-
-function filled(document: unknown, extra: Readonly<Record<string, string>>): string {
-  return new URLSearchParams([...formValues(formOf(document)), ...Object.entries(extra)]).toString();
-}
 
 function failuresOf(document: unknown): Record<string, unknown>[] {
   return (document as { failures?: Record<string, unknown>[] }).failures ?? [];

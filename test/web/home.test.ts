@@ -1,6 +1,6 @@
 import request from "supertest";
 import { describe, expect, test } from "vitest";
-import { formOf, formValues } from "../../server/case/form.js";
+import { filled } from "./filled.js";
 import { demoDocument, demos, testApp } from "./testApp.js";
 
 describe("the first page", () => {
@@ -29,8 +29,8 @@ test("a saved case is renamed by its title, and the first page lists it under th
   const document = demoDocument();
   const { id, revision } = await cases.create({ ...document, title: "Under the old name" });
   const renamed = { ...document, title: "Under the new name" };
-  const body = { ...Object.fromEntries(formValues(formOf(renamed))), do: "save", revision };
-  await request(app).post(`/cases/${id}`).type("form").send(body).expect(303);
+  const body = filled(renamed, { do: "save", revision: String(revision) });
+  await request(app).post(`/cases/${id}`).send(body).expect(303);
   const { text } = await request(app).get("/");
   expect(text).toContain(`<a href="/cases/${id}">Under the new name</a>`);
   expect(text).not.toContain("Under the old name");

@@ -1,6 +1,6 @@
 import request from "supertest";
 import { describe, expect, test } from "vitest";
-import { formOf, formValues } from "../../server/case/form.js";
+import { filled } from "./filled.js";
 import { demoDocument, testApp } from "./testApp.js";
 
 describe("markup in what is typed", () => {

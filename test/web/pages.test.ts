@@ -3,14 +3,10 @@ import { describe, expect, test } from "vitest";
 import { blankCase, formOf, formValues } from "../../server/case/form.js";
 import { notice } from "../../server/screening/notice.js";
 import { brokenDocuments } from "../case/brokenDocuments.js";
+import { filled } from "./filled.js";
 import { demoDocument, demos, testApp } from "./testApp.js";
 
 const wrongNumbers = /\bNaN\b|Infinity|\bundefined\b|\[object /;
-
-/** The form of a document as a browser would send it. */
-function filled(document: unknown, extra: Readonly<Record<string, string>> = {}): string {
-  return new URLSearchParams([...formValues(formOf(document)), ...Object.entries(extra)]).toString();
-}
 
 function escaped(text: string): string {
   const entities: Readonly<Record<string, string>> = {

@@ -1,6 +1,5 @@
 import request from "supertest";
 import { describe, expect, test } from "vitest";
-import { formOf, formValues } from "../../server/case/form.js";
 import { caseStore } from "../../server/files/cases.js";
 import { register } from "../../server/files/register.js";
 import { places } from "../../server/files/registerEntry.js";
@@ -9,12 +8,8 @@ import { notice } from "../../server/screening/notice.js";
 import { directScreener, type Screener } from "../../server/web/screener.js";
 import { memoryStorage } from "../files/memoryStorage.js";
 import { plainSheet, ticking } from "../files/registerSheets.js";
+import { filled } from "./filled.js";
 import { demoDocument, testApp } from "./testApp.js";
-
-/** The form of a document as a browser would send it. */
-function filled(document: unknown, extra: Readonly<Record<string, string>> = {}): string {
-  return new URLSearchParams([...formValues(formOf(document)), ...Object.entries(extra)]).toString();
-}
 
 /** The demo case that is screened the quickest: the register is what is tried here. */
 const someCase = () => demoDocument("hydrolysis");
