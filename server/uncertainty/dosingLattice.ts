@@ -103,6 +103,12 @@ export function dosingLattice(nominal: Step, form: RecipeForm): (step: Step) => 
     const dilution = (own.lnDilution - form.lnDilution) / spacing.dilution;
     const shares = sharesAt(excess, dilution);
     if (shares === null) return integrated(step);
+    const unchanged =
+      shares.length === 1 &&
+      own.lnFactor === form.lnFactor &&
+      own.limiting === form.limiting &&
+      step.mixture.mass === nominal.mixture.mass;
+    if (unchanged) return shares[0].recipe.isothermalOf(step);
     return blended(step, own, shares, tested(excess, dilution));
   };
 }

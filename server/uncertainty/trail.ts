@@ -5,7 +5,7 @@ import { holds, type Span, spansWhere } from "../window/spans.js";
 type Margin = (temperature: number) => number;
 
 /** Ends of a criterion are followed to this, K. */
-export const endTolerance = 0.01;
+const endTolerance = 0.01;
 
 /** Where a criterion begins and ceases to hold at the estimates, to be followed into the draws. */
 export interface Trail {
