@@ -84,6 +84,12 @@ async function refresh(parts) {
   markStale(parts === "quick");
   try {
     const fresh = await send(`/findings?parts=${parts}`, body());
+    if (fresh.getElementById("outcome") === null) {
+      // The findings in sight stand; only how far the rest is was answered.
+      take(fresh, "pending");
+      document.dispatchEvent(new Event("outcome"));
+      return;
+    }
     take(fresh, "outcome");
     document.dispatchEvent(new Event("outcome"));
     showReads(fresh);
@@ -118,13 +124,13 @@ function dropProgress() {
   document.dispatchEvent(new Event("outcome"));
 }
 
-/** Has the failures and the draws computed where the page came without them. */
-function complete() {
+/** Has the failures and the draws computed where the page came without them: all findings, or the rest. */
+function complete(parts) {
   const pending = document.getElementById("pending");
   if (pending === null || document.getElementById("progress") !== null) return;
   pending.textContent = pending.dataset.working;
   pending.setAttribute("role", "status");
-  refresh("full");
+  refresh(parts);
 }
 
 /** Lets the server draw the form anew, after a choice or a button that adds or removes fields. */
@@ -186,7 +192,7 @@ form.addEventListener("submit", (event) => {
   const pending = document.getElementById("pending");
   if (event.submitter?.value !== "screen" || pending === null) return;
   event.preventDefault();
-  complete();
+  complete("full");
 });
 
 document.addEventListener("screened", () => refresh("full"));
@@ -197,5 +203,5 @@ addEventListener("pageshow", () => {
     (each) => "defaultValue" in each && each.type !== "hidden" && each.value !== each.defaultValue,
   );
   if (typed) refreshSoon();
-  else if (document.querySelector("#pending[data-held]") === null) complete();
+  else if (document.querySelector("#pending[data-held]") === null) complete("rest");
 });

@@ -105,16 +105,22 @@ export async function renderCase(services: Services, response: Response, shown: 
   });
 }
 
+/** Quick: no failures and draws. Rest: what the page shows is quick and of these fields, so only what is new. */
+export type OutcomeParts = "quick" | "full" | "rest";
+
 /** Screens what someone is typing and answers with the part of the page that holds the result, or its progress. */
 export async function renderOutcome(
   services: Services,
   response: Response,
   document: unknown,
-  full: boolean,
+  parts: OutcomeParts,
 ): Promise<void> {
-  const screening = full ? await beginFull(services, response, document, null) : null;
+  const screening = parts === "quick" ? null : await beginFull(services, response, document, null);
   const course = screening?.course() ?? null;
   if (response.closed) return;
+  if (parts === "rest" && screening !== null && course?.kind === "running") {
+    return response.render("parts/pending", { outcome: { progress: progressView(screening), told: null } });
+  }
   const { faults, findings } = await screenDocument(
     services,
     document,

@@ -53,9 +53,11 @@ export function casePages(services: Services): Router {
     return act(request, response, { kind: "saved", saved });
   });
 
-  router.post("/findings", form, (request, response) =>
-    renderOutcome(services, response, documentFromForm(request.body ?? {}), request.query.parts !== "quick"),
-  );
+  router.post("/findings", form, (request, response) => {
+    const { parts } = request.query;
+    const asked = parts === "quick" || parts === "rest" ? parts : "full";
+    return renderOutcome(services, response, documentFromForm(request.body ?? {}), asked);
+  });
 
   for (const [action, archived] of [
     ["archive", true],

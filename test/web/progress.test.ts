@@ -118,12 +118,30 @@ async function idle(of: Screener): Promise<void> {
 }
 
 /** The result while typing, with the address of its events where it takes longer. */
-async function typed(document: unknown): Promise<{ readonly text: string; readonly events: string | null }> {
-  const answer = await fetch(`${address}/findings?parts=full`, { method: "POST", body: form(document) });
+async function typed(
+  document: unknown,
+  parts = "full",
+): Promise<{ readonly text: string; readonly events: string | null }> {
+  const answer = await fetch(`${address}/findings?parts=${parts}`, { method: "POST", body: form(document) });
   const text = await answer.text();
   const path = /data-events="([^"]+)"/.exec(text)?.[1];
   return { text, events: path === undefined ? null : `${address}${path}` };
 }
+
+describe("what a page with the quick findings is answered", () => {
+  test("is how far the rest is and nothing that it shows already, and in the end all findings", async () => {
+    const document = timedCase("The rest");
+    const first = await typed(document, "rest");
+    expect(first.events).not.toBeNull();
+    expect(first.text).toContain('id="pending"');
+    expect(first.text).not.toContain("<figure");
+    await events(first.events ?? "");
+    const last = await typed(document, "rest");
+    expect(last.events).toBeNull();
+    expect(last.text).toContain('id="outcome"');
+    expect(last.text).not.toContain("Not computed yet");
+  });
+});
 
 describe("a screening of over a second, without script", () => {
   test("shows its progress on a page that refreshes itself, and ends as the page of the case", async () => {
