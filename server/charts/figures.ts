@@ -1,5 +1,6 @@
 import type { Findings } from "../screening/findings.js";
 import { dosing } from "./dosing.js";
+import { drivers } from "./drivers.js";
 import { failures } from "./failures.js";
 import { byTimeToAct } from "./failuresWords.js";
 import type { Figure } from "./figure.js";
@@ -7,6 +8,7 @@ import { fitResiduals } from "./fitResiduals.js";
 import { heat } from "./heat.js";
 import { ladder } from "./ladder.js";
 import { lever } from "./lever.js";
+import { nextMeasurement } from "./nextMeasurement.js";
 import { rateFigure } from "./rate.js";
 import { tmrad } from "./tmrad.js";
 import { vulnerable } from "./vulnerable.js";
@@ -17,6 +19,8 @@ export function figuresOf(findings: Findings): Figure[] {
   const { rate, decompositionRate } = findings;
   const figures: (Figure | null)[] = [
     findings.window === null ? ladder(findings) : windowFigure(findings, findings.window),
+    drivers(findings),
+    nextMeasurement(findings),
   ];
   if (rate !== null)
     figures.push(
