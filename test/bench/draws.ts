@@ -1,4 +1,5 @@
 import { drawnFindings } from "../../server/screening/drawn.js";
+import { driverFindings } from "../../server/screening/drivers.js";
 import { knownRates } from "../../server/screening/known.js";
 import { estimates, realise } from "../../server/screening/realise.js";
 import { td24 } from "../../server/thermal/td24.js";
@@ -25,13 +26,13 @@ function leastTime(call: () => unknown): number {
   return least;
 }
 
-function drawing(name: string): number {
+function drawing(name: string, work: typeof drawnFindings | typeof driverFindings = drawnFindings): number {
   const { model } = demo(name);
   const known = knownRates(model);
   const study = studyOf(realise(model, known, estimates), "draws");
   const window = temperatureWindow(study);
   const limit = study.runaway === null ? null : td24(study.runaway);
-  return leastTime(() => drawnFindings(model, known, { study, window, td24: limit }));
+  return leastTime(() => work(model, known, { study, window, td24: limit }));
 }
 
 function within(what: string, least: number, loop: number, bound: number): Line {
@@ -52,6 +53,19 @@ export const drawsBench: Bench = {
       within("batch (hydrolysis)", drawing("hydrolysis"), loop, 100),
       within("batch with an autocatalytic decomposition (ring closure)", drawing("ring-closure"), loop, 100),
       within("dosed (acylation)", drawing("acylation"), loop, 200),
+    ];
+  },
+};
+
+/** What moves the result: 500 draws of each input, on one core. */
+export const driversBench: Bench = {
+  title: "Drivers, 500 draws of each input (least processor time of several runs)",
+  run() {
+    const loop = leastTime(reference);
+    return [
+      within("batch (hydrolysis)", drawing("hydrolysis", driverFindings), loop, 300),
+      within("batch, autocatalytic (ring closure)", drawing("ring-closure", driverFindings), loop, 300),
+      within("dosed (acylation)", drawing("acylation", driverFindings), loop, 300),
     ];
   },
 };

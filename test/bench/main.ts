@@ -1,6 +1,6 @@
 import { cpus } from "node:os";
 import { dosingBench } from "./dosing.js";
-import { drawsBench } from "./draws.js";
+import { drawsBench, driversBench } from "./draws.js";
 import { failuresBench } from "./failures.js";
 import type { Bench } from "./measure.js";
 import { registerBench } from "./register.js";
@@ -12,6 +12,7 @@ const benches: readonly Bench[] = [
   dosingBench,
   screeningBench,
   drawsBench,
+  driversBench,
   failuresBench,
   registerBench,
 ];
