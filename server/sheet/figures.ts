@@ -14,11 +14,16 @@ export function drawableFigures(findings: Findings): Figure[] {
   return figuresOf({ ...findings, failures });
 }
 
+/** Room that a figure takes under its title, with its sentence. */
+export function figureRoom({ width }: Cursor, figure: Figure): number {
+  const sentence = wrap(figure.sentence, width, styles.small).length * lineHeight(styles.small);
+  return pdfHeight(figure, width) + sentence + 10;
+}
+
 /** Draws a figure in one piece with its title and its sentence. */
 export function drawFigure(cursor: Cursor, figure: Figure): void {
   const { width } = cursor;
-  const sentence = wrap(figure.sentence, width, styles.small).length * lineHeight(styles.small);
-  subheading(cursor, figure.title, pdfHeight(figure, width) + sentence + 10);
+  subheading(cursor, figure.title, figureRoom(cursor, figure));
   drawMarks(cursor, figure, width);
   paragraph(cursor, figure.sentence, styles.small, {
     tag: "Caption",

@@ -5,7 +5,7 @@ import type { Findings } from "../screening/findings.js";
 import type { CaseModel } from "../screening/model.js";
 import { writeCautions, writeSignatures } from "./closing.js";
 import { closeDocument, openDocument, type Paper } from "./document.js";
-import { drawableFigures, drawFigure } from "./figures.js";
+import { drawableFigures, drawFigure, figureRoom } from "./figures.js";
 import { writeRunning } from "./foot.js";
 import { type TitleBlock, writeFront } from "./front.js";
 import { writeInputs } from "./inputs.js";
@@ -47,7 +47,7 @@ export async function renderSheet({ document, model, findings, paper, filing }: 
   writeInputWorkings(cursor, findings.workings);
   writeResults(cursor, findings);
   const others = figures.filter((figure) => figure !== picture);
-  if (others.length > 0) heading(cursor, "Figures", 200);
+  if (others.length > 0) heading(cursor, "Figures", 30 + figureRoom(cursor, others[0]));
   for (const figure of others) drawFigure(cursor, figure);
   writeWorking(cursor, model, findings);
   writeCautions(cursor, findings.cautions, findings);
