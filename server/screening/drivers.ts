@@ -13,7 +13,7 @@ import type { CaseModel } from "./model.js";
 import { estimates, realise } from "./realise.js";
 
 /** Draws of each input unless another number is asked for. */
-export const driverDraws = 500;
+const driverDraws = 500;
 
 export interface DriverOptions {
   /** 500 of each input unless said */
@@ -34,6 +34,8 @@ interface Output {
   /** what infinite values of it mean */
   readonly beyond: string;
   valueIn(draw: Drawn): number;
+  /** a number that moves where the output does, and costs little */
+  trace(draw: Drawn): number;
 }
 
 /**
@@ -87,7 +89,7 @@ export function driverFindings(
     share,
   });
   return outputs.map((output, of) => {
-    const before = output.valueIn(unmoved);
+    const before = output.trace(unmoved);
     const total = squares.reduce((sum, each) => sum + each[of], 0);
     const untold = inputs.filter((_, at) => !Number.isFinite(squares[at][of]));
     const weighed = inputs
@@ -98,7 +100,7 @@ export function driverFindings(
       output: output.key,
       shares: [
         ...bare
-          .filter(({ nearby }) => nearby.some((draw) => !Object.is(output.valueIn(draw), before)))
+          .filter(({ nearby }) => nearby.some((draw) => !Object.is(output.trace(draw), before)))
           .map(({ pointer }) => named(pointer, null)),
         ...(untold.length === 0 ? weighed : []),
       ],
@@ -140,19 +142,25 @@ function outputsOf(
       key: "td24_K",
       beyond: "T_D24 lies beyond the temperatures in which it is looked for",
       valueIn: ({ limit }) => limit,
+      trace: ({ limit }) => limit,
     });
   }
   const { measuredAccumulation } = model.reaction;
   if (mtsrOf(study, measuredAccumulation) !== null) {
-    outputs.push({
-      key: "mtsr_K",
-      beyond: "MTSR cannot be computed",
-      valueIn: (draw) => mtsrOf(draw.study, measuredAccumulation) ?? Number.POSITIVE_INFINITY,
-    });
+    const valueIn = (draw: Drawn) => mtsrOf(draw.study, measuredAccumulation) ?? Number.POSITIVE_INFINITY;
+    outputs.push({ key: "mtsr_K", beyond: "MTSR cannot be computed", valueIn, trace: valueIn });
   }
   if (window !== null && window.chosen !== null) {
     const { upperIn } = collectWindows(study, window, count, drawn);
-    outputs.push({ key: "upper_K", beyond: "nothing is left of the window", valueIn: upperIn });
+    const binding = window.lanes.find(({ criterion }) => criterion.key === window.upperSetBy)?.criterion;
+    const end = window.chosen[1] + study.step.limits.controlBand;
+    outputs.push({
+      key: "upper_K",
+      beyond: "nothing is left of the window",
+      valueIn: upperIn,
+      // An upper end that no criterion sets is the study's own limit: nothing moves it.
+      trace: (draw) => binding?.margin(draw.study, end) ?? 0,
+    });
   }
   return outputs;
 }
