@@ -1,9 +1,10 @@
+import type { Step } from "../thermal/step.js";
 import { drawnIsothermal } from "../uncertainty/drawnIsothermal.js";
 import { collectWindows, type DrawnWindow } from "../uncertainty/drawnWindow.js";
 import { createDraws, usualCount } from "../uncertainty/draws.js";
 import { percentilesOf } from "../uncertainty/percentiles.js";
 import { uncertainInputs } from "../uncertainty/sample.js";
-import { type Study, studyOf } from "../window/study.js";
+import { type Isothermal, type Study, studyOf } from "../window/study.js";
 import type { TemperatureWindow } from "../window/window.js";
 import { type DrawnOutcome, outcomeOf } from "./drawnOutcomes.js";
 import type { CriticalityKey, Percentiles, UncertaintyFindings, WindowFindings } from "./findings.js";
@@ -18,6 +19,8 @@ export interface Nominal {
   readonly window: TemperatureWindow | null;
   /** K */
   readonly td24: number | null;
+  /** the isothermal step of draws, where several kinds of draws share its table; made anew unless said */
+  readonly isothermal?: (step: Step) => Isothermal;
 }
 
 export interface DrawnOptions {
@@ -57,7 +60,7 @@ export function drawnFindings(
   options: DrawnOptions = {},
 ): DrawnFindings {
   const draws = createDraws(options.draws ?? usualCount, options.seed);
-  const isothermal = drawnIsothermal(nominal.study.step);
+  const isothermal = nominal.isothermal ?? drawnIsothermal(nominal.study.step);
   const limit = nominal.td24 ?? 400;
   const drawn = (index: number) => {
     const step = realise(model, known, draws.sample(index));

@@ -1,9 +1,10 @@
+import type { Step } from "../thermal/step.js";
 import { drawnIsothermal } from "../uncertainty/drawnIsothermal.js";
 import { collectWindows, type DrawnStudy } from "../uncertainty/drawnWindow.js";
 import { createDraws } from "../uncertainty/draws.js";
 import { percentilesOf } from "../uncertainty/percentiles.js";
 import { errorFreeInputs, moved, type Sample, uncertainInputs } from "../uncertainty/sample.js";
-import { type Study, studyOf } from "../window/study.js";
+import { type Isothermal, integrated, type Study, studyOf } from "../window/study.js";
 import type { DriverFindings } from "./decisionFindings.js";
 import type { Nominal } from "./drawn.js";
 import { limitTemperature, mtsrOf, sameRunaway } from "./drawnOutcomes.js";
@@ -55,12 +56,12 @@ export function driverFindings(
   options: DriverOptions = {},
 ): DriverFindings[] {
   const draws = createDraws(options.draws ?? driverDraws, options.seed);
-  const isothermal = drawnIsothermal(nominal.study.step);
+  const isothermal = nominal.isothermal ?? drawnIsothermal(nominal.study.step);
   const walk = (sample: Sample) => realise(model, known, sample);
   const limitOf = limitIn(nominal);
-  const studied = (sample: Sample): Drawn => {
+  const studied = (sample: Sample, found: (step: Step) => Isothermal = isothermal): Drawn => {
     const step = walk(sample);
-    const study = studyOf(step, "draws", isothermal(step));
+    const study = studyOf(step, "draws", found(step));
     const limit = limitOf(study);
     const shift = limit - (nominal.td24 ?? limit);
     return { study, limit, shift: Number.isFinite(shift) ? shift : 0 };
@@ -78,10 +79,11 @@ export function driverFindings(
     }
     return columns.map(squaredSpread);
   });
-  const unmoved = studied(estimates);
+  // Each of these is looked at once or twice: no table would pay.
+  const unmoved = studied(estimates, integrated);
   const bare = errorFreeInputs(walk).map((pointer) => ({
     pointer,
-    nearby: [0.99, 1.01].map((factor) => studied(moved(pointer, factor))),
+    nearby: [0.99, 1.01].map((factor) => studied(moved(pointer, factor), integrated)),
   }));
   const named = (pointer: string, share: number | null) => ({
     pointer,

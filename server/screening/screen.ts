@@ -4,6 +4,7 @@ import { carefulTimeToMaximumRate } from "../thermal/history.js";
 import { timeToMaximumRate } from "../thermal/runaway.js";
 import type { Step } from "../thermal/step.js";
 import { td24 } from "../thermal/td24.js";
+import { drawnIsothermal } from "../uncertainty/drawnIsothermal.js";
 import { type Study, studyOf } from "../window/study.js";
 import { temperatureWindow } from "../window/window.js";
 import { program } from "../words/program.js";
@@ -75,7 +76,12 @@ export function screen(model: CaseModel, options: ScreenOptions): Findings {
   const full = options.depth === "full";
   const allowed = rate === null ? null : temperatureWindow(study);
   onProgress(partDone.estimates);
-  const nominal = { study, window: allowed, td24: t24 };
+  const nominal = {
+    study,
+    window: allowed,
+    td24: t24,
+    ...(full ? { isothermal: drawnIsothermal(step) } : {}),
+  };
   const drawn = full
     ? drawnFindings(model, known, nominal, {
         onProgress: partOf(onProgress, partDone.estimates, partDone.draws),
