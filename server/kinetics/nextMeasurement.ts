@@ -12,7 +12,8 @@ import { lnVariance, type PairCovariance } from "./interval.js";
  * @param measured T' of the new rate constant, K
  * @param relativeError s, standard error of the new k over k, > 0
  * @returns dimensionless, >= 0
- * @see Sherman & Morrison 1950, Ann. Math. Stat. 21:124 (the update); rearranged by Lagrange's identity
+ * @see Sherman & Morrison 1950, Ann. Math. Stat. 21:124 (the update; citation from memory); rearranged
+ * by Lagrange's identity
  */
 export function varianceAfter(
   covariance: PairCovariance,

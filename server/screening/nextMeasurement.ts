@@ -5,7 +5,7 @@ import type { Findings } from "./findings.js";
 import type { KnownRate, KnownRates } from "./known.js";
 import type { CaseModel } from "./model.js";
 
-/** Relative error of a rate constant where no fit tells one: common practice for a good isothermal run. */
+/** Relative error of a rate constant where no fit tells one: an assumption, which the findings say. */
 const assumedError = 0.05;
 
 /** Places of the curve over the fitted range. */
