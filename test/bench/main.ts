@@ -6,6 +6,7 @@ import type { Bench } from "./measure.js";
 import { registerBench } from "./register.js";
 import { runawayBench } from "./runaway.js";
 import { screeningBench } from "./screening.js";
+import { sheetBench } from "./sheet.js";
 
 const benches: readonly Bench[] = [
   runawayBench,
@@ -14,6 +15,7 @@ const benches: readonly Bench[] = [
   drawsBench,
   driversBench,
   failuresBench,
+  sheetBench,
   registerBench,
 ];
 
