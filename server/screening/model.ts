@@ -1,5 +1,6 @@
 import type { DecompositionRate, RateConstant } from "../kinetics/parameters.js";
 import type { Estimate } from "../numeric/estimate.js";
+import type { Limits } from "../thermal/step.js";
 import type { WorkingsModel } from "./workingsModel.js";
 
 /**
@@ -98,18 +99,10 @@ export interface VesselModel {
   };
 }
 
-export interface LimitsModel {
+/** The limits of a step as it is computed with, and what the reviewer must know beside them. */
+export interface LimitsModel extends Omit<Limits, "maximumTechnicalTemperature"> {
   readonly maximumTechnicalTemperature: Estimate;
   readonly maximumTechnicalTemperatureBasis: string | null;
-  readonly lowestTemperature: number;
-  readonly highestTemperature: number;
-  readonly availableTime: number;
-  readonly targetConversion: number;
-  readonly coolingUse: number;
-  readonly minimumTimeToMaximumRate: number;
-  readonly decompositionAllowed: number;
-  /** K, half-width about the planned temperature */
-  readonly controlBand: number;
   readonly controlBandGiven: boolean;
 }
 

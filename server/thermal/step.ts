@@ -74,5 +74,6 @@ export interface Limits {
   readonly coolingUse: number;
   readonly minimumTimeToMaximumRate: number;
   readonly decompositionAllowed: number;
+  /** K, half-width about the planned temperature */
   readonly controlBand: number;
 }
